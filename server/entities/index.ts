@@ -1,0 +1,2 @@
+/** Every entity by name, no globs. */
+export const entities = []

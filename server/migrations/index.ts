@@ -1,0 +1,11 @@
+import { CreateGroupsAndPeople1796000000000 } from './1796000000000-CreateGroupsAndPeople.ts'
+import { CreateRegistry1796000100000 } from './1796000100000-CreateRegistry.ts'
+import { CreateEvidence1796000200000 } from './1796000200000-CreateEvidence.ts'
+import { CreateReadiness1796000300000 } from './1796000300000-CreateReadiness.ts'
+
+export const migrations = [
+  CreateGroupsAndPeople1796000000000,
+  CreateRegistry1796000100000,
+  CreateEvidence1796000200000,
+  CreateReadiness1796000300000,
+]
