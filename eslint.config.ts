@@ -16,7 +16,7 @@ export default defineConfigWithVueTs(
     rules: {
       'no-console': 'error',
       'vue/multi-word-component-names': 'error',
-      '@typescript-eslint/no-unused-vars': ['error', { argsIgnorePattern: '^_' }],
+      '@typescript-eslint/no-unused-vars': ['error', { argsIgnorePattern: '^_', varsIgnorePattern: '^_' }],
     },
   },
   {

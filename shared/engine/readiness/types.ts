@@ -1,0 +1,252 @@
+import type { PlainDate } from '../plain-date.ts'
+import type {
+  Availability,
+  Band,
+  Category,
+  Condition,
+  FindingWord,
+  Mode,
+  Procedure,
+  Verdict,
+} from '../vocabulary.ts'
+
+/** Milliseconds since 1970-01-01T00:00Z. */
+export type EpochMs = number
+
+/** What a kit kind promises. Watts are the radio's output. */
+export interface KitPromise {
+  readonly bands: readonly Band[]
+  readonly modes: readonly Mode[]
+  readonly watts: number | null
+  readonly hours: number | null
+}
+
+export interface Position {
+  readonly id: string
+  readonly name: string
+  readonly category: Category
+  readonly quantity: number
+  readonly vital: boolean
+}
+
+/** One finding of a test: about one band, or about the whole thing when `band` is null. */
+export interface TestFinding {
+  readonly band: Band | null
+  readonly finding: FindingWord
+  /** What was judged: `efficiency`, `peakC`, `swr`, `lossDb`, `watts`, `capacityFraction`, `present`... */
+  readonly measure: string
+  readonly value: number | null
+  /** Expanded uncertainty (k = 2) of `value`, in its unit; null where the instrument's accuracy is not known. */
+  readonly uncertainty: number | null
+  /** Heat test: the power that was applied, W. */
+  readonly powerW: number | null
+  /** Counts: the position that was looked at. */
+  readonly positionId: string | null
+  /** The limit in words, as it was judged: "85 °C at 50 W for 10 min". */
+  readonly limit: string
+  /** The finding as a sentence without its subject: "reached 85 °C after 8.2 min". */
+  readonly text: string
+}
+
+/** A test as readiness sees it; superseded tests are left out before. */
+export interface Evidence {
+  readonly id: string
+  readonly procedure: Procedure
+  /** The item or kit that was tested. */
+  readonly subjectId: string
+  readonly performedAt: EpochMs
+  readonly performedOn: PlainDate
+  /** When it reached the record; evidence counts from here on. */
+  readonly recordedAt: EpochMs
+  readonly instrumentId: string | null
+  readonly finding: FindingWord
+  readonly findings: readonly TestFinding[]
+}
+
+/** What of an item's own fields decides; absent means not entered. */
+export interface ItemFacts {
+  readonly bands?: readonly Band[]
+  readonly ratedWatts?: number
+  readonly ratedAh?: number
+  readonly chemistry?: string
+  /** Rated current of a lead, fuse or supply, A. */
+  readonly ratedA?: number
+  /** Radio: current by power setting, A at W. */
+  readonly drawA?: readonly { readonly watts: number; readonly amps: number }[]
+  /** Kit's mean load at the duty of its kind, A (measured). */
+  readonly meanLoadA?: number
+  /** Total loss radio to antenna per band with the antenna's SWR included, dB, where it was entered. */
+  readonly lossDb?: Partial<Record<Band, number>>
+  readonly acquiredOn?: PlainDate
+}
+
+export interface ReadinessItem {
+  readonly id: string
+  readonly designation: string
+  readonly category: Category
+  readonly positionId: string | null
+  readonly condition: Condition
+  readonly conditionReason: string
+  readonly facts: ItemFacts
+}
+
+/** A rule of the policy in force; see `appliesTo` for which items it means. */
+export interface Rule {
+  readonly id: string
+  readonly category: Category | 'kit'
+  readonly procedure: Procedure
+  readonly intervalMonths: number | null
+  readonly warningDays: number
+  readonly vital: boolean
+  /** Conditions on the item, all of which must hold: chemistry, minAgeYears, bands. */
+  readonly applies: Readonly<Record<string, unknown>>
+  /** Limits by name, with the unit in the name: maxC, minEfficiency, maxSwr, minCapacityFraction... */
+  readonly limits: Readonly<Record<string, unknown>>
+}
+
+export interface Policy {
+  readonly id: string
+  readonly name: string
+  /** Local midnight at which it takes effect. */
+  readonly effectiveFrom: EpochMs
+  readonly rules: readonly Rule[]
+  readonly settings: PolicySettings
+}
+
+/** Settings of a policy that are not limits of one procedure. */
+export interface PolicySettings {
+  /** Usable fraction of the measured capacity by chemistry; absent: the engine's defaults. */
+  readonly usableFraction?: Readonly<Record<string, number>>
+  /** Temperature at which endurance is stated, °C. */
+  readonly enduranceC?: number
+  /** Peukert exponent for lead-acid; 1 means linear. */
+  readonly peukert?: number
+}
+
+/** A check asked for by an event. */
+export interface RaisedCheck {
+  readonly id: string
+  readonly subjectId: string
+  readonly procedure: Procedure
+  readonly band: Band | null
+  readonly reason: string
+  /** A recall: what was found before it is in doubt for this band until tested anew. */
+  readonly doubtsEarlier: boolean
+  readonly raisedAt: EpochMs
+  readonly dueOn: PlainDate
+}
+
+export interface Decision {
+  readonly id: string
+  readonly kind: 'lowered' | 'risk-accepted'
+  readonly toVerdict: Verdict | null
+  readonly reason: string
+  readonly by: string
+  readonly from: EpochMs
+  readonly until: EpochMs | null
+}
+
+/** Everything the timeline of one kit depends on. */
+export interface KitState {
+  readonly kit: {
+    readonly id: string
+    readonly designation: string
+    readonly availability: Availability
+    readonly availabilityReason: string
+    readonly sealMatches: boolean
+  }
+  readonly promise: KitPromise
+  readonly positions: readonly Position[]
+  readonly items: readonly ReadinessItem[]
+  /** Tests of the kit, of its items and the calibrations of the instruments they name; newest last. */
+  readonly evidence: readonly Evidence[]
+  readonly instruments: readonly {
+    readonly id: string
+    readonly designation: string
+    readonly category: Category
+  }[]
+  readonly raisedChecks: readonly RaisedCheck[]
+  readonly decisions: readonly Decision[]
+  /** All versions, oldest first. */
+  readonly policies: readonly Policy[]
+  readonly zone: string
+}
+
+export type ReasonLevel = 'not-fit' | 'not-proven' | 'limit' | 'note'
+
+/** What would lift a reason. */
+export interface Action {
+  readonly kind: 'test' | 'replace' | 'find' | 'repair' | 'count' | 'calibrate' | 'decide' | 'return' | 'buy'
+  readonly text: string
+  /** Attended minutes; null where nobody can say. */
+  readonly minutes: number | null
+}
+
+/** One reason of a verdict, in plain words, with the way to its evidence. */
+export interface Reason {
+  readonly code: string
+  readonly level: ReasonLevel
+  readonly text: string
+  readonly band: Band | null
+  readonly positionId: string | null
+  readonly itemId: string | null
+  readonly testId: string | null
+  readonly procedure: Procedure | null
+  readonly action: Action | null
+}
+
+/** What the kit can do on one promised band. */
+export interface BandCapability {
+  readonly band: Band
+  readonly state: 'proven' | 'limited' | 'not-proven' | 'out'
+  /** Radio output allowed on this band, W; null when nothing says. */
+  readonly watts: number | null
+  /** Power that reaches the antenna, W. */
+  readonly wattsAtAntenna: number | null
+  /** Fraction of the radio's output that reaches the antenna, 0..1. */
+  readonly fraction: number | null
+  readonly lossDb: number | null
+  /** The limit in a few words, empty when there is none. */
+  readonly limit: string
+  /** The oldest test that this band stands on. */
+  readonly testId: string | null
+  readonly testedOn: PlainDate | null
+}
+
+export interface Capability {
+  readonly bands: readonly BandCapability[]
+  readonly modes: readonly Mode[]
+  /** Endurance, h; null when no battery counts. */
+  readonly hours: number | null
+  readonly usableAh: number | null
+  /** Each factor of the hours, in order, as "96.3 % of 60 Ah". */
+  readonly hoursFactors: readonly string[]
+}
+
+/** A half-open stretch of time [from, to) with one verdict; `to` null means without end. */
+export interface Period {
+  readonly from: EpochMs
+  readonly to: EpochMs | null
+  readonly verdict: Verdict
+  readonly availability: Availability
+  readonly reasons: readonly Reason[]
+  readonly capability: Capability
+  /** Day of the oldest vital evidence that the verdict stands on. */
+  readonly oldestVitalOn: PlainDate | null
+}
+
+/** One required check of one subject at an instant: a row of the kit page and of every due list. */
+export interface CheckState {
+  readonly subjectId: string
+  readonly positionId: string | null
+  readonly procedure: Procedure
+  readonly band: Band | null
+  readonly ruleId: string | null
+  readonly vital: boolean
+  readonly state: 'current' | 'due-soon' | 'overdue' | 'never' | 'failed' | 'in-doubt'
+  readonly finding: FindingWord | null
+  readonly testId: string | null
+  readonly testedOn: PlainDate | null
+  readonly dueOn: PlainDate | null
+  readonly because: string
+}
