@@ -42,7 +42,10 @@ export async function record(tx: GroupTx, entry: AuditEntry): Promise<void> {
 }
 
 /** The fields that differ between two versions of a record, as `before` and `after` of an audit entry. */
-export function changedFields<T extends object>(old: T, changes: Partial<T>): { before: object; after: object } {
+export function changedFields<T extends object>(
+  old: T,
+  changes: Partial<T>,
+): { before: object; after: object } {
   const keys = (Object.keys(changes) as (keyof T)[]).filter(
     (key) => JSON.stringify(old[key] ?? null) !== JSON.stringify(changes[key] ?? null),
   )
