@@ -2,6 +2,7 @@ import 'reflect-metadata'
 import pg from 'pg'
 import { DataSource } from 'typeorm'
 import { entities } from './entities/index.ts'
+import { prepareQueues } from './jobs/prepare-queues.ts'
 import { migrations } from './migrations/index.ts'
 
 /** Any number will do, as long as every process takes the same one. */
@@ -53,6 +54,7 @@ export async function migrate(ownerUrl: string): Promise<void> {
     await lock.query('SELECT pg_advisory_lock($1)', [MIGRATION_LOCK])
     await source.initialize()
     await source.runMigrations({ transaction: 'each' })
+    await prepareQueues(ownerUrl, lock)
   } finally {
     if (source.isInitialized) await source.destroy()
     await lock.end()

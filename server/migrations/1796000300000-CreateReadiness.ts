@@ -105,6 +105,16 @@ export class CreateReadiness1796000300000 implements MigrationInterface {
     ${separateByGroup('reminder')}
     ${grant('reminder', 'SELECT, INSERT')}
 
+    -- One row a group and local day: the morning's reminders are made once, by whichever process comes first.
+    CREATE TABLE reminder_run (
+      group_id uuid NOT NULL REFERENCES groups (id),
+      on_day date NOT NULL,
+      made_at timestamptz NOT NULL,
+      PRIMARY KEY (group_id, on_day)
+    );
+    ${separateByGroup('reminder_run')}
+    ${grant('reminder_run', 'SELECT, INSERT')}
+
     CREATE FUNCTION groups_with_board_rows_past(instant timestamptz)
       RETURNS TABLE (group_id uuid)
       LANGUAGE sql STABLE SECURITY DEFINER SET search_path = public, pg_temp AS $$
@@ -123,7 +133,7 @@ export class CreateReadiness1796000300000 implements MigrationInterface {
   async down(runner: QueryRunner): Promise<void> {
     await runner.query(`
     DROP FUNCTION groups_with_board_rows_past(timestamptz), groups_with_mail_waiting(timestamptz);
-    DROP TABLE reminder, mail, board_revision, board_count, board_row, readiness_period;
+    DROP TABLE reminder_run, reminder, mail, board_revision, board_count, board_row, readiness_period;
     `)
   }
 }
