@@ -1,4 +1,4 @@
-import nodemailer from 'nodemailer'
+import nodemailer, { type TransportOptions } from 'nodemailer'
 
 export interface OutgoingMail {
   readonly from: string
@@ -28,7 +28,7 @@ export function smtpTransport(url: string): MailTransport {
     socketTimeout: 15_000,
     disableFileAccess: true,
     disableUrlAccess: true,
-  } as nodemailer.TransportOptions)
+  } as TransportOptions)
   return {
     send: async (mail) => {
       await pool.sendMail({ ...mail, to: { name: '', address: mail.to } })
