@@ -132,7 +132,9 @@ describe('messages and notes', () => {
   })
 
   it('counts the ports in the data when the name does not end in .s1p or .s2p', () => {
-    expect(accepted('# MHz S RI R 50\n7 0 0\n', 'sweep.s1p.txt').ports).toBe(1)
+    for (const name of ['sweep.s2p.txt', 'sweep.ts', 's2p', '']) {
+      expect(accepted('# MHz S RI R 50\n7 0 0\n', name).ports).toBe(1)
+    }
   })
 })
 
