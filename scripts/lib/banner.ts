@@ -1,0 +1,35 @@
+/** One way into the demo group. */
+export interface SignIn {
+  address: string
+  password: string
+  role: string
+}
+
+export interface BannerFacts {
+  url: string
+  /** Null when mail really goes out. */
+  mailUrl: string | null
+  signIns: readonly SignIn[]
+  /** Where data and logs are. */
+  folder: string
+}
+
+/** What scripts/start says once everything runs. */
+export function banner({ url, mailUrl, signIns, folder }: BannerFacts): string {
+  const width = Math.max(0, ...signIns.map(({ address }) => address.length))
+  const people = signIns.map(
+    ({ address, password, role }) => `    ${address.padEnd(width)}  ${password}  (${role})`,
+  )
+  return [
+    '',
+    'Halyard is up.',
+    '',
+    `  Open   ${url}`,
+    ...(mailUrl ? [`  Mail   ${mailUrl}  (every mail that Halyard sends; none leaves this machine)`] : []),
+    ...(people.length > 0 ? ['', '  Sign in as', ...people] : []),
+    '',
+    `  Data, mails and logs: ${folder}  (remove it to start afresh)`,
+    '  Ctrl-C stops everything and keeps the data.',
+    '',
+  ].join('\n')
+}

@@ -1,0 +1,78 @@
+import { closeSync, openSync, readFileSync } from 'node:fs'
+import { join } from 'node:path'
+import { startChild } from './child.ts'
+import type { Ending } from './ending.ts'
+import { root } from './paths.ts'
+import type { Step } from './test-steps.ts'
+
+export interface Run {
+  /** Where logs and reports go. */
+  folder: string
+  env: NodeJS.ProcessEnv
+  ending: Ending
+}
+
+export interface Tally {
+  passed: number
+  failed: number
+}
+
+/** No step may take longer: then it hangs. */
+const STEP_LIMIT_MS = 10 * 60_000
+
+/** Runs one step, says in one line how it went, and prints what it said when something failed. */
+export async function runStep(step: Step, run: Run): Promise<Tally> {
+  if (run.ending.hasBegun) return { passed: 0, failed: 0 }
+  const slug = step.name.toLowerCase().replace(/\W+/g, '-')
+  const reportPath = join(run.folder, `${slug}.json`)
+  const logPath = join(run.folder, `${slug}.log`)
+  const startedAt = Date.now()
+  const exitCode = await runCommand({ step, run, reportPath, logPath })
+  if (run.ending.hasBegun) return { passed: 0, failed: 0 }
+  const { passed, failed, remark } = step.count({ exitCode, report: readReport(reportPath) })
+  const seconds = ((Date.now() - startedAt) / 1000).toFixed(1)
+  console.log(
+    `${failed === 0 ? 'ok    ' : 'FAILED'} ${step.name}: ${passed} passed, ${failed} failed (${seconds} s)`,
+  )
+  if (failed > 0) console.log(indent(readFileSync(logPath, 'utf8')))
+  if (remark) console.log(indent(remark))
+  return { passed, failed }
+}
+
+interface Command {
+  step: Step
+  run: Run
+  reportPath: string
+  logPath: string
+}
+
+async function runCommand({ step, run, reportPath, logPath }: Command): Promise<number> {
+  const log = openSync(logPath, 'w')
+  const child = startChild(
+    step.command,
+    step.args.map((arg) => arg.replace('REPORT', reportPath)),
+    {
+      cwd: root,
+      env: { ...run.env, PLAYWRIGHT_JSON_OUTPUT_FILE: reportPath, NO_COLOR: '1' },
+      stdio: ['ignore', log, log],
+    },
+  )
+  closeSync(log)
+  await run.ending.add(() => child.stop(5000))
+  const limit = setTimeout(() => void child.stop(5000), STEP_LIMIT_MS)
+  const code = await child.ended
+  clearTimeout(limit)
+  return code
+}
+
+function readReport(path: string): unknown {
+  try {
+    return JSON.parse(readFileSync(path, 'utf8'))
+  } catch {
+    return undefined
+  }
+}
+
+function indent(text: string): string {
+  return text.trimEnd().replace(/^/gm, '    ')
+}

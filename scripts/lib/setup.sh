@@ -1,0 +1,63 @@
+# Sets up what scripts/start and scripts/test need before Node can take over. Sourced, with the clone as the current folder.
+
+say() { printf '%s\n' "$*"; }
+fail() { printf '%s\n' "$*" >&2; exit 1; }
+
+check_node() {
+  local version
+  version=$(node --version 2>/dev/null) || fail 'Node.js is missing: install Node 20 (20.19 or later) with npm.'
+  node -e 'const [major, minor] = process.versions.node.split(".").map(Number); process.exit(major > 20 || (major === 20 && minor >= 19) ? 0 : 1)' ||
+    fail "Node.js $version is too old: install Node 20.19 or later."
+  command -v npm >/dev/null || fail 'npm is missing: install it beside Node.js.'
+}
+
+# The git-ignored folder for everything the scripts keep; PostgreSQL's own user must be able to pass through.
+make_state_folder() {
+  mkdir -p .halyard 2>/dev/null && [ -w .halyard ] && [ -w . ] ||
+    fail "$PWD or its folder .halyard belongs to another user: run this as $(stat -c %U .halyard 2>/dev/null || stat -c %U .), or in a clone of your own."
+  chmod 755 .halyard 2>/dev/null || true
+}
+
+is_there() {
+  case $1 in
+    postgresql) ls /usr/lib/postgresql/*/bin/initdb >/dev/null 2>&1 ;;
+    chromium) [ -x /usr/bin/chromium ] ;;
+    zbar-tools) command -v zbarimg >/dev/null ;;
+    poppler-utils) command -v pdftoppm >/dev/null ;;
+  esac
+}
+
+# Installs those of the named Debian packages that are missing, when it may.
+need_packages() {
+  local name missing=()
+  for name in "$@"; do is_there "$name" || missing+=("$name"); done
+  [ ${#missing[@]} -eq 0 ] && return
+  local as_root=()
+  if [ "$(id -u)" -ne 0 ]; then
+    if ! sudo -n true 2>/dev/null; then
+      fail "Missing Debian packages, and this user may not install them. As root, run:
+
+  apt-get update && apt-get install -y --no-install-recommends ${missing[*]}
+
+then start this again."
+    fi
+    as_root=(sudo -n)
+  fi
+  say "Installing Debian packages: ${missing[*]}"
+  "${as_root[@]}" scripts/lib/install-packages "${missing[@]}"
+  for name in "${missing[@]}"; do is_there "$name" || fail "The Debian package $name could not be installed."; done
+}
+
+# Two starts in one clone must not install over each other; the second finds the work done.
+install_npm_packages() {
+  node scripts/lib/is-installed.mjs && return
+  exec 9>.halyard/npm.lock
+  flock 9
+  if ! node scripts/lib/is-installed.mjs; then
+    say 'Installing npm packages (npm ci)'
+    # The signal ends npm should this script be killed.
+    setpriv --pdeathsig TERM -- npm ci --no-audit --no-fund --loglevel=error ||
+      fail 'npm ci failed: see above.'
+  fi
+  exec 9>&-
+}

@@ -1,0 +1,83 @@
+import { readFileSync } from 'node:fs'
+import { join } from 'node:path'
+import { brotliCompressSync, constants } from 'node:zlib'
+
+/** The parts of Vite's manifest that decide what a browser loads. */
+export interface ManifestChunk {
+  file: string
+  isEntry?: boolean
+  /** Keys of the chunks that are loaded with this one. */
+  imports?: string[]
+  css?: string[]
+  assets?: string[]
+}
+
+export type Manifest = Readonly<Record<string, ManifestChunk>>
+
+/** Performance C1: what the first visit to the board may cost, in KiB over the wire. */
+export const BUDGET = { scriptKiB: 75, totalKiB: 110 } as const
+
+export interface FirstLoad {
+  scripts: string[]
+  styles: string[]
+  /** The one font subset that English text needs; the others load only where their characters occur. */
+  fonts: string[]
+}
+
+/** What the browser loads for a view: the entry and the view's own chunk, each with its static imports. */
+export function firstLoad(manifest: Manifest, view: string): FirstLoad {
+  const entry = Object.keys(manifest).find((key) => manifest[key]?.isEntry)
+  if (entry === undefined) throw new Error('The manifest names no entry.')
+  const chunks = [...closure(manifest, [entry, view])].map((key) => chunkOf(manifest, key))
+  const unique = (files: string[]) => [...new Set(files)]
+  return {
+    scripts: unique(chunks.map(({ file }) => file).filter((file) => file.endsWith('.js'))),
+    styles: unique(chunks.flatMap(({ css }) => css ?? [])),
+    fonts: unique(chunks.flatMap(({ assets }) => assets ?? []).filter(isLatinFont)),
+  }
+}
+
+function closure(manifest: Manifest, from: readonly string[]): Set<string> {
+  const found = new Set<string>()
+  const waiting = [...from]
+  for (let key = waiting.pop(); key !== undefined; key = waiting.pop()) {
+    if (found.has(key)) continue
+    found.add(key)
+    waiting.push(...(chunkOf(manifest, key).imports ?? []))
+  }
+  return found
+}
+
+function chunkOf(manifest: Manifest, key: string): ManifestChunk {
+  const chunk = manifest[key]
+  if (!chunk) throw new Error(`The manifest has no ${key}.`)
+  return chunk
+}
+
+function isLatinFont(file: string): boolean {
+  return /-latin-(?!ext).*\.woff2$/.test(file)
+}
+
+export interface LoadSize {
+  scriptBytes: number
+  styleBytes: number
+  fontBytes: number
+  pageBytes: number
+}
+
+/** Text as the server sends it, brotli at its best; fonts are packed already. */
+export function measure(dist: string, { scripts, styles, fonts }: FirstLoad): LoadSize {
+  const read = (file: string) => readFileSync(join(dist, file))
+  const sum = (files: readonly string[], size: (bytes: Buffer) => number) =>
+    files.reduce((total, file) => total + size(read(file)), 0)
+  return {
+    scriptBytes: sum(scripts, brotliSize),
+    styleBytes: sum(styles, brotliSize),
+    fontBytes: sum(fonts, (bytes) => bytes.length),
+    pageBytes: sum(['index.html'], brotliSize),
+  }
+}
+
+function brotliSize(bytes: Buffer): number {
+  return brotliCompressSync(bytes, { params: { [constants.BROTLI_PARAM_QUALITY]: 11 } }).length
+}

@@ -1,0 +1,63 @@
+// What scripts/start does once Node and the npm packages are there: `start.ts SLOT [--no-demo]`.
+import { existsSync, writeFileSync } from 'node:fs'
+import { join } from 'node:path'
+import { DEMO_SIGN_INS } from '../demo/sign-ins.ts'
+import { banner } from './banner.ts'
+import { buildClient } from './build-client.ts'
+import { clusterFolder } from './cluster-folder.ts'
+import { Ending } from './ending.ts'
+import { stateFolder } from './paths.ts'
+import { ServerEnded, startProgram, type ProductEnv } from './product-server.ts'
+import { openDatabase, openMail } from './start-parts.ts'
+import { holdPublicPort, serve } from './start-serving.ts'
+import { keptSecrets } from './secrets.ts'
+
+const [slot = 'start-1', ...options] = process.argv.slice(2)
+const ending = new Ending()
+
+/** Everything from an empty folder to a served product; each part tells `ending` how to stop it. */
+async function start(): Promise<void> {
+  const folder = join(stateFolder, slot)
+  const [database, mail, address] = await Promise.all([
+    openDatabase(clusterFolder(slot), ending),
+    openMail(folder, ending),
+    holdPublicPort(folder),
+    buildClient(),
+  ])
+  const env: ProductEnv = {
+    NODE_ENV: 'production',
+    PORT: String(address.port),
+    PUBLIC_URL: address.url,
+    SESSION_SECRET: process.env.SESSION_SECRET ?? keptSecrets(folder, ['session']).session,
+    SMTP_URL: mail.smtpUrl,
+    ...database.env,
+  }
+  const hasDemo = !options.includes('--no-demo') && (await loadDemo(env, database.isLocal ? folder : null))
+  await serve({ env, folder, address, ending })
+  console.log(
+    banner({ url: address.url, mailUrl: mail.pageUrl, signIns: hasDemo ? DEMO_SIGN_INS : [], folder }),
+  )
+}
+
+/**
+ * Fills an empty database with the demo group. The program itself leaves a database alone that holds a group; the
+ * mark only saves asking it at each start. True when the local database holds the demo group.
+ */
+async function loadDemo(env: ProductEnv, folder: string | null): Promise<boolean> {
+  const mark = folder && join(folder, 'demo-loaded')
+  if (mark && existsSync(mark)) return true
+  console.log('Loading the demo group: fourteen months of records, this takes a moment')
+  const seeding = startProgram('scripts/seed-demo.ts', env)
+  await ending.add(() => seeding.stop())
+  if ((await seeding.ended) !== 0) throw new Error('The demo group could not be loaded: see above.')
+  if (mark) writeFileSync(mark, new Date().toISOString())
+  return mark !== null
+}
+
+ending.onSignals(() => 0)
+start().catch(async (error: unknown) => {
+  // A part that we are stopping ourselves also fails the start; that is no news.
+  if (!ending.hasBegun) console.error(error instanceof Error ? error.message : error)
+  await ending.run()
+  process.exit(error instanceof ServerEnded ? error.exitCode : 1)
+})
