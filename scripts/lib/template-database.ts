@@ -1,28 +1,58 @@
 import pg from 'pg'
 import { migrate } from '#server/data-source.ts'
 import { root } from './paths.ts'
+import { startProgram } from './product-server.ts'
+import { makeSecret } from './secrets.ts'
+import { withDatabase, type TestPg } from './test-cluster.ts'
 import { treeHash } from './tree-hash.ts'
-import { withDatabase } from './test-cluster.ts'
 
 /** Any number, as long as every run on a shared cluster takes the same one. */
 const TEMPLATE_LOCK = 4_190_277_316
 
 /** What decides the schema: a change here makes a new template beside the old one. */
 const SCHEMA_SOURCES = ['server/migrations', 'server/data-source.ts']
+const DEMO_SOURCES = ['server', 'shared', 'scripts/demo', 'scripts/seed-demo.ts', 'package-lock.json']
 
 /** The name of a migrated, empty database to clone from, made at first need; runs side by side wait for each other. */
-export function ensureTemplate(ownerUrl: string): Promise<string> {
-  const name = `template_${treeHash(root, SCHEMA_SOURCES).slice(0, 16)}`
-  return ensureDatabase(ownerUrl, name, migrate)
+export function ensureTemplate(testPg: TestPg): Promise<string> {
+  const name = `template_${shortHash(SCHEMA_SOURCES)}`
+  return ensureDatabase({ testPg, name, from: 'template1', fill: ({ ownerUrl }) => migrate(ownerUrl) })
+}
+
+/** The same with the demo group of today in it. */
+export async function ensureDemoTemplate(testPg: TestPg): Promise<string> {
+  const today = new Date().toISOString().slice(0, 10).replaceAll('-', '')
+  const name = `demo_${today}_${shortHash(DEMO_SOURCES)}`
+  return ensureDatabase({ testPg, name, from: await ensureTemplate(testPg), fill: seedDemo })
+}
+
+async function seedDemo({ ownerUrl, appUrl }: TestPg): Promise<void> {
+  const seeding = startProgram('scripts/seed-demo.ts', {
+    NODE_ENV: 'production',
+    PORT: '0',
+    PUBLIC_URL: 'http://localhost',
+    DATABASE_URL: appUrl,
+    DATABASE_OWNER_URL: ownerUrl,
+    SMTP_URL: 'smtp://127.0.0.1:9',
+    SESSION_SECRET: makeSecret(),
+  })
+  if ((await seeding.ended) !== 0) throw new Error('The demo group could not be loaded: see above.')
+}
+
+function shortHash(sources: readonly string[]): string {
+  return treeHash(root, sources).slice(0, 16)
+}
+
+interface Making {
+  testPg: TestPg
+  name: string
+  from: string
+  fill: (database: TestPg) => Promise<void>
 }
 
 /** Made under another name and renamed when whole, so that a killed run leaves no half-made template. */
-export async function ensureDatabase(
-  ownerUrl: string,
-  name: string,
-  fill: (url: string) => Promise<void>,
-): Promise<string> {
-  const client = new pg.Client({ connectionString: withDatabase(ownerUrl, 'postgres') })
+async function ensureDatabase({ testPg, name, from, fill }: Making): Promise<string> {
+  const client = new pg.Client({ connectionString: withDatabase(testPg.ownerUrl, 'postgres') })
   await client.connect()
   try {
     await client.query('SELECT pg_advisory_lock($1)', [TEMPLATE_LOCK])
@@ -30,8 +60,11 @@ export async function ensureDatabase(
     if (found.rowCount !== 0) return name
     const draft = `${name}_draft`
     await client.query(`DROP DATABASE IF EXISTS ${draft} WITH (FORCE)`)
-    await client.query(`CREATE DATABASE ${draft}`)
-    await fill(withDatabase(ownerUrl, draft))
+    await client.query(`CREATE DATABASE ${draft} TEMPLATE ${from}`)
+    await fill({
+      ownerUrl: withDatabase(testPg.ownerUrl, draft),
+      appUrl: withDatabase(testPg.appUrl, draft),
+    })
     await client.query(`ALTER DATABASE ${draft} RENAME TO ${name}`)
     return name
   } finally {

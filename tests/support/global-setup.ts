@@ -15,7 +15,7 @@ export default async function setup(project: TestProject): Promise<() => Promise
   const { ownerUrl, appUrl, stop } = await openTestCluster()
   try {
     project.provide('testPg', { ownerUrl, appUrl })
-    project.provide('templateDatabase', await ensureTemplate(ownerUrl))
+    project.provide('templateDatabase', await ensureTemplate({ ownerUrl, appUrl }))
   } catch (error) {
     await stop()
     throw error

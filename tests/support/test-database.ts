@@ -1,11 +1,18 @@
 import { inject } from 'vitest'
 import { cloneDatabase, type TestDatabase } from '../../scripts/lib/clone-database.ts'
+import { ensureDemoTemplate } from '../../scripts/lib/template-database.ts'
 
 export type { TestDatabase } from '../../scripts/lib/clone-database.ts'
 
 /** A migrated, empty database of the calling file's own: drop it in `afterAll`. */
 export function createTestDatabase(): Promise<TestDatabase> {
   return cloneDatabase(inject('testPg'), inject('templateDatabase'))
+}
+
+/** The same with the demo group in it; the first caller of a run waits until it is loaded. */
+export async function createDemoDatabase(): Promise<TestDatabase> {
+  const testPg = inject('testPg')
+  return cloneDatabase(testPg, await ensureDemoTemplate(testPg))
 }
 
 /** A database without any schema, for tests of the migrations themselves. */
