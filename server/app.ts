@@ -5,6 +5,7 @@ import { problemHandler } from './middleware/problem-handler.ts'
 import { requestId } from './middleware/request-id.ts'
 import { requireSameOrigin } from './middleware/require-same-origin.ts'
 import { securityHeaders } from './middleware/security-headers.ts'
+import { readSession } from './middleware/session.ts'
 import { EndpointRouter } from './routes/endpoint.ts'
 import { addRoutes } from './routes/index.ts'
 import { methodGuard } from './routes/method-guard.ts'
@@ -24,6 +25,7 @@ export function createApp(ctx: AppContext): Express {
   app.use(requestId(ctx))
   app.use(securityHeaders())
   app.use(requireSameOrigin(ctx.config, OPEN_TO_MAIL))
+  app.use('/api', readSession(ctx))
 
   const endpoints = new EndpointRouter(app)
   addRoutes(endpoints, ctx)

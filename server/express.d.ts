@@ -1,4 +1,5 @@
 import type { Caller } from './caller.ts'
+import type { SessionMember } from './middleware/session-store.ts'
 
 declare global {
   namespace Express {
@@ -6,6 +7,10 @@ declare global {
       requestId: string
       /** Set by the session middleware; absent when signed out. */
       caller?: Caller
+      /** The row behind `caller`, as the session store found it. */
+      sessionMember?: SessionMember
+      /** Express signs cookies with it. */
+      secret?: string
     }
   }
 }

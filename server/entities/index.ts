@@ -1,2 +1,7 @@
+import { Credential } from './Credential.ts'
+import { Group } from './Group.ts'
+import { Member } from './Member.ts'
+import { OneTimeLink } from './OneTimeLink.ts'
+
 /** Every entity by name, no globs. */
-export const entities = []
+export const entities = [Credential, Group, Member, OneTimeLink]

@@ -3,6 +3,9 @@ import { GROUP_COLUMNS, grant, sameGroup, separateByGroup } from './sql.ts'
 
 const ROLES = `ARRAY['administrator','net-coordinator','quartermaster','volunteer','observer']`
 
+const LOOK_UPS =
+  'find_sign_in(text), find_one_time_link(bytea), find_session(text, timestamptz), list_groups()'
+
 /** Groups, members, credentials, sessions, one-time links, rate limits and the audit log. */
 export class CreateGroupsAndPeople1796000000000 implements MigrationInterface {
   name = 'CreateGroupsAndPeople1796000000000'
@@ -130,18 +133,27 @@ export class CreateGroupsAndPeople1796000000000 implements MigrationInterface {
       RETURNS TABLE (id uuid, group_id uuid, member_id uuid, purpose text, expires_at timestamptz, used_at timestamptz)
       LANGUAGE sql STABLE SECURITY DEFINER SET search_path = public, pg_temp AS $$
         SELECT id, group_id, member_id, purpose, expires_at, used_at FROM one_time_link WHERE token_hash = hash $$;
+    -- plpgsql keeps the plan of its query for the whole connection; a function in SQL plans anew at each call.
+    CREATE FUNCTION find_session(wanted text, at timestamptz)
+      RETURNS TABLE (sess jsonb, member_id uuid, group_id uuid, name text, roles text[])
+      LANGUAGE plpgsql STABLE SECURITY DEFINER SET search_path = public, pg_temp AS $$
+      BEGIN
+        RETURN QUERY SELECT s.sess, m.id, m.group_id, m.name, m.roles FROM session s
+          JOIN member m ON m.id = s.member_id JOIN groups g ON g.id = m.group_id
+          WHERE s.sid = wanted AND s.expire > at AND m.removed_at IS NULL AND g.archived_at IS NULL;
+      END $$;
     CREATE FUNCTION list_groups()
       RETURNS TABLE (id uuid, time_zone text)
       LANGUAGE sql STABLE SECURITY DEFINER SET search_path = public, pg_temp AS $$
         SELECT id, time_zone FROM groups WHERE archived_at IS NULL ORDER BY id $$;
-    REVOKE ALL ON FUNCTION find_sign_in(text), find_one_time_link(bytea), list_groups() FROM PUBLIC;
-    GRANT EXECUTE ON FUNCTION find_sign_in(text), find_one_time_link(bytea), list_groups() TO halyard_app;
+    REVOKE ALL ON FUNCTION ${LOOK_UPS} FROM PUBLIC;
+    GRANT EXECUTE ON FUNCTION ${LOOK_UPS} TO halyard_app;
     `)
   }
 
   async down(runner: QueryRunner): Promise<void> {
     await runner.query(`
-    DROP FUNCTION find_sign_in(text), find_one_time_link(bytea), list_groups();
+    DROP FUNCTION ${LOOK_UPS};
     DROP TABLE audit_event, rate_limit, one_time_link, session, credential, member, groups;
     DROP EXTENSION btree_gist;
     REVOKE USAGE ON SCHEMA public FROM halyard_app;
