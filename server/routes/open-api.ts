@@ -34,6 +34,9 @@ function operation(endpoint: Endpoint): object {
       [endpoint.status ?? (endpoint.response ? 200 : 204)]: {
         description: 'Done',
         ...(endpoint.response && { content: json(schemaOf(endpoint.response, 'output')) }),
+        ...(endpoint.media && {
+          content: { [endpoint.media]: { schema: { type: 'string', format: 'binary' } } },
+        }),
       },
       default: {
         description: ['Problem details.', ...(endpoint.problems ?? [])].join(' '),

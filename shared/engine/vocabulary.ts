@@ -102,3 +102,11 @@ export type Condition = (typeof CONDITIONS)[number]
 
 export const FINDINGS = ['pass', 'marginal', 'fail'] as const
 export type FindingWord = (typeof FINDINGS)[number]
+
+/** How strictly a thing must come back, strictest first. */
+export const ACCOUNTABILITIES = ['accountable', 'durable', 'expendable'] as const
+export type Accountability = (typeof ACCOUNTABILITIES)[number]
+
+/** Battery chemistries: lithium iron phosphate, other lithium, three kinds of lead-acid, nickel. */
+export const CHEMISTRIES = ['lifepo4', 'lithium-ion', 'agm', 'gel', 'flooded', 'nimh'] as const
+export type Chemistry = (typeof CHEMISTRIES)[number]
