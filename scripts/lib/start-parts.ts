@@ -5,17 +5,14 @@ import { holdFirstFree } from './free-port.ts'
 import type { ProductEnv } from './product-server.ts'
 import { startMailFake } from '../mail-fake/start-mail-fake.ts'
 
-export interface Database {
-  env: Pick<ProductEnv, 'DATABASE_URL' | 'DATABASE_OWNER_URL'>
-  isLocal: boolean
-}
+export type DatabaseEnv = Pick<ProductEnv, 'DATABASE_URL' | 'DATABASE_OWNER_URL'>
 
 /** The database that DATABASE_URL names, else a cluster of our own in `folder`. */
-export async function openDatabase(folder: string, ending: Ending): Promise<Database> {
+export async function openDatabase(folder: string, ending: Ending): Promise<DatabaseEnv> {
   const given = process.env.DATABASE_URL
   if (given) {
     console.log('Using the database that DATABASE_URL names')
-    return { env: { DATABASE_URL: given }, isLocal: false }
+    return { DATABASE_URL: given, DATABASE_OWNER_URL: process.env.DATABASE_OWNER_URL }
   }
   console.log(`Starting PostgreSQL (its data: ${folder})`)
   const cluster = await startCluster({ folder })
@@ -23,10 +20,7 @@ export async function openDatabase(folder: string, ending: Ending): Promise<Data
   void cluster.ended.then(() => {
     if (!ending.hasBegun) console.error(`PostgreSQL ended by itself: see ${join(folder, 'postgres.log')}`)
   })
-  return {
-    env: { DATABASE_URL: cluster.url('app'), DATABASE_OWNER_URL: cluster.url('owner') },
-    isLocal: true,
-  }
+  return { DATABASE_URL: cluster.url('app'), DATABASE_OWNER_URL: cluster.url('owner') }
 }
 
 export interface MailServer {

@@ -1,13 +1,13 @@
 // What scripts/start does once Node and the npm packages are there: `start.ts SLOT [--no-demo]`.
-import { existsSync, writeFileSync } from 'node:fs'
 import { join } from 'node:path'
 import { DEMO_SIGN_INS } from '../demo/sign-ins.ts'
 import { banner } from './banner.ts'
 import { buildClient } from './build-client.ts'
 import { clusterFolder } from './cluster-folder.ts'
+import { loadDemo } from './demo-step.ts'
 import { Ending } from './ending.ts'
 import { stateFolder } from './paths.ts'
-import { ServerEnded, startProgram, type ProductEnv } from './product-server.ts'
+import { ServerEnded, type ProductEnv } from './product-server.ts'
 import { openDatabase, openMail } from './start-parts.ts'
 import { holdPublicPort, serve } from './start-serving.ts'
 import { keptSecrets } from './secrets.ts'
@@ -30,28 +30,13 @@ async function start(): Promise<void> {
     PUBLIC_URL: address.url,
     SESSION_SECRET: process.env.SESSION_SECRET ?? keptSecrets(folder, ['session']).session,
     SMTP_URL: mail.smtpUrl,
-    ...database.env,
+    ...database,
   }
-  const hasDemo = !options.includes('--no-demo') && (await loadDemo(env, database.isLocal ? folder : null))
+  const hasDemo = !options.includes('--no-demo') && (await loadDemo(env, ending))
   await serve({ env, folder, address, ending })
   console.log(
     banner({ url: address.url, mailUrl: mail.pageUrl, signIns: hasDemo ? DEMO_SIGN_INS : [], folder }),
   )
-}
-
-/**
- * Fills an empty database with the demo group. The program itself leaves a database alone that holds a group; the
- * mark only saves asking it at each start. True when the local database holds the demo group.
- */
-async function loadDemo(env: ProductEnv, folder: string | null): Promise<boolean> {
-  const mark = folder && join(folder, 'demo-loaded')
-  if (mark && existsSync(mark)) return true
-  console.log('Loading the demo group: fourteen months of records, this takes a moment')
-  const seeding = startProgram('scripts/seed-demo.ts', env)
-  await ending.add(() => seeding.stop())
-  if ((await seeding.ended) !== 0) throw new Error('The demo group could not be loaded: see above.')
-  if (mark) writeFileSync(mark, new Date().toISOString())
-  return mark !== null
 }
 
 ending.onSignals(() => 0)
