@@ -2,16 +2,17 @@ import { readFileSync } from 'node:fs'
 import { join } from 'node:path'
 import { isAlive, killQuietly } from './child.ts'
 
-/** What PostgreSQL says of itself in `postmaster.pid`: line 1 its pid, line 8 its state. */
+/** What PostgreSQL says of itself in `postmaster.pid`: line 1 its pid, line 4 its port, line 8 its state. */
 export interface PostmasterState {
   pid: number
+  port: number
   isReady: boolean
 }
 
 export function postmasterState(dataFolder: string): PostmasterState | null {
   try {
     const lines = readFileSync(join(dataFolder, 'postmaster.pid'), 'utf8').split('\n')
-    return { pid: Number(lines[0]), isReady: lines[7]?.trim() === 'ready' }
+    return { pid: Number(lines[0]), port: Number(lines[3]), isReady: lines[7]?.trim() === 'ready' }
   } catch {
     return null
   }

@@ -1,4 +1,4 @@
-import { closeSync, createWriteStream, openSync, type WriteStream } from 'node:fs'
+import { createWriteStream, type WriteStream } from 'node:fs'
 import { join } from 'node:path'
 import { createInterface } from 'node:readline'
 import { startChild, type Child } from './child.ts'
@@ -23,7 +23,7 @@ export interface ProductServer {
 
 export interface ProductOptions {
   env: ProductEnv
-  /** Gets every line that the server logs. */
+  /** Gets every line that the server writes. */
   logPath: string
   /** Called with the message of each logged error. */
   onError?: (message: string) => void
@@ -34,53 +34,68 @@ export interface ProductOptions {
 /** Pino's number for `error`. */
 const ERROR_LEVEL = 50
 
+/** How many of its last lines on standard error are told when the server ends. */
+const LAST_LINES = 20
+
 /** Starts the server and resolves once it listens; rejects with what it last said when it ends instead. */
-export async function startProductServer({
-  env,
-  logPath,
-  onError,
-  onStarted,
-}: ProductOptions): Promise<ProductServer> {
-  const errors = openSync(logPath, 'a', 0o600)
+export async function startProductServer(options: ProductOptions): Promise<ProductServer> {
   const child = startChild('node', ['--import', 'tsx', 'server/main.ts'], {
     cwd: root,
-    env: { ...process.env, ...env },
-    stdio: ['ignore', 'pipe', errors],
+    env: { ...process.env, ...options.env },
+    stdio: ['ignore', 'pipe', 'pipe'],
   })
-  closeSync(errors)
-  onStarted?.(child)
-  const log = createWriteStream(logPath, { flags: 'a', mode: 0o600 })
-  const port = await whenListening({ child, log, onError })
-  return { port, child }
-}
-
-interface Watching {
-  child: Child
-  log: WriteStream
-  onError?: (message: string) => void
-}
-
-function whenListening({ child, log, onError }: Watching): Promise<number> {
-  return new Promise((resolve, reject) => {
-    if (!child.process.stdout) throw new Error('The server has no output to read.')
-    createInterface({ input: child.process.stdout }).on('line', (line) => {
-      log.write(`${line}\n`)
-      const entry = readEntry(line)
-      if (entry.msg === 'listening') resolve(Number(entry.port))
-      if (Number(entry.level) >= ERROR_LEVEL) onError?.(String(entry.msg))
-    })
+  options.onStarted?.(child)
+  const log = createWriteStream(options.logPath, { flags: 'a', mode: 0o600 })
+  const lastWords = keepLastWords(child, log)
+  const port = await new Promise<number>((resolve, reject) => {
+    followLog({ child, log, onError: options.onError, onListening: resolve })
     void child.ended.then((code) => {
       log.end()
-      reject(new ServerEnded(code))
+      reject(new ServerEnded(code, lastWords))
     })
   })
+  return { port, child }
 }
 
 /** The server ended before it listened: `exitCode` 78 is a wrong setting. */
 export class ServerEnded extends Error {
-  constructor(readonly exitCode: number) {
-    super(`The server ended with exit code ${exitCode}.`)
+  constructor(
+    readonly exitCode: number,
+    lastWords: readonly string[] = [],
+  ) {
+    super([`The server ended with exit code ${exitCode}.`, ...lastWords].join('\n'))
   }
+}
+
+function keepLastWords(child: Child, log: WriteStream): string[] {
+  const words: string[] = []
+  eachLine(child.process.stderr, (line) => {
+    log.write(`${line}\n`)
+    words.push(line)
+    if (words.length > LAST_LINES) words.shift()
+  })
+  return words
+}
+
+interface Following {
+  child: Child
+  log: WriteStream
+  onError?: (message: string) => void
+  onListening: (port: number) => void
+}
+
+function followLog({ child, log, onError, onListening }: Following): void {
+  eachLine(child.process.stdout, (line) => {
+    log.write(`${line}\n`)
+    const entry = readEntry(line)
+    if (entry.msg === 'listening') onListening(Number(entry.port))
+    if (Number(entry.level) >= ERROR_LEVEL) onError?.(String(entry.msg))
+  })
+}
+
+function eachLine(stream: NodeJS.ReadableStream | null, use: (line: string) => void): void {
+  if (!stream) throw new Error('The server has no output to read.')
+  createInterface({ input: stream }).on('line', use)
 }
 
 interface LogEntry {
