@@ -2,7 +2,8 @@
  * When the next test is due and what to call today. Source: calculation sheet, section 14.
  * Due dates are counted from the test, never from the last due date, so that 31 January does not drift.
  */
-import { checkNumber, failure, isFailure, type Failure, type Outcome } from './outcome.ts'
+import { checkWhole } from './check-range.ts'
+import { failure, isFailure, type Failure, type Outcome } from './outcome.ts'
 import { addMonths, daysBetween, parseDate, type PlainDate } from './plain-date.ts'
 
 export type DueState = 'OVERDUE' | 'DUE_SOON' | 'CURRENT' | 'NEVER_TESTED'
@@ -60,11 +61,4 @@ export function checkTestedOn(testedOn: PlainDate, today: PlainDate): Failure | 
   return failure('E_FUTURE', `testedOn is after today (${today}): a test cannot be dated ahead.`, {
     field: 'testedOn',
   })
-}
-
-function checkWhole(field: string, value: unknown, min: number, max: number): Failure | undefined {
-  const bad = checkNumber(field, value, min, max)
-  if (bad) return bad
-  if (Number.isInteger(value)) return undefined
-  return failure('E_RANGE', `${field} must be a whole number from ${min} to ${max}.`, { field })
 }
