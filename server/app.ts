@@ -1,3 +1,4 @@
+import { join } from 'node:path'
 import express, { type Express } from 'express'
 import type { AppContext } from './context.ts'
 import { AppError } from './errors.ts'
@@ -6,6 +7,7 @@ import { requestId } from './middleware/request-id.ts'
 import { requireSameOrigin } from './middleware/require-same-origin.ts'
 import { securityHeaders } from './middleware/security-headers.ts'
 import { readSession } from './middleware/session.ts'
+import { staticFiles } from './middleware/static-files.ts'
 import { EndpointRouter } from './routes/endpoint.ts'
 import { addRoutes } from './routes/index.ts'
 import { methodGuard } from './routes/method-guard.ts'
@@ -13,6 +15,8 @@ import { openApiDocument } from './routes/open-api.ts'
 
 /** Mail programs post to these without an origin (RFC 8058). */
 const OPEN_TO_MAIL = /^\/api\/v1\/reminder-links\/[^/]+\/stop$/
+
+const BUILT_CLIENT = join(import.meta.dirname, '../dist')
 
 /** Middleware and routes; never listens. */
 export function createApp(ctx: AppContext): Express {
@@ -32,8 +36,9 @@ export function createApp(ctx: AppContext): Express {
   const document = JSON.stringify(openApiDocument(endpoints.endpoints))
   app.get('/api/v1/openapi.json', (_req, res) => void res.type('json').send(document))
   app.use(methodGuard(endpoints.endpoints))
-  app.use('/api', (req) => {
-    throw new AppError('not-found', `Nothing answers at ${req.baseUrl}.`)
+  app.use(staticFiles(BUILT_CLIENT))
+  app.use((req) => {
+    throw new AppError('not-found', `Nothing answers at ${req.path.slice(0, 200)}.`)
   })
   app.use(problemHandler(ctx))
   return app

@@ -48,6 +48,8 @@ export function createDataSource({ url, size }: PoolSettings): DataSource {
  */
 export async function migrate(ownerUrl: string): Promise<void> {
   const lock = new pg.Client({ connectionString: ownerUrl, connectionTimeoutMillis: 5000 })
+  // Without a listener a lost connection would end the process; the failing statement says so anyway.
+  lock.on('error', () => undefined)
   await lock.connect()
   const source = new DataSource({ type: 'postgres', url: ownerUrl, entities: [], migrations, poolSize: 2 })
   try {
