@@ -124,3 +124,16 @@ export const bringBackConsumable = defineEndpoint({
   response: consumableRecord,
   problems: ['not-found', 'already-exists', 'version-stale', 'version-missing', 'state-conflict'],
 })
+
+export const setLotCondition = defineEndpoint({
+  name: 'set-lot-condition',
+  method: 'post',
+  path: '/api/v1/consumables/:consumableId/lots/:lotId/condition',
+  summary: 'Say what state a lot is in, such as "leaking"; empty when nothing is wrong',
+  access: { scope: 'group', roles: CREW },
+  versioned: true,
+  params: params.extend({ lotId: id }),
+  body: z.strictObject({ condition: line(200) }),
+  response: consumableRecord,
+  problems: ['request-invalid', 'not-found', 'version-stale', 'version-missing', 'state-conflict'],
+})

@@ -1,9 +1,8 @@
 import { z } from 'zod'
-import { ACCOUNTABILITIES, CONDITIONS } from '#shared/engine/vocabulary.ts'
+import { ACCOUNTABILITIES } from '#shared/engine/vocabulary.ts'
 import { defineEndpoint } from './endpoint.ts'
 import { amount, id, line, newId, page, pageQuery, plainDate, text } from './fields.ts'
 import { itemDetails, itemDetailsRecord } from './item-details.ts'
-import { category } from './kit-kinds.ts'
 import {
   bringBackBody,
   designated,
@@ -13,9 +12,9 @@ import {
   retiredFilter,
 } from './registry-fields.ts'
 import { CREW, KEEPERS } from './roles.ts'
+import { category, condition } from './words.ts'
 
 const params = z.object({ itemId: id })
-const condition = z.enum(CONDITIONS)
 
 const fields = {
   designation: line(24, 1),

@@ -1,14 +1,13 @@
 import { z } from 'zod'
-import { BANDS, CATEGORIES, MODES, type Category } from '#shared/engine/vocabulary.ts'
+import { BANDS, MODES } from '#shared/engine/vocabulary.ts'
 import { defineEndpoint } from './endpoint.ts'
 import { amount, id, line, newId, page, pageQuery } from './fields.ts'
 import { bringBackBody, recordFields, retireBody, retiredFilter } from './registry-fields.ts'
 import { CREW, KEEPERS } from './roles.ts'
+import { category } from './words.ts'
 
 const params = z.object({ kitKindId: id })
 const unique = (list: readonly string[]) => new Set(list).size === list.length
-
-export const category = z.enum(Object.keys(CATEGORIES) as [Category, ...Category[]])
 
 export const bands = z.array(z.enum(BANDS)).max(BANDS.length).refine(unique, 'Name each band once.')
 

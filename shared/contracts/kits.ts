@@ -1,14 +1,12 @@
 import { z } from 'zod'
-import { AVAILABILITIES, CONDITIONS, VERDICTS } from '#shared/engine/vocabulary.ts'
 import { defineEndpoint } from './endpoint.ts'
 import { id, line, newId, page, pageQuery, plainDate, text } from './fields.ts'
 import { positionRecord } from './kit-kinds.ts'
 import { bringBackBody, named, recordFields, retireBody, retiredFilter } from './registry-fields.ts'
 import { CREW, KEEPERS, LEADS } from './roles.ts'
+import { availability, condition, verdict } from './words.ts'
 
 const params = z.object({ kitId: id })
-const verdict = z.enum(VERDICTS)
-const availability = z.enum(AVAILABILITIES)
 
 export const kitBody = z.strictObject({
   designation: line(24, 1),
@@ -54,7 +52,7 @@ export const kitItem = z.object({
   designation: z.string(),
   maker: z.string(),
   model: z.string(),
-  condition: z.enum(CONDITIONS),
+  condition,
   version: z.int(),
 })
 

@@ -43,18 +43,6 @@ export const createLot = defineEndpoint({
   problems: ['request-invalid', 'not-found', 'id-taken', 'already-exists', 'state-conflict'],
 })
 
-export const setLotCondition = defineEndpoint({
-  name: 'set-lot-condition',
-  method: 'post',
-  path: '/api/v1/consumables/:consumableId/lots/:lotId/condition',
-  summary: 'Say what state a lot is in, such as "leaking"; empty when nothing is wrong',
-  access: { scope: 'group', roles: CREW },
-  params: z.object({ ...lotParams, lotId: id }),
-  body: z.strictObject({ condition: line(200) }),
-  response: lotRecord,
-  problems: ['request-invalid', 'not-found'],
-})
-
 /** Counts travel as differences: two people who each take one have taken two. */
 export const changeStock = defineEndpoint({
   name: 'change-stock',
