@@ -69,7 +69,9 @@ async function once<T>(ctx: AppContext, scope: Scope, work: (tx: GroupTx) => Pro
     markTransaction(runner, true)
     const result = await work(groupTx(runner, client, scope, ctx.clock.now()))
     await Promise.all([begun, set])
-    await client.query('COMMIT')
+    const { command } = await client.query('COMMIT')
+    // PostgreSQL answers the COMMIT of a failed transaction with ROLLBACK and no error: a statement's error was lost.
+    if (command !== 'COMMIT') throw new Error('The transaction had failed before its commit')
     return result
   } catch (error) {
     await client.query('ROLLBACK').catch(() => undefined)
@@ -86,8 +88,12 @@ function markTransaction(runner: { isTransactionActive: boolean }, active: boole
 }
 
 function groupTx(runner: QueryRunner, client: PoolClient, scope: Scope, now: Date): GroupTx {
-  const sql = async <Row extends QueryResultRow>(statement: Statement, values: readonly unknown[] = []) =>
-    (await client.query<Row>({ ...statement, values: [...values] })).rows
+  const sql = <Row extends QueryResultRow>(statement: Statement, values: readonly unknown[] = []) => {
+    const rows = client.query<Row>({ ...statement, values: [...values] }).then((result) => result.rows)
+    // When several are under way and the first fails, nobody waits for the others: they must not count as unhandled.
+    rows.catch(() => undefined)
+    return rows
+  }
   let zone: Promise<string> | undefined
   const readZone = async () => {
     const [row] = await sql<{ time_zone: string }>(GROUP_ZONE, [scope.groupId])
