@@ -89,6 +89,20 @@ export class CreateEvidence1796000200000 implements MigrationInterface {
     CREATE INDEX test_instrument ON test (instrument_id, performed_at) WHERE instrument_id IS NOT NULL;
     CREATE INDEX test_group ON test (group_id, performed_at DESC, id);
 
+    -- What a test did to a kit when it was recorded, so that a resend gets the first answer again.
+    CREATE TABLE test_effect (
+      test_id uuid NOT NULL,
+      kit_id uuid NOT NULL,
+      group_id uuid NOT NULL REFERENCES groups (id),
+      verdict_before text,
+      verdict_after text NOT NULL,
+      sentences jsonb NOT NULL,
+      PRIMARY KEY (test_id, kit_id),
+      ${sameGroup('test_id', 'test')}, ${sameGroup('kit_id', 'kit')}
+    );
+    ${separateByGroup('test_effect')}
+    ${grant('test_effect', 'SELECT, INSERT')}
+
     -- A check asked for by an event (a drop, a storm, a recall, an opening) rather than by an interval.
     ${table(
       'raised_check',
@@ -135,6 +149,6 @@ export class CreateEvidence1796000200000 implements MigrationInterface {
   }
 
   async down(runner: QueryRunner): Promise<void> {
-    await runner.query(`DROP TABLE verdict_decision, raised_check, test, rule, policy;`)
+    await runner.query(`DROP TABLE verdict_decision, raised_check, test_effect, test, rule, policy;`)
   }
 }

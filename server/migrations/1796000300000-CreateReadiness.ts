@@ -20,6 +20,7 @@ export class CreateReadiness1796000300000 implements MigrationInterface {
       place_id uuid,
       reasons jsonb NOT NULL,
       capability jsonb NOT NULL,
+      oldest_vital_on date,
       digest text NOT NULL,
       known_since timestamptz NOT NULL,
       ${sameGroup('kit_id', 'kit')}, ${sameGroup('place_id', 'place')},
