@@ -55,8 +55,8 @@ export const callSign = line(24)
   )
 
 /** Digits with the marks people write between them. */
-export const phone = line(40, 3).regex(
-  /^[+\d(][\d ()./-]*(?: ?(?:x|ext\.?) ?\d+)?$/i,
+export const phone = line(40, 3).refine(
+  (value) => /^[+\d(][\d ()./-]*(?:(?:x|ext\.?) ?\d+)?$/i.test(value),
   'Not a telephone number.',
 )
 
