@@ -1,5 +1,4 @@
 import { describe, expect, it } from 'vitest'
-import { EMISSION_DUTIES } from '#shared/engine/emission-duty.ts'
 import {
   defaultHeatLimit,
   FERRITE_MIXES,
@@ -45,16 +44,5 @@ describe('defaultHeatLimit', () => {
     expect(Object.values(WINDING_WIRES).map(({ classC }) => classC)).toEqual([
       120, 155, 180, 180, 200, 220, 80, 200,
     ])
-  })
-})
-
-describe('EMISSION_DUTIES', () => {
-  // OET Bulletin 65 Supplement B, Table 2.
-  it('holds the duties of Supplement B', () => {
-    expect(EMISSION_DUTIES['ssb-conversational'].duty).toBe(0.2)
-    expect(EMISSION_DUTIES['ssb-processed'].duty).toBe(0.5)
-    expect(EMISSION_DUTIES['cw-conversational'].duty).toBe(0.4)
-    for (const mode of ['fm-voice', 'fsk-rtty', 'afsk-ssb', 'carrier', 'digital-keyed'] as const)
-      expect(EMISSION_DUTIES[mode].duty).toBe(1)
   })
 })

@@ -1,7 +1,6 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { firstMinuteSlope, measureHeatTest, type HeatTestMeasurement } from '#shared/engine/heat-test.ts'
-import { powerAllowance, type PowerAllowance } from '#shared/engine/power-allowance.ts'
 import { BOXBOD, logOf, SET_A, SET_B, SET_D } from '../../support/heat-sets.ts'
 import { expectClose, expectNumbersReal } from '../../support/sheet-close.ts'
 
@@ -83,30 +82,5 @@ describe('firstMinuteSlope', () => {
   it('uses the readings of the first 60 s', () => {
     expectClose(firstMinuteSlope(logOf(20, 60, [20, 32, 40])), 0.2)
     expect(firstMinuteSlope(logOf(20, 61, [20, 32, 40]))).toMatchObject({ code: 'E_TOO_FEW' })
-  })
-})
-
-describe('powerAllowance', () => {
-  const use = { radioW: 100, resistanceKPerW: 3.4105779, tauS: 308.243, efficiency: 0.83 }
-
-  // Calculation sheet, section 6: 86.2369 W of carrier from 35 C to 85 C.
-  it('allows voice at full power and a carrier at less', () => {
-    const climate = { ambientC: 35, limitC: 85 }
-    expect(powerAllowance({ ...use, ...climate, emission: 'ssb-conversational' })).toMatchObject({
-      withoutBreakW: 100,
-      fullPower: true,
-      longestOverS: null,
-    })
-    const carrier = powerAllowance({ ...use, ...climate, emission: 'carrier' }) as PowerAllowance
-    expectClose(carrier.withoutBreakW, 86.2369)
-    expect(carrier.fullPower).toBe(false)
-    expectClose(carrier.longestOverS, 610.63, 2e-3)
-  })
-
-  it('refuses an emission that is not in the table', () => {
-    const emission = 'toString' as 'carrier'
-    expect(powerAllowance({ ...use, ambientC: 35, limitC: 85, emission })).toMatchObject({
-      field: 'emission',
-    })
   })
 })
