@@ -10,12 +10,12 @@ export interface BannerFacts {
   /** Null when mail really goes out. */
   mailUrl: string | null
   signIns: readonly SignIn[]
-  /** Where data and logs are. */
-  folder: string
+  /** Where data, mails and logs are: two folders where PostgreSQL's own user cannot reach the clone. */
+  folders: readonly string[]
 }
 
 /** What scripts/start says once everything runs. */
-export function banner({ url, mailUrl, signIns, folder }: BannerFacts): string {
+export function banner({ url, mailUrl, signIns, folders }: BannerFacts): string {
   const width = Math.max(0, ...signIns.map(({ address }) => address.length))
   const people = signIns.map(
     ({ address, password, role }) => `    ${address.padEnd(width)}  ${password}  (${role})`,
@@ -28,7 +28,7 @@ export function banner({ url, mailUrl, signIns, folder }: BannerFacts): string {
     ...(mailUrl ? [`  Mail   ${mailUrl}  (every mail that Halyard sends; none leaves this machine)`] : []),
     ...(people.length > 0 ? ['', '  Sign in as', ...people] : []),
     '',
-    `  Data, mails and logs: ${folder}  (remove it to start afresh)`,
+    `  Data, mails and logs: ${folders.join(' and ')}  (remove to start afresh)`,
     '  Ctrl-C stops everything and keeps the data.',
     '',
   ].join('\n')

@@ -22,6 +22,7 @@ export function isBuilt(): boolean {
 /** Builds `dist` unless these very sources are built already. Builds side by side wait for each other. */
 export async function buildClient(): Promise<'built' | 'kept'> {
   if (isBuilt()) return 'kept'
+  console.log('Building the client')
   const builder = ['node', '--import', 'tsx', join(root, 'scripts/lib/build.ts')]
   const build = startChild('flock', ['--no-fork', join(stateFolder, 'build.lock'), ...builder], {
     cwd: root,

@@ -23,13 +23,7 @@ use_database() {
 
 # Does the work on the local database of scripts/start: beside it where it runs, else by starting PostgreSQL meanwhile.
 on_local_database() {
-  # Standard output may be the backup itself.
-  {
-    check_node
-    make_state_folder
-    need_packages postgresql
-    install_npm_packages
-  } >&2
+  set_up postgresql >&2 # Standard output may be the backup itself.
   mkdir -p .halyard/start-1
   exec 8>>.halyard/start-1/lock
   local found=stopped

@@ -24,6 +24,7 @@ is_there() {
     chromium) [ -x /usr/bin/chromium ] ;;
     zbar-tools) command -v zbarimg >/dev/null ;;
     poppler-utils) command -v pdftoppm >/dev/null ;;
+    *) command -v "$1" >/dev/null ;;
   esac
 }
 
@@ -48,16 +49,47 @@ then start this again."
   for name in "${missing[@]}"; do is_there "$name" || fail "The Debian package $name could not be installed."; done
 }
 
-# Two starts in one clone must not install over each other; the second finds the work done.
+# argon2 brings a program ready made, which not every Node 20 can load: it may crash at once.
+loads_argon2() {
+  (ulimit -c 0 && node -e 'require("argon2")') >/dev/null 2>&1
+}
+
+# Two starts in one clone must not install over each other: whoever waited finds the work done.
 install_npm_packages() {
   node scripts/lib/is-installed.mjs && return
   exec 9>.halyard/npm.lock
   flock 9
   if ! node scripts/lib/is-installed.mjs; then
     say 'Installing npm packages (npm ci)'
-    # The signal ends npm should this script be killed.
-    setpriv --pdeathsig TERM -- npm ci --no-audit --no-fund --loglevel=error ||
+    # No package but argon2 needs its install script. The signal ends npm should this script be killed.
+    setpriv --pdeathsig TERM -- npm ci --ignore-scripts --no-audit --no-fund --loglevel=error ||
       fail 'npm ci failed: see above.'
   fi
   exec 9>&-
+}
+
+# Built against the headers that came with Node, where they did; npm fetches them otherwise.
+build_argon2() {
+  local prefix
+  prefix=$(dirname "$(dirname "$(readlink -f "$(command -v node)")")")
+  exec 9>.halyard/npm.lock
+  flock 9
+  if ! loads_argon2; then
+    say 'Building argon2 for this machine'
+    [ ! -e "$prefix/include/node/node_api.h" ] || export npm_config_nodedir=$prefix
+    setpriv --pdeathsig TERM -- npm rebuild argon2 --loglevel=error >&2 || fail 'argon2 could not be built: see above.'
+    loads_argon2 || fail 'argon2 was built, but Node.js cannot load it.'
+  fi
+  exec 9>&-
+}
+
+# Everything before Node can take over; the arguments are the Debian packages that the caller needs.
+set_up() {
+  local needed=("$@")
+  check_node
+  make_state_folder
+  install_npm_packages
+  loads_argon2 || needed+=(python3 make g++)
+  need_packages "${needed[@]}"
+  loads_argon2 || build_argon2
 }

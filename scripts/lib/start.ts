@@ -18,8 +18,9 @@ const ending = new Ending()
 /** Everything from an empty folder to a served product; each part tells `ending` how to stop it. */
 async function start(): Promise<void> {
   const folder = join(stateFolder, slot)
+  const clusterHome = clusterFolder(slot)
   const [database, mail, address] = await Promise.all([
-    openDatabase(clusterFolder(slot), ending),
+    openDatabase(clusterHome, ending),
     openMail(folder, ending),
     holdPublicPort(folder),
     buildClient(),
@@ -34,9 +35,9 @@ async function start(): Promise<void> {
   }
   const hasDemo = !options.includes('--no-demo') && (await loadDemo(env, ending))
   await serve({ env, folder, address, ending })
-  console.log(
-    banner({ url: address.url, mailUrl: mail.pageUrl, signIns: hasDemo ? DEMO_SIGN_INS : [], folder }),
-  )
+  const signIns = hasDemo ? DEMO_SIGN_INS : []
+  const folders = [...new Set([folder, clusterHome])]
+  console.log(banner({ url: address.url, mailUrl: mail.pageUrl, signIns, folders }))
 }
 
 ending.onSignals(() => 0)
