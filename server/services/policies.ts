@@ -89,8 +89,13 @@ async function readPolicies(tx: GroupTx, zone: string): Promise<PolicyVersion[]>
     createdAt: row.created_at,
     effectiveFrom: localMidnight(row.effective_on, zone),
     settings: row.settings,
-    rules: (byPolicy.get(row.id) ?? []).map(ruleOf),
+    rules: (byPolicy.get(row.id) ?? []).map(ruleOf).sort(byConditions),
   }))
+}
+
+/** The first rule that fits is the one that holds: more conditions come before fewer. */
+function byConditions(a: Rule, b: Rule): number {
+  return Object.keys(b.applies).length - Object.keys(a.applies).length
 }
 
 function ruleOf(row: RuleRow): Rule {
@@ -110,9 +115,4 @@ function localMidnight(day: string, zone: string): number {
   const at = startOfDayUtc(day, zone)
   if (isFailure(at)) throw new Error(at.message)
   return at
-}
-
-/** The version in force at an instant; before the first one took effect, the first. */
-export function inForceAt(versions: readonly PolicyVersion[], at: number): PolicyVersion | undefined {
-  return versions.findLast((version) => version.effectiveFrom <= at) ?? versions[0]
 }

@@ -15,6 +15,8 @@ export const policySettings = z.strictObject({
   enduranceC: amount(-20, 50).optional(),
   /** Peukert exponent for lead-acid; 1 is linear. */
   peukert: amount(1, 1.5).optional(),
+  /** Capacity at `enduranceC` as a fraction of the tested one; absent: by chemistry. */
+  temperatureFactor: amount(0.1, 1).optional(),
 })
 
 export const policySummary = z.object({
