@@ -86,7 +86,7 @@ export class OptionCollector {
   result(): { option: OptionLine; warnings: FileNote[] } {
     const warnings: FileNote[] = []
     if (!this.option) {
-      const message = 'There is no option line: read as GHz, magnitude and angle, 50 ohm. Check the span.'
+      const message = 'There is no option line: read as GHz, magnitude and angle, 50 ohm. Check that.'
       warnings.push({ code: 'TS_W_NO_OPTION', message })
     }
     if (this.extraLines[0] !== undefined) {

@@ -3,8 +3,9 @@ import { readNumber } from './read-number.ts'
 
 /**
  * First pass over a Touchstone file: physical lines become option lines, keyword lines and data lines with
- * their numbers. It stops at the first bad character or token and leaves that failure in `stoppedBy`, so that
- * the second pass can still report an earlier line. Both passes look at each character a fixed number of times.
+ * their numbers. It stops at the first bad character or token and leaves that failure in `stoppedBy`, so
+ * that the second pass can still report an earlier line. Both passes look at each character a fixed number
+ * of times.
  */
 export interface DataLine {
   readonly kind: 'data'

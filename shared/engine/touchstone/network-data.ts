@@ -5,9 +5,10 @@ import { recordSize } from './port-count.ts'
 import { PairConverter } from './pair-converter.ts'
 
 /**
- * Second pass: data lines become records. Numbers come in pairs after the frequency and a pair is never split,
- * so an odd count starts a frequency and an even count continues the last one (the rule of the forum's own
- * checker, confirmed). Each line is judged with one line of lookahead; the first failure ends the pass.
+ * Second pass: data lines become records. Numbers come in pairs after the frequency and a pair is never
+ * split, so an odd count starts a frequency and an even count continues the last one (the rule of the
+ * forum's own checker, confirmed). Each line is judged with one line of lookahead; the first failure ends
+ * the pass.
  */
 export interface RecordSource {
   readonly lines: readonly DataLine[]

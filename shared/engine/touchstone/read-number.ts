@@ -2,9 +2,9 @@
  * A decimal number in full, or undefined: hexadecimal, `inf`, `nan`, a decimal comma and numbers beyond a
  * double are refused. Reads `text` from `from` up to `to`.
  *
- * Nearly every token of a file is a plain decimal of up to 15 digits. Its digits as an integer and the power of
- * ten are then both exact doubles, so one division gives the correctly rounded value, the same as `Number`
- * does in a third of the time. Everything else goes to `Number`.
+ * Nearly every token of a file is a plain decimal of up to 15 digits. Its digits as an integer and the power
+ * of ten are then both exact doubles, so one division gives the correctly rounded value, the same as
+ * `Number` does in a third of the time. Everything else goes to `Number`.
  */
 export function readNumber(text: string, from: number, to: number): number | undefined {
   return readPlainDecimal(text, from, to) ?? readAnyDecimal(text, from, to)

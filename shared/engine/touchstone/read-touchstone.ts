@@ -23,13 +23,14 @@ export interface ReadTouchstoneOptions {
 /**
  * Reads a one- or two-port Touchstone file, version 1.x or the common parts of 2.0 and 2.1.
  *
- * Answers frequencies in Hz and S-parameters as real and imaginary parts, or the first fault with its 1-based
- * physical line: `TS_EMPTY`, `TS_ENCODING`, `TS_OPTION`, `TS_OPTION_R`, `TS_PARAM`, `TS_OPTION_LATE`,
- * `TS_NUMBER`, `TS_COLUMNS`, `TS_TRUNCATED`, `TS_PORTS`, `TS_FREQ_NEG`, `TS_FREQ_ORDER`, `TS_FREQ_RANGE`
- * (above 100 GHz), `TS_MAG` (above 10), `TS_NOISE`, `TS_V2_KEYWORD`, `TS_V2_UNSUPPORTED`, `TS_V2_ORDER`,
- * `TS_V2_COUNT`, `TS_V2_REFERENCE`; beyond the limits `TS_TOO_BIG`, `TS_TOO_MANY_POINTS`. On one line the order
- * is encoding, number, columns, range, order. Warnings: `TS_W_NO_OPTION`, `TS_W_EXTRA_OPTION`, `TS_W_NO_END`,
- * `TS_W_DC`, `TS_W_ACTIVE`; information: `TS_I_NOISE`. Time grows in proportion to the size.
+ * Answers frequencies in Hz and S-parameters as real and imaginary parts, or the first fault with its
+ * 1-based physical line: `TS_EMPTY`, `TS_ENCODING`, `TS_OPTION`, `TS_OPTION_R`, `TS_PARAM`,
+ * `TS_OPTION_LATE`, `TS_NUMBER`, `TS_COLUMNS`, `TS_TRUNCATED`, `TS_PORTS`, `TS_FREQ_NEG`, `TS_FREQ_ORDER`,
+ * `TS_FREQ_RANGE` (above 100 GHz), `TS_MAG` (above 10), `TS_NOISE`, `TS_V2_KEYWORD`, `TS_V2_UNSUPPORTED`,
+ * `TS_V2_ORDER`, `TS_V2_COUNT`, `TS_V2_REFERENCE`; beyond the limits `TS_TOO_BIG`, `TS_TOO_MANY_POINTS`. On
+ * one line the order is encoding, number, columns, range, order. Warnings: `TS_W_NO_OPTION`,
+ * `TS_W_EXTRA_OPTION`, `TS_W_NO_END`, `TS_W_DC`, `TS_W_ACTIVE`; information: `TS_I_NOISE`. Time grows in
+ * proportion to the size.
  *
  * Source: Touchstone File Format Specification 1.1 (2002), 2.0 (2009), 2.1 (2024): defaults, two-port order,
  * noise columns, keywords confirmed; "later option lines are ignored" from memory, verify.
@@ -82,10 +83,19 @@ function assemble(layout: Layout, ports: 1 | 2, block: RecordBlock): TouchstoneF
     referenceOhm: layout.referenceOhm ?? Array.from({ length: ports }, () => layout.option.referenceOhm),
     frequencyHz: block.frequencyHz,
     noisePoints: block.noisePoints + layout.markedNoise,
-    warnings: [...layout.warnings, ...valueWarnings(block)],
+    warnings: [...layout.warnings.map((note) => withSpan(note, block.frequencyHz)), ...valueWarnings(block)],
     info: noiseInfo(block.noisePoints + layout.markedNoise),
   }
   return { ...common, ...splitTraces(block, ports, layout.isS21First) }
+}
+
+/** Without an option line the unit is a guess, so a person is shown what it makes of the frequencies. */
+function withSpan(note: FileNote, frequencyHz: Float64Array): FileNote {
+  if (note.code !== 'TS_W_NO_OPTION') return note
+  const [first, last] = [frequencyHz[0], frequencyHz.at(-1)].map((hz = 0) =>
+    Number((hz / 1e6).toPrecision(9)),
+  )
+  return { ...note, message: `${note.message} It runs from ${first} to ${last} MHz.` }
 }
 
 function noData({ stoppedBy, failureAfterData }: Layout, { lastLine }: Lexed): Outcome<never> {

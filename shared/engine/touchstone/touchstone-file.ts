@@ -1,7 +1,9 @@
 import type { Complex } from '../complex.ts'
 import type { Warning } from '../outcome.ts'
 
-/** A remark on a file; `line` is the first physical line it is about (1-based), `count` how many there are. */
+/**
+ * A remark on a file; `line` is the first physical line it is about (1-based), `count` how many there are.
+ */
 export interface FileNote extends Warning {
   readonly line?: number
   readonly count?: number

@@ -122,6 +122,12 @@ describe('messages and notes', () => {
     expect(isFailure(refused) && refused.message).toBe('"<b>?xxxxxxxxxxxxxxxxxxxx..." is not a number.')
   })
 
+  it('shows the span that follows from a missing option line', () => {
+    expect(accepted('0.007 0.1 0\n0.0073 0.1 0').warnings[0]?.message).toBe(
+      'There is no option line: read as GHz, magnitude and angle, 50 ohm. Check that. It runs from 7 to 7.3 MHz.',
+    )
+  })
+
   it('counts the reflections above 1', () => {
     const file = accepted('# MHz S RI R 50\n7 1 0\n8 1.01 0\n9 0 1.02\n')
     expect(file.warnings).toMatchObject([{ code: 'TS_W_ACTIVE', line: 3, count: 2 }])
