@@ -143,19 +143,21 @@ function published({ rawLossDb, insertionLossDb, uLossDb }: RawDirection): Direc
 
 function warningsFor(reading: PairReading, rawLossDb: number, differenceDb: number): Warning[] {
   const warnings: Warning[] = []
-  const note = (code: string, message: string): number => warnings.push({ code, message })
   if (magnitude(subtract(reading.s21, reading.s12)) > MAX_NOT_RECIPROCAL) {
-    note('W_NOT_RECIPROCAL', 'S21 and S12 differ by more than 0.02: check the calibration.')
+    const message = 'S21 and S12 differ by more than 0.02: check the calibration.'
+    warnings.push({ code: 'W_NOT_RECIPROCAL', message })
   }
   if (Math.abs(differenceDb) > MAX_NOT_ALIKE_DB) {
-    note(
-      'W_NOT_ALIKE',
-      'The two directions differ by more than 0.3 dB: the devices differ, this is their mean.',
-    )
+    const message = 'The two directions differ by more than 0.3 dB: the devices differ, this is their mean.'
+    warnings.push({ code: 'W_NOT_ALIKE', message })
   }
   if (Math.max(magnitude(reading.s11), magnitude(reading.s22)) > MAX_MATCHED) {
-    note('W_MISMATCH', 'Reflection above 0.5: the pair understates the loss into the real load.')
+    const message = 'Reflection above 0.5: the pair understates the loss into the real load.'
+    warnings.push({ code: 'W_MISMATCH', message })
   }
-  if (rawLossDb < 0) note('W_CLAMPED', 'The readings give an efficiency a little above 1: taken as 1.')
+  if (rawLossDb < 0) {
+    const message = 'The readings give an efficiency a little above 1: taken as 1.'
+    warnings.push({ code: 'W_CLAMPED', message })
+  }
   return warnings
 }

@@ -1,0 +1,9 @@
+/**
+ * Middle value, the mean of the two middle ones for an even count. The list has at least one finite value.
+ */
+export function median(values: readonly number[]): number {
+  const sorted = values.toSorted((a, b) => a - b)
+  const middle = sorted.length >> 1
+  const upper = sorted[middle] ?? NaN
+  return sorted.length % 2 === 1 ? upper : ((sorted[middle - 1] ?? NaN) + upper) / 2
+}
