@@ -1,9 +1,30 @@
 import type { AppContext } from '../context.ts'
+import { batchRoutes } from './batches.ts'
+import { buildSheetRoutes } from './build-sheets.ts'
+import { consumableRoutes, stockRoutes } from './consumables.ts'
 import type { EndpointRouter } from './endpoint.ts'
 import { healthRoutes } from './health.ts'
+import { itemRoutes } from './items.ts'
+import { kitKindRoutes } from './kit-kinds.ts'
+import { kitRoutes } from './kits.ts'
+import { moveRoutes } from './moves.ts'
+import { placeRoutes } from './places.ts'
+import { registryRoutes } from './registry.ts'
 
 /** Every group of endpoints, in the order of the OpenAPI document. */
-const routes: readonly ((endpoints: EndpointRouter, ctx: AppContext) => void)[] = [healthRoutes]
+const routes: readonly ((endpoints: EndpointRouter, ctx: AppContext) => void)[] = [
+  healthRoutes,
+  placeRoutes,
+  kitKindRoutes,
+  kitRoutes,
+  itemRoutes,
+  moveRoutes,
+  buildSheetRoutes,
+  batchRoutes,
+  consumableRoutes,
+  stockRoutes,
+  registryRoutes,
+]
 
 export function addRoutes(endpoints: EndpointRouter, ctx: AppContext): void {
   for (const add of routes) add(endpoints, ctx)
