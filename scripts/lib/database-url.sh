@@ -23,7 +23,7 @@ use_database() {
 
 # Does the work on the local database of scripts/start: beside it where it runs, else by starting PostgreSQL meanwhile.
 on_local_database() {
-  set_up postgresql >&2 # Standard output may be the backup itself.
+  set_up postgresql >&2 </dev/null # Standard output and input may be the backup itself.
   mkdir -p .halyard/start-1
   exec 8>>.halyard/start-1/lock
   local found=stopped
