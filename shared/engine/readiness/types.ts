@@ -121,6 +121,8 @@ export interface PolicySettings {
   readonly enduranceC?: number
   /** Peukert exponent for lead-acid; 1 means linear. */
   readonly peukert?: number
+  /** Capacity at `enduranceC` as a fraction of the tested one; absent: by chemistry (calculation sheet, section 10). */
+  readonly temperatureFactor?: number
 }
 
 /** A check asked for by an event. */

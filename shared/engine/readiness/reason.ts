@@ -1,0 +1,26 @@
+import type { Reason } from './types.ts'
+
+/** A reason with only what it needs said; the rest is null. */
+export function reasonOf(parts: Pick<Reason, 'code' | 'level' | 'text'> & Partial<Reason>): Reason {
+  return {
+    band: null,
+    positionId: null,
+    itemId: null,
+    testId: null,
+    procedure: null,
+    action: null,
+    ...parts,
+  }
+}
+
+const LEVELS = ['not-fit', 'not-proven', 'limit', 'note'] as const
+
+/** Heaviest first; equal ones keep the order in which the kit was judged. Says each thing once. */
+export function sortReasons(reasons: readonly Reason[]): Reason[] {
+  const seen = new Set<string>()
+  return reasons
+    .filter(({ text }) => !seen.has(text) && seen.add(text))
+    .map((reason, place) => ({ reason, place }))
+    .sort((a, b) => LEVELS.indexOf(a.reason.level) - LEVELS.indexOf(b.reason.level) || a.place - b.place)
+    .map(({ reason }) => reason)
+}
