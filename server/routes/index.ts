@@ -8,12 +8,21 @@ import { itemRoutes } from './items.ts'
 import { kitKindRoutes } from './kit-kinds.ts'
 import { kitRoutes } from './kits.ts'
 import { moveRoutes } from './moves.ts'
+import { oneTimeLinkRoutes } from './one-time-links.ts'
+import { peopleRoutes } from './people.ts'
 import { placeRoutes } from './places.ts'
+import { profileRoutes } from './profile.ts'
 import { registryRoutes } from './registry.ts'
+import { sessionRoutes } from './sessions.ts'
+import { testRoutes } from './tests.ts'
 
 /** Every group of endpoints, in the order of the OpenAPI document. */
 const routes: readonly ((endpoints: EndpointRouter, ctx: AppContext) => void)[] = [
   healthRoutes,
+  sessionRoutes,
+  oneTimeLinkRoutes,
+  profileRoutes,
+  peopleRoutes,
   placeRoutes,
   kitKindRoutes,
   kitRoutes,
@@ -24,6 +33,7 @@ const routes: readonly ((endpoints: EndpointRouter, ctx: AppContext) => void)[] 
   consumableRoutes,
   stockRoutes,
   registryRoutes,
+  testRoutes,
 ]
 
 export function addRoutes(endpoints: EndpointRouter, ctx: AppContext): void {

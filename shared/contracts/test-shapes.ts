@@ -81,7 +81,7 @@ export const storedTest = testSummary.omit({ operatorName: true }).extend({
   claimedAhead: z.boolean(),
   /** As sent, by procedure. */
   inputs: z.record(z.string(), z.unknown()),
-  /** As calculated, by procedure. */
+  /** As calculated, by procedure; `warnings` among them. */
   results: z.record(z.string(), z.unknown()),
   judgedBy,
   engineVersion: z.string(),
@@ -89,6 +89,10 @@ export const storedTest = testSummary.omit({ operatorName: true }).extend({
   supersedes: z.object({ testId: z.string(), reason: z.string() }).nullable(),
   supersededBy: z.object({ testId: z.string(), reason: z.string() }).nullable(),
   effects: z.array(testEffect),
+  /** A failed unit of a batch: its siblings may have the same fault, and nothing asks for their test yet. */
+  proposedRecall: z
+    .object({ batchId: z.string(), batchName: z.string(), band: band.nullable(), siblings: z.int() })
+    .nullable(),
 })
 
 export type StoredTest = z.output<typeof storedTest>

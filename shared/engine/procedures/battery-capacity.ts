@@ -3,8 +3,8 @@
  * a cold room must not fail a sound battery. A voltage is never evidence of capacity. Source: calculation sheet,
  * section 10; the 80 % rule is IEEE 1188-2005 and 450-2002 clause 8, written for stationary batteries.
  */
-import { capacityFactor } from '../capacity-temperature.ts'
 import { failure, isFailure, type Outcome, type Warning } from '../outcome.ts'
+import { temperatureFactor } from '../readiness/temperature-factor.ts'
 import type { Chemistry } from '../vocabulary.ts'
 import { expandedUncertainty, type Accuracy } from './accuracy.ts'
 import { figure, findingOf, judgeAtLeast, judgementOf, percent, type Judgement } from './judgement.ts'
@@ -61,6 +61,15 @@ export function judgeBatteryCapacity(inputs: BatteryCapacityInputs, known: Known
   })
   const results = { measuredAh, referredAh, fraction, measuredFraction: measuredAh / ratedAh, factor }
   return judgementOf(results, [finding], fastDischarge(measuredAh, inputs, chemistry))
+}
+
+/** Only where a table says how temperature acts; else the figure stands as measured. */
+function capacityFactor(chemistry: Chemistry | undefined, temperatureC: number): Outcome<number> {
+  if (chemistry === undefined || chemistry === 'nimh') return 1
+  const factor = temperatureFactor(chemistry, temperatureC)
+  if (!isFailure(factor)) return factor
+  const message = `${figure(temperatureC, 1)} °C is too cold to say: test nearer to 25 °C.`
+  return failure('E_RANGE', message, { field: 'temperatureC' })
 }
 
 function ampereHours({ measuredAh, currentA, hours }: BatteryCapacityInputs): Outcome<number> {

@@ -1,0 +1,130 @@
+import type { RecordTestBody } from '#shared/contracts/record-test.ts'
+import { canBeTested, SUBJECTS } from '#shared/engine/procedures/subjects.ts'
+import type { ItemFacts } from '#shared/engine/readiness/types.ts'
+import type { Category } from '#shared/engine/vocabulary.ts'
+import { AppError, invalidField, notFound } from '../../errors.ts'
+import type { GroupTx, Statement } from '../../group-transaction.ts'
+import { itemFacts } from '../item-facts.ts'
+
+/** What a test is about. */
+export interface TestSubject {
+  readonly type: 'item' | 'kit'
+  readonly id: string
+  readonly designation: string
+  readonly category: Category | 'kit'
+  readonly facts: ItemFacts
+  readonly details: Readonly<Record<string, unknown>>
+  /** The kit that the item sits in, or the kit itself. */
+  readonly kitId: string | null
+}
+
+interface ItemRow {
+  [column: string]: unknown
+  id: string
+  designation: string
+  category: Category
+  details: Record<string, unknown>
+  acquired_on: string | null
+  kit_id: string | null
+}
+
+const ITEM: Statement = {
+  name: 'test-item',
+  text: `SELECT id, designation, category, details, acquired_on::text, kit_id FROM item WHERE id = $1`,
+}
+const KIT: Statement = { name: 'test-kit', text: 'SELECT id, designation FROM kit WHERE id = $1' }
+
+/** 404 when it is not in the group, a fault of the field when the procedure is not done to such a thing. */
+export async function readSubject(tx: GroupTx, body: RecordTestBody): Promise<TestSubject> {
+  if ('kitId' in body) return readKit(tx, body.kitId)
+  const item = await readItemSubject(tx, body.itemId)
+  if (item.category !== 'kit' && canBeTested(item.category, body.procedure)) return item
+  const subjects = SUBJECTS[body.procedure]
+  const fitting = Array.isArray(subjects) ? subjects.join(', ') : 'kits'
+  throw invalidField(
+    '#/itemId',
+    `${item.designation} is a ${item.category}; this procedure is for: ${fitting}.`,
+  )
+}
+
+export async function readItemSubject(tx: GroupTx, itemId: string): Promise<TestSubject> {
+  const [row] = await tx.sql<ItemRow>(ITEM, [itemId])
+  if (!row) throw notFound('item')
+  return {
+    type: 'item',
+    id: row.id,
+    designation: row.designation,
+    category: row.category,
+    facts: itemFacts(row.details, row.acquired_on),
+    details: row.details,
+    kitId: row.kit_id,
+  }
+}
+
+async function readKit(tx: GroupTx, kitId: string): Promise<TestSubject> {
+  const [row] = await tx.sql<{ id: string; designation: string }>(KIT, [kitId])
+  if (!row) throw notFound('kit')
+  return { type: 'kit', ...row, category: 'kit', facts: {}, details: {}, kitId: row.id }
+}
+
+interface InstrumentRow {
+  [column: string]: unknown
+  id: string
+  designation: string
+  category: Category
+  details: Record<string, unknown>
+}
+
+const INSTRUMENT: Statement = {
+  name: 'test-instrument',
+  text: 'SELECT id, designation, category, details FROM item WHERE id = $1',
+}
+const OPERATOR: Statement = { name: 'test-operator', text: 'SELECT id, name FROM member WHERE id = $1' }
+
+/** The instrument named, or null where none is. Faults name the field. */
+export async function readInstrument(tx: GroupTx, body: RecordTestBody): Promise<InstrumentRow | null> {
+  if (body.instrumentId === undefined) return null
+  if ('itemId' in body && body.instrumentId === body.itemId)
+    throw invalidField('#/instrumentId', 'A thing cannot be measured with itself.')
+  const [row] = await tx.sql<InstrumentRow>(INSTRUMENT, [body.instrumentId])
+  if (!row) throw invalidField('#/instrumentId', 'There is no such instrument in your group.')
+  return row
+}
+
+export async function readOperator(tx: GroupTx, operatorId: string): Promise<{ id: string; name: string }> {
+  const [row] = await tx.sql<{ id: string; name: string }>(OPERATOR, [operatorId])
+  if (!row) throw invalidField('#/operatorId', 'There is no such member in your group.')
+  return row
+}
+
+interface SupersededRow {
+  [column: string]: unknown
+  procedure: string
+  subject_id: string
+  taken: boolean
+}
+
+const SUPERSEDED: Statement = {
+  name: 'test-superseded',
+  text: `SELECT t.procedure, coalesce(t.item_id, t.kit_id) AS subject_id,
+      EXISTS (SELECT FROM test s WHERE s.supersedes_id = t.id AND s.id <> $2) AS taken
+    FROM test t WHERE t.id = $1`,
+}
+
+/** The test that is corrected must be there, about the same thing, and not corrected before. */
+export async function checkSuperseded(tx: GroupTx, testId: string, body: RecordTestBody): Promise<void> {
+  if (!body.supersedes) return
+  const [row] = await tx.sql<SupersededRow>(SUPERSEDED, [body.supersedes.testId, testId])
+  const subjectId = 'kitId' in body ? body.kitId : body.itemId
+  if (!row) throw invalidField('#/supersedes/testId', 'There is no such test in your group.')
+  if (row.procedure !== body.procedure || row.subject_id !== subjectId)
+    throw invalidField('#/supersedes/testId', 'That test is about something else.')
+  if (row.taken) throw alreadySuperseded()
+}
+
+export function alreadySuperseded(): AppError {
+  return new AppError(
+    'already-superseded',
+    'Open the test that corrected it, and correct that one if need be.',
+  )
+}
