@@ -1,5 +1,8 @@
 import { ESLint } from 'eslint'
-import { describe, expect, it } from 'vitest'
+import { describe, expect, it, vi } from 'vitest'
+
+// Processes and linters take their time on a busy machine.
+vi.setConfig({ testTimeout: 60_000 })
 
 const eslint = new ESLint()
 

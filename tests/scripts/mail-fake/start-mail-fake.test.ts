@@ -2,8 +2,11 @@ import { mkdtempSync, rmSync } from 'node:fs'
 import { tmpdir } from 'node:os'
 import { join } from 'node:path'
 import { createTransport, type SendMailOptions } from 'nodemailer'
-import { afterEach, beforeEach, describe, expect, it } from 'vitest'
+import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest'
 import { startMailFake, type Mail, type MailFake } from '../../../scripts/mail-fake/start-mail-fake.ts'
+
+// Processes and linters take their time on a busy machine.
+vi.setConfig({ testTimeout: 60_000 })
 
 let folder: string
 let fake: MailFake
