@@ -49,7 +49,9 @@ export class CreateGroupsAndPeople1796000000000 implements MigrationInterface {
       removed_at timestamptz,
       UNIQUE (group_id, id)
     );
-    CREATE UNIQUE INDEX member_email ON member (lower(email)) WHERE email IS NOT NULL AND removed_at IS NULL;
+    -- Unique in a group only: a group must not learn from a refusal that another knows an address.
+    CREATE UNIQUE INDEX member_email ON member (group_id, lower(email)) WHERE removed_at IS NULL;
+    CREATE INDEX member_sign_in ON member (lower(email)) WHERE removed_at IS NULL;
     ${separateByGroup('member')}
     ${grant('member', 'SELECT, INSERT, UPDATE')}
 
@@ -128,7 +130,8 @@ export class CreateGroupsAndPeople1796000000000 implements MigrationInterface {
       LANGUAGE sql STABLE SECURITY DEFINER SET search_path = public, pg_temp AS $$
         SELECT m.id, m.group_id, c.password_hash FROM member m LEFT JOIN credential c ON c.member_id = m.id
         JOIN groups g ON g.id = m.group_id
-        WHERE lower(m.email) = lower(address) AND m.removed_at IS NULL AND g.archived_at IS NULL $$;
+        WHERE lower(m.email) = lower(address) AND m.removed_at IS NULL AND g.archived_at IS NULL
+        ORDER BY m.created_at, m.id $$;
     CREATE FUNCTION find_one_time_link(hash bytea)
       RETURNS TABLE (id uuid, group_id uuid, member_id uuid, purpose text, expires_at timestamptz, used_at timestamptz)
       LANGUAGE sql STABLE SECURITY DEFINER SET search_path = public, pg_temp AS $$

@@ -24,7 +24,7 @@ export interface Input<E extends Endpoint> {
   readonly res: Response
 }
 
-type Answer<E> = ResponseOf<E> | typeof ANSWERED
+type Answer<E> = typeof ANSWERED | (E extends { response: object } ? ResponseOf<E> : void)
 
 /** The endpoints that were bound, in order: the source of the OpenAPI document and of `Allow`. */
 export class EndpointRouter {

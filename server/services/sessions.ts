@@ -1,5 +1,6 @@
 import { randomBytes, randomUUID } from 'node:crypto'
 import type { Pool } from 'pg'
+import { AppError } from '../errors.ts'
 import type { GroupTx, Statement } from '../group-transaction.ts'
 import { sessionEndsAt, type SessionFacts } from './session-limits.ts'
 
@@ -22,7 +23,8 @@ const RENEW: Statement = {
 }
 const STEP_UP: Statement = {
   name: 'step-up-session',
-  text: `UPDATE session SET sid = $2, sess = jsonb_set(sess, '{passwordAt}', to_jsonb($3::text)) WHERE sid = $1`,
+  text: `UPDATE session SET sid = $2, sess = jsonb_set(sess, '{passwordAt}', to_jsonb($3::text))
+    WHERE sid = $1 RETURNING sid`,
 }
 const END: Statement = { name: 'end-session', text: 'DELETE FROM session WHERE sid = $1' }
 const END_BY_REF: Statement = {
@@ -66,10 +68,14 @@ export async function renewSession(pool: Pool, sid: string, facts: SessionFacts,
   await pool.query({ ...RENEW, values: [sid, seenAt, sessionEndsAt({ ...facts, seenAt })] })
 }
 
-/** The password was given again: the session goes on under a new id, which is returned. */
+/**
+ * The password was given again: the session goes on under a new id, which is returned.
+ * @throws AppError `sign-in-needed` when the session was ended meanwhile.
+ */
 export async function stepUpSession(tx: GroupTx, sid: string): Promise<string> {
   const renewed = newSessionId()
-  await tx.sql(STEP_UP, [sid, renewed, tx.now.toISOString()])
+  const found = await tx.sql(STEP_UP, [sid, renewed, tx.now.toISOString()])
+  if (found.length === 0) throw new AppError('sign-in-needed', 'This session was ended meanwhile.')
   return renewed
 }
 
