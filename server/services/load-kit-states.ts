@@ -17,7 +17,11 @@ export interface LoadedKit {
  * Everything that the timelines of these kits depend on, in one round trip. The statements are sent together and the
  * server runs them in order, so a lock sent just before holds for all of them.
  */
-export async function loadKitStates(tx: GroupTx, kitIds: readonly string[]): Promise<LoadedKit[]> {
+export async function loadKitStates(
+  tx: GroupTx,
+  kitIds: readonly string[],
+  readPolicies = policiesOf,
+): Promise<LoadedKit[]> {
   const ids = [[...kitIds]]
   const [kits, positions, items, evidence, instruments, raised, decisions, policies, zone] =
     await Promise.all([

@@ -2,6 +2,7 @@ import { kitTimeline } from '#shared/engine/readiness/timeline.ts'
 import type { Period } from '#shared/engine/readiness/types.ts'
 import type { GroupTx } from '../group-transaction.ts'
 import { boardRowOf, keptRows, writeBoard, type KeptRow } from './board-rows.ts'
+import { policiesOrFirst } from './first-policy.ts'
 import { loadKitStates, type LoadedKit } from './load-kit-states.ts'
 import { lockKits } from './lock-kits.ts'
 import { changeOf, periodsFrom, writePeriods, type PeriodChange, type StoredPeriod } from './period-rows.ts'
@@ -39,7 +40,7 @@ export async function rewriteAndCompare(tx: GroupTx, kitIds: readonly string[]):
 async function rewriteStep(tx: GroupTx, kitIds: readonly string[]): Promise<KitChange[]> {
   const [, kits, stored, kept] = await Promise.all([
     lockKits(tx, kitIds),
-    loadKitStates(tx, kitIds),
+    loadKitStates(tx, kitIds, policiesOrFirst),
     periodsFrom(tx, kitIds, tx.now),
     keptRows(tx, kitIds),
   ])
