@@ -23,9 +23,20 @@ export function isEmpty(changes: Changes): boolean {
   return Object.keys(changes.after).length === 0
 }
 
-/** "designation, maker and weight kg": the names of the fields for a sentence. */
+/** Fields whose name in a sentence is not simply their own. */
+const NAMES: Readonly<Record<string, string>> = {
+  minC: 'lowest temperature',
+  maxC: 'highest temperature',
+  weightKg: 'weight',
+  kitKindId: 'kind',
+  sealMatches: 'state of the seal',
+}
+
+/** "designation, maker and weight": the names of the fields for a sentence. */
 export function fieldNames(changes: Changes): string {
-  const names = Object.keys(changes.after).map((key) => key.replace(/Id$/, '').replace(/[A-Z]/g, lowerWord))
+  const names = Object.keys(changes.after).map(
+    (key) => NAMES[key] ?? key.replace(/(Id|On)$/, '').replace(/[A-Z]/g, lowerWord),
+  )
   const last = names.pop() ?? ''
   return names.length > 0 ? `${names.join(', ')} and ${last}` : last
 }
