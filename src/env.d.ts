@@ -8,7 +8,7 @@ declare module 'vue-router' {
     /** Who may open it; absent: every member. `public` pages need no session. */
     roles?: readonly Role[]
     public?: boolean
-    /** The page does without the component library, so that it opens fast. */
+    /** The page does without the component library and the query cache, so that it opens fast. */
     light?: boolean
   }
 }

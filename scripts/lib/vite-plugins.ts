@@ -2,7 +2,7 @@
 import type { Plugin, Rolldown } from 'vite'
 
 const JSON_SCHEMA_MODULES = /[\\/]zod[\\/]v4[\\/]core[\\/](?:json-schema-processors|to-json-schema)\.js$/
-const EXPORTED_NAME = /^export (?:const|function) (\w+)/gm
+const EXPORTED_NAME = /^export (?:(?:const|function) (\w+)|\{ \w+ as (\w+) \})/gm
 
 /**
  * Every zod schema can write itself as JSON Schema, which only the server does. The client takes empty functions in
@@ -14,10 +14,9 @@ export function withoutJsonSchema(): Plugin {
     apply: 'build',
     transform(code, id) {
       if (!JSON_SCHEMA_MODULES.test(id)) return undefined
-      const names = [...code.matchAll(EXPORTED_NAME)].map(
-        ([, name]) => `export const ${name} = () => undefined`,
-      )
-      return { code: [...names, 'export { processSchema as process }'].join('\n'), map: null }
+      const names = [...code.matchAll(EXPORTED_NAME)].map(([, own, renamed]) => own ?? renamed)
+      const empty = names.map((name) => `const _${name} = () => undefined\nexport { _${name} as ${name} }`)
+      return { code: empty.join('\n'), map: null }
     },
   }
 }

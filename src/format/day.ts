@@ -55,3 +55,24 @@ function clockOf(zone: string): Intl.DateTimeFormat {
   clocks.set(zone, made)
   return made
 }
+
+/**
+ * The instant, as ISO text in UTC, at which a wall clock in the zone shows this day and time. A time that a clock
+ * change skips becomes the moment just after the gap; one that comes twice means the first.
+ */
+export function instantOfWall(day: PlainDate, time: string, zone: string): string {
+  const wanted = Date.parse(`${day}T${time}:00Z`)
+  const guesses = [-DAY_MS, 0, DAY_MS]
+    .map((shift) => wanted - offsetMs(wanted + shift, zone))
+    .sort((a, b) => a - b)
+  const exact = guesses.find((guess) => guess + offsetMs(guess, zone) === wanted)
+  return new Date(exact ?? guesses[guesses.length - 1] ?? wanted).toISOString()
+}
+
+const DAY_MS = 86_400_000
+
+/** How far the zone's wall clock is ahead of UTC at an instant, in whole minutes. */
+function offsetMs(atMs: number, zone: string): number {
+  const { day, time } = wallClock(atMs, zone)
+  return Date.parse(`${day}T${time}:00Z`) - Math.floor(atMs / 60_000) * 60_000
+}

@@ -1,0 +1,58 @@
+import type { RouteRecordRaw } from 'vue-router'
+import { ANY_MEMBER } from '#shared/contracts/roles.ts'
+
+/**
+ * Every page, one table. The name is the slug of the page; views are loaded when they are first opened. `light` pages
+ * must use neither the component library nor `@pinia/colada`: they are the ones that open at 3 am on a phone.
+ */
+export const routes: RouteRecordRaw[] = [
+  {
+    path: '/',
+    name: 'board',
+    component: () => import('@/views/BoardView.vue'),
+    meta: { title: 'Board', roles: ANY_MEMBER, light: true },
+  },
+  {
+    path: '/profile',
+    name: 'profile',
+    component: () => import('@/views/ProfileView.vue'),
+    meta: { title: 'Your profile', light: true },
+  },
+  {
+    path: '/more',
+    name: 'more',
+    component: () => import('@/views/MoreView.vue'),
+    meta: { title: 'Everything', light: true },
+  },
+  {
+    path: '/sign-in',
+    name: 'sign-in',
+    component: () => import('@/views/SignInView.vue'),
+    meta: { title: 'Sign in', public: true, light: true },
+  },
+  {
+    path: '/forgot-password',
+    name: 'forgot-password',
+    component: () => import('@/views/ForgotPasswordView.vue'),
+    meta: { title: 'Forgot password', public: true, light: true },
+  },
+  {
+    // Mailed links lead here: /link#<secret>.
+    path: '/link',
+    name: 'mailed-link',
+    component: () => import('@/views/MailedLinkView.vue'),
+    meta: { title: 'Your link', public: true, light: true },
+  },
+  {
+    path: '/not-allowed',
+    name: 'not-allowed',
+    component: () => import('@/views/NotAllowedView.vue'),
+    meta: { title: 'Not allowed', light: true },
+  },
+  {
+    path: '/:path(.*)*',
+    name: 'not-found',
+    component: () => import('@/views/NotFoundView.vue'),
+    meta: { title: 'Not found', public: true, light: true },
+  },
+]
