@@ -3,7 +3,7 @@ import type { AppContext } from '../context.ts'
 import { poolOf } from '../pool.ts'
 import { deliverMail, sweepMail } from '../services/deliver-mail.ts'
 import type { MailTransport } from '../services/mail-transport.ts'
-import { remindAllGroups } from '../services/morning-reminders.ts'
+import { remindAllGroups } from '../services/reminders/morning-reminders.ts'
 import { refreshAllBoards } from '../services/refresh-boards.ts'
 import { QUEUES, SCHEDULES, type QueueName } from './queues.ts'
 

@@ -75,6 +75,7 @@ export class CreateRegistry1796000100000 implements MigrationInterface {
       availability_reason text NOT NULL DEFAULT '' CHECK (length(availability_reason) <= 300),
       expected_return_on date,
       holder_id uuid,
+      responsible_id uuid,
       seal_number text CHECK (length(seal_number) <= 40),
       seal_matches boolean NOT NULL DEFAULT true,
       notes text NOT NULL DEFAULT '' CHECK (length(notes) <= 4000),
@@ -82,7 +83,8 @@ export class CreateRegistry1796000100000 implements MigrationInterface {
       ${sameGroup('kit_kind_id', 'kit_kind')},
       ${sameGroup('home_place_id', 'place')},
       ${sameGroup('place_id', 'place')},
-      ${sameGroup('holder_id', 'member')}`,
+      ${sameGroup('holder_id', 'member')},
+      ${sameGroup('responsible_id', 'member')}`,
     )}
     CREATE UNIQUE INDEX kit_designation ON kit (group_id, lower(designation));
     CREATE INDEX kit_kind_of ON kit (group_id, kit_kind_id);

@@ -1,6 +1,7 @@
 import { systemActor } from '../caller.ts'
 import type { AppContext } from '../context.ts'
 import { inGroup, type GroupTx, type Statement } from '../group-transaction.ts'
+import { poolOf } from '../pool.ts'
 import type { MailTransport } from './mail-transport.ts'
 
 /** A mail that is being sent belongs to one process for this long; after a crash another takes it up. */
