@@ -13,6 +13,7 @@ import { peopleRoutes } from './people.ts'
 import { placeRoutes } from './places.ts'
 import { profileRoutes } from './profile.ts'
 import { registryRoutes } from './registry.ts'
+import { reminderRoutes } from './reminders.ts'
 import { sessionRoutes } from './sessions.ts'
 import { testRoutes } from './tests.ts'
 
@@ -34,6 +35,7 @@ const routes: readonly ((endpoints: EndpointRouter, ctx: AppContext) => void)[] 
   stockRoutes,
   registryRoutes,
   testRoutes,
+  reminderRoutes,
 ]
 
 export function addRoutes(endpoints: EndpointRouter, ctx: AppContext): void {
