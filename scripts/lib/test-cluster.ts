@@ -33,9 +33,14 @@ export async function startTestCluster(): Promise<TestCluster> {
     appUrl: cluster.url('app', 'postgres'),
     stop: async () => {
       await cluster.stop()
-      for (const parent of [stateFolder, outsideFolder()]) removeFolder(join(parent, name))
+      removeCluster(name)
     },
   }
+}
+
+/** Removes what a stopped cluster called `name` left on the disk. */
+export function removeCluster(name: string): void {
+  for (const parent of [stateFolder, outsideFolder()]) removeFolder(join(parent, name))
 }
 
 /** The same address with another database. */
@@ -45,11 +50,11 @@ export function withDatabase(url: string, database: string): string {
   return changed.href
 }
 
-/** What runs that were killed with -9 left behind; a folder whose process lives is another run's. */
-async function removeLeftovers(): Promise<void> {
+/** What runs that were killed with -9 left behind (`test-PID…`); one whose process lives is another run's. */
+export async function removeLeftovers(): Promise<void> {
   for (const parent of [stateFolder, outsideFolder()]) {
     for (const name of namesIn(parent)) {
-      const pid = /^test-(\d+)$/.exec(name)?.[1]
+      const pid = /^test-(\d+)(-|$)/.exec(name)?.[1]
       if (pid === undefined || isAlive(Number(pid))) continue
       await endLeftoverPostmaster(join(parent, name, 'data'))
       removeFolder(join(parent, name))

@@ -1,38 +1,31 @@
 import { spawn } from 'node:child_process'
 import { once } from 'node:events'
-import { chmodSync, mkdtempSync, readFileSync, rmSync, statSync } from 'node:fs'
+import { readFileSync, statSync } from 'node:fs'
 import { join } from 'node:path'
 import { createInterface } from 'node:readline'
 import pg from 'pg'
 import { afterAll, beforeAll, describe, expect, it, vi } from 'vitest'
 import { isAlive } from '../../scripts/lib/child.ts'
-import { clusterFolder } from '../../scripts/lib/cluster-folder.ts'
 import type { Role } from '../../scripts/lib/cluster-roles.ts'
-import { attachCluster, startCluster, type Cluster } from '../../scripts/lib/cluster.ts'
+import { attachCluster, type Cluster } from '../../scripts/lib/cluster.ts'
 import { root } from '../../scripts/lib/paths.ts'
+import { startOwnCluster, type OwnCluster } from '../support/own-cluster.ts'
 
 // Processes and linters take their time on a busy machine.
 vi.setConfig({ testTimeout: 60_000 })
 
-let folder: string
-let cluster: Cluster
+let own: OwnCluster
 
 beforeAll(async () => {
-  folder = mkdtempSync(join(clusterFolder('test-clusters'), 'c-'))
-  // PostgreSQL's own user must be able to pass through.
-  chmodSync(folder, 0o755)
-  cluster = await startCluster({ folder })
+  own = await startOwnCluster()
 }, 60_000)
 
-afterAll(async () => {
-  await cluster.stop()
-  rmSync(folder, { recursive: true, force: true })
-})
+afterAll(() => own.remove())
 
 async function ask<Row extends pg.QueryResultRow>(
   role: Role,
   sql: string,
-  from: Pick<Cluster, 'url'> = cluster,
+  from: Pick<Cluster, 'url'> = own.now,
 ): Promise<Row[]> {
   const client = new pg.Client({ connectionString: from.url(role) })
   await client.connect()
@@ -73,31 +66,31 @@ describe('startCluster', () => {
   })
 
   it('never runs as root', () => {
-    expect(readFileSync(`/proc/${cluster.pid}/status`, 'utf8')).not.toMatch(/^Uid:\s+0/m)
+    expect(readFileSync(`/proc/${own.now.pid}/status`, 'utf8')).not.toMatch(/^Uid:\s+0/m)
   })
 
   it('keeps its passwords from everyone else', () => {
-    expect(statSync(join(folder, 'secrets.json')).mode & 0o777).toBe(0o600)
-    expect(statSync(join(folder, 'data')).mode & 0o777).toBe(0o700)
+    expect(statSync(join(own.folder, 'secrets.json')).mode & 0o777).toBe(0o600)
+    expect(statSync(join(own.folder, 'data')).mode & 0o777).toBe(0o700)
   })
 
   it('can be found by another process of ours', async () => {
-    expect(await ask('app', 'SELECT 1 AS one', attachCluster(folder))).toEqual([{ one: 1 }])
+    expect(await ask('app', 'SELECT 1 AS one', attachCluster(own.folder))).toEqual([{ one: 1 }])
   })
 
   it('keeps what was committed through a crash (P33)', async () => {
     await ask('owner', 'CREATE TABLE kept (id int); INSERT INTO kept VALUES (7)')
-    await cluster.stop('immediate')
+    await own.stop('immediate')
     const startedAt = Date.now()
-    cluster = await startCluster({ folder })
+    await own.start()
     expect(await ask('owner', 'SELECT id FROM kept')).toEqual([{ id: 7 }])
     expect(Date.now() - startedAt).toBeLessThan(30_000)
   })
 
   it('ends with the process that started it, even by kill -9, and the next start works', async () => {
-    await cluster.stop()
+    await own.stop()
     const pid = await startElsewhereAndKill()
-    cluster = await startCluster({ folder })
+    await own.start()
     expect(isAlive(pid)).toBe(false)
     expect(await ask('owner', 'SELECT id FROM kept')).toEqual([{ id: 7 }])
   })
@@ -107,7 +100,7 @@ describe('startCluster', () => {
 async function startElsewhereAndKill(): Promise<number> {
   const program = `
     import { startCluster } from ${JSON.stringify(join(root, 'scripts/lib/cluster.ts'))}
-    const cluster = await startCluster({ folder: ${JSON.stringify(folder)} })
+    const cluster = await startCluster({ folder: ${JSON.stringify(own.folder)} })
     console.log(cluster.pid)`
   const starter = spawn('node', ['--import', 'tsx', '--input-type=module', '--eval', program], { cwd: root })
   const [line] = (await once(createInterface({ input: starter.stdout }), 'line')) as [string]
