@@ -56,6 +56,9 @@ export interface HeatSlopeFit extends HeatFitBasis {
 
 export type HeatFit = HeatCurveFit | HeatSlopeFit
 
+/** A rise below this over the whole log is rounding of binary fractions, K. */
+const ROUNDING_K = 1e-9
+
 /** `E_TOO_FEW`, `E_TIME_ORDER`, `E_RANGE`, `E_NO_RISE`; `W_EXTRAPOLATED`, `W_SURFACE_LAG`. */
 export function fitHeatLog(log: HeatLog): Outcome<HeatFit> {
   const bad = checkHeatLog(log)
@@ -64,7 +67,7 @@ export function fitHeatLog(log: HeatLog): Outcome<HeatFit> {
   const fit = fitRise(data, log.thermometerStepK ?? DEFAULT_THERMOMETER_STEP_K)
   const basis = basisOf(log, data)
   const slopeKPerS = Math.max(riseModel(data).line.slopeKPerS, (basis.lastC - basis.firstC) / basis.spanS)
-  if ((fit && fit.riseK <= 0) || slopeKPerS <= 0)
+  if ((fit && fit.riseK <= 0) || slopeKPerS * basis.spanS < ROUNDING_K)
     return failure('E_NO_RISE', 'The temperature did not rise: check the probe, the power and the ambient.', {
       field: 'readings',
     })

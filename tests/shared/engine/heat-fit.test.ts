@@ -79,6 +79,7 @@ describe('fitHeatLog', () => {
       [18.5, 18.6, 18.7, 18.8, 18.9, 19],
     ])
       expect(fitHeatLog(logOf(20, 60, temperatures))).toMatchObject({ code: 'E_NO_RISE', field: 'readings' })
+    expect(fitHeatLog(logOf(-5e-323, 60, [0, 0, 0]))).toMatchObject({ code: 'E_NO_RISE' })
   })
 
   it('does not judge the slope on 30 s', () => {
