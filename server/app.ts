@@ -2,6 +2,7 @@ import { join } from 'node:path'
 import express, { type Express } from 'express'
 import type { AppContext } from './context.ts'
 import { AppError } from './errors.ts'
+import { auditRefusals } from './middleware/audit-refusals.ts'
 import { problemHandler } from './middleware/problem-handler.ts'
 import { requestId } from './middleware/request-id.ts'
 import { requireSameOrigin } from './middleware/require-same-origin.ts'
@@ -40,6 +41,7 @@ export function createApp(ctx: AppContext): Express {
   app.use((req) => {
     throw new AppError('not-found', `Nothing answers at ${req.path.slice(0, 200)}.`)
   })
+  app.use(auditRefusals(ctx))
   app.use(problemHandler(ctx))
   return app
 }
