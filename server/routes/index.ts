@@ -1,5 +1,6 @@
 import type { AppContext } from '../context.ts'
 import { batchRoutes } from './batches.ts'
+import { boardRoutes } from './board.ts'
 import { buildSheetRoutes } from './build-sheets.ts'
 import { consumableRoutes, stockRoutes } from './consumables.ts'
 import type { EndpointRouter } from './endpoint.ts'
@@ -35,6 +36,7 @@ const routes: readonly ((endpoints: EndpointRouter, ctx: AppContext) => void)[] 
   stockRoutes,
   registryRoutes,
   testRoutes,
+  boardRoutes,
   reminderRoutes,
 ]
 
