@@ -27,7 +27,7 @@ export interface BatteryShare {
   readonly capacityFraction: number
   /** Share that may be taken, above 0 to 1. */
   readonly depth: number
-  /** Share there is at the temperature, above 0 to 1, see `capacityFactor`. */
+  /** Share there is at the temperature, above 0 to 1, see `readiness/temperature-factor.ts`. */
   readonly temperatureFactor: number
 }
 
