@@ -58,10 +58,8 @@ describe('temperatureFactor', () => {
   it('answers any temperature without throwing or NaN', () => {
     fc.assert(
       fc.property(fc.anything(), (atC) => {
-        expectNumbersReal([
-          temperatureFactor('agm', atC as number),
-          temperatureFactor('lifepo4', atC as number),
-        ])
+        for (const chemistry of ['agm', 'lifepo4'])
+          expect(temperatureFactor(chemistry, atC as number)).not.toBeNaN()
       }),
     )
   })
