@@ -78,7 +78,8 @@ export function maximumGain({ s11, s22, p }: ReciprocalTwoPort): MaximumGain {
   // |D| above 1 is an active two-port, for which the formula gives no bound.
   const isPassive = k >= 1 - ROUNDING && k < Infinity && magnitude(d) <= 1 + ROUNDING
   if (!isPassive) return { gMax: null, intrinsicLossDb: null }
-  const gMax = 1 / (k + Math.sqrt(Math.max(0, k * k - 1)))
+  const limited = Math.max(1, k)
+  const gMax = 1 / (limited + Math.sqrt(limited * limited - 1))
   return gMax > 0
     ? { gMax, intrinsicLossDb: -10 * Math.log10(gMax) + 0 }
     : { gMax: null, intrinsicLossDb: null }
