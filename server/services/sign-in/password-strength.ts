@@ -1,7 +1,7 @@
 import { COMMON_PARTS } from './common-passwords.ts'
 
 /** With fewer characters than this of one's own, the rest being common, a password is guessed early. */
-const OWN_CHARACTERS = 8
+const OWN_CHARACTERS = 10
 
 /** A name of fewer letters is part of too many honest words. */
 const SHORTEST_NAME = 3
@@ -21,9 +21,10 @@ export type Weakness = 'common' | 'known-name'
  * from those and the names given (the group's, the product's, the member's own). Undefined when neither.
  */
 export function weaknessOf(password: string, names: readonly string[]): Weakness | undefined {
-  if (ownCharacters(password, COMMON_PARTS) < OWN_CHARACTERS) return 'common'
   const known = [...COMMON_PARTS, ...names.flatMap(partsOfName)]
-  return ownCharacters(password, known) < OWN_CHARACTERS ? 'known-name' : undefined
+  const own = ownCharacters(password, known)
+  if (own >= OWN_CHARACTERS) return undefined
+  return own < ownCharacters(password, COMMON_PARTS) ? 'known-name' : 'common'
 }
 
 /** The words of a name, and all of it written as one. */
