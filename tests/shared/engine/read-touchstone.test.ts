@@ -182,11 +182,11 @@ describe('limits', () => {
     }
   })
 
-  it('reads a line of 2 MiB without delay', () => {
+  it('reads a line of 2 MiB within the five seconds an upload may take', () => {
     const line = '1 '.repeat(1_048_000)
     const begun = performance.now()
     expect(readTouchstone(`#\n${line}`)).toMatchObject({ code: 'TS_COLUMNS', line: 2 })
-    expect(performance.now() - begun).toBeLessThan(1500)
+    expect(performance.now() - begun).toBeLessThan(5000)
   })
 
   it('reads 200,000 points in time proportional to their number', () => {

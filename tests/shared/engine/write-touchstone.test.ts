@@ -144,7 +144,7 @@ describe('readTouchstone on any input', () => {
           expect(file.line).toBeGreaterThanOrEqual(1)
         } else expectFinite(file)
       }),
-      { numRuns: 3000 },
+      { numRuns: 1500 },
     )
   })
 
