@@ -1,5 +1,7 @@
-import type { Band } from '../vocabulary.ts'
-import type { BandCapability, Evidence, Reason } from './types.ts'
+import type { Band, Procedure } from '../vocabulary.ts'
+import { reasonForStanding } from './check-reason.ts'
+import type { Standing } from './standing.ts'
+import type { BandCapability, Evidence, ReadinessItem, Reason, Rule } from './types.ts'
 
 /** What one part of the transmit chain says about one band. */
 export interface BandPart {
@@ -9,7 +11,7 @@ export interface BandPart {
   /** Loss that the part adds, dB; null where nobody knows. */
   readonly lossDb: number | null
   readonly tests: readonly Evidence[]
-  /** Reasons with the level that fits a band that fails alone; `bands` raises it where nothing is left. */
+  /** Each with the level that it has where no promised band is left; `bands` lowers it where some are. */
   readonly reasons: readonly Reason[]
 }
 
@@ -33,10 +35,44 @@ export function joinParts(parts: readonly BandPart[]): BandPart {
 
 /** Of several parts that could each do the work (two antennas), the one that says most. */
 export function bestPart(parts: readonly BandPart[]): BandPart | undefined {
-  return [...parts].sort((a, b) => STATES.indexOf(a.state) - STATES.indexOf(b.state) || b.capW - a.capW)[0]
+  return [...parts].sort(
+    (a, b) => STATES.indexOf(a.state) - STATES.indexOf(b.state) || capDifference(a, b),
+  )[0]
+}
+
+function capDifference(a: BandPart, b: BandPart): number {
+  return a.capW === b.capW ? 0 : b.capW - a.capW
+}
+
+/** A part that the kit can go without takes no band out: whatever is wrong with it is a limit. */
+export function asSupporting(part: BandPart): BandPart {
+  return {
+    ...part,
+    state: part.state === 'proven' ? 'proven' : 'limited',
+    reasons: part.reasons.map((reason) => ({ ...reason, level: 'limit' })),
+  }
 }
 
 /** True where an item covers a band, or does not say which bands it covers. */
 export function covers(bands: readonly Band[] | undefined, band: Band): boolean {
   return bands === undefined || bands.length === 0 || bands.includes(band)
+}
+
+interface Check {
+  readonly item: ReadinessItem
+  readonly rule: Rule | undefined
+  readonly procedure: Procedure
+  /** Null: the reason speaks of the item as a whole. */
+  readonly band: Band | null
+}
+
+/** The part that a check makes which did not fail: clear when it is good or nobody asks for it, else not proven. */
+export function standingPart({ item, rule, procedure, band }: Check, standing: Standing): BandPart {
+  const tests = standing.test ? [standing.test] : []
+  if (standing.state === 'good' || !rule) return { ...CLEAR, tests }
+  const subject = { name: item.designation, itemId: item.id, positionId: item.positionId }
+  const level = rule.vital ? 'not-proven' : 'limit'
+  const reason = reasonForStanding(subject, { procedure, band, level }, standing)
+  const state = rule.vital ? 'not-proven' : 'limited'
+  return { ...CLEAR, state, tests, reasons: reason ? [reason] : [] }
 }

@@ -1,6 +1,7 @@
 import type { Band, Procedure } from '../vocabulary.ts'
 import { reasonOf } from './reason.ts'
-import { doubtText, lapsedText, neverText, raisedText, testAction } from './sentences.ts'
+import { testAction } from './actions.ts'
+import { doubtText, lapsedText, neverText, raisedText } from './sentences.ts'
 import type { Standing } from './standing.ts'
 import type { Reason, ReasonLevel } from './types.ts'
 
@@ -39,7 +40,7 @@ function standingText(
 ): string | undefined {
   if (state === 'good' || state === 'failed') return undefined
   if (doubt) return doubtText(name, procedure, doubt, band)
-  if (raised) return raisedText(name, procedure, raised.reason, raised.dueOn)
+  if (raised) return raisedText(name, raised)
   if (state === 'lapsed' && test) return lapsedText(name, test.procedure, test.performedOn, band)
   return neverText(name, procedure, band)
 }

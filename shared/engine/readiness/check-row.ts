@@ -1,15 +1,16 @@
 import { daysBetween, earliestDate, type PlainDate } from '../plain-date.ts'
 import type { Band, Procedure } from '../vocabulary.ts'
+import { countStanding } from './count-standing.ts'
 import { heatStanding, type HeatStanding } from './heat-standing.ts'
 import type { Moment } from './moment.ts'
-import { doubtText, lapsedText, neverText, raisedText } from './sentences.ts'
-import { dueOf, openRaisedChecks, standingOf, type Standing } from './standing.ts'
-import type { CheckState, RaisedCheck, Rule } from './types.ts'
+import { doubtText, heatUnprovenText, lapsedText, neverText, raisedText } from './sentences.ts'
+import { dueOf, hasPassed, openRaisedChecks, standingOf, type Candidate, type Standing } from './standing.ts'
+import type { CheckState, Rule } from './types.ts'
 
 /** One check of one subject on one band, before the bands are put together. */
 export type CheckRow = Pick<
   CheckState,
-  'state' | 'band' | 'finding' | 'testId' | 'testedOn' | 'dueOn' | 'because'
+  'ruleId' | 'state' | 'band' | 'finding' | 'testId' | 'testedOn' | 'dueOn' | 'because'
 >
 
 interface Asked {
@@ -25,81 +26,89 @@ interface Asked {
  * whatever the last result said. Undefined: not asked (a band without a heat test of its own).
  */
 export function checkRow(moment: Moment, asked: Asked): CheckRow | undefined {
-  if (asked.rule.procedure === 'heat-test' && asked.band !== null) return heatRow(moment, asked, asked.band)
-  const standing = standingOf(moment, asked)
-  const row = {
-    band: asked.band,
-    finding: standing.finding?.finding ?? null,
-    testId: standing.test?.id ?? null,
-    testedOn: standing.test?.performedOn ?? null,
-    dueOn: standing.raised?.dueOn ?? standing.dueOn,
-  }
-  return withRaised(moment, asked, { ...row, ...stateOf(moment, asked, standing) })
+  const { rule, band } = asked
+  if (rule.procedure === 'heat-test' && band !== null) return heatRow(moment, asked, band)
+  const standing = rule.procedure === 'count' ? countStanding(moment) : standingOf(moment, asked)
+  return withRaised(moment, asked, { ...shown(asked, standing), ...stateOf(moment, asked, standing) })
 }
 
-function heatRow(moment: Moment, asked: Asked, band: Band): CheckRow | undefined {
-  const heat = heatStanding(moment, asked.subjectId, asked.rule, band)
-  if (heat.state === 'untested') return undefined
-  const newest = 'failed' in heat && heat.failed ? heat.failed : 'by' in heat ? heat.by : heat.failed
-  // The band stands on the pass where there is one; a failure alone is retested from its own day.
-  const dueOn = dueOf('by' in heat ? heat.by.test : newest.test, asked.rule)
-  const row: CheckRow = {
+function shown({ rule, band }: Asked, by: Pick<Standing, 'test' | 'finding'> & { dueOn: PlainDate | null }) {
+  return {
+    ruleId: rule.id,
     band,
-    finding: newest.finding.finding,
-    testId: newest.test.id,
-    testedOn: newest.test.performedOn,
-    dueOn,
-    because: heatText(asked, heat),
-    state: heat.state === 'in-doubt' ? 'in-doubt' : 'failed' in heat && heat.failed ? 'failed' : 'current',
+    finding: by.finding?.finding ?? null,
+    testId: by.test?.id ?? null,
+    testedOn: by.test?.performedOn ?? null,
+    dueOn: by.dueOn,
   }
-  return withRaised(moment, asked, row.state === 'in-doubt' ? row : dated(moment, asked.rule, row))
 }
 
-function heatText(asked: Asked, heat: HeatStanding): string {
-  if (heat.state === 'in-doubt') return doubtText(asked.name, 'heat-test', heat.doubt, asked.band)
-  if (heat.state === 'lapsed')
-    return lapsedText(asked.name, 'heat-test', heat.by.test.performedOn, asked.band)
-  if (heat.state !== 'untested' && 'failed' in heat && heat.failed) return heat.failed.finding.text
-  return ''
-}
+type Said = Pick<CheckRow, 'state' | 'because'>
 
-function stateOf(moment: Moment, asked: Asked, standing: Standing): Pick<CheckRow, 'state' | 'because'> {
+function stateOf(moment: Moment, asked: Asked, standing: Standing): Said {
   const { test, doubt, raised, finding } = standing
-  const procedure = asked.rule.procedure
-  if (doubt) return { state: 'in-doubt', because: doubtText(asked.name, procedure, doubt, asked.band) }
-  if (raised)
-    return { state: 'overdue', because: raisedText(asked.name, procedure, raised.reason, raised.dueOn) }
-  if (!test) return { state: 'never', because: neverText(asked.name, procedure, asked.band) }
-  const state = dateState(moment, asked.rule, standing.dueOn)
-  if (state === 'overdue')
-    return { state, because: lapsedText(asked.name, procedure, test.performedOn, asked.band) }
+  const { name, band, rule } = asked
+  if (doubt) return { state: 'in-doubt', because: doubtText(name, rule.procedure, doubt, band) }
+  if (raised) return { state: 'overdue', because: raisedText(name, raised) }
+  if (!test) return { state: 'never', because: neverText(name, rule.procedure, band) }
+  // The count of a kit on issue stands past its day.
+  const state = standing.state === 'good' ? inDateState(moment, rule, standing.dueOn) : 'overdue'
+  const overdue = standing.state === 'failed' ? hasPassed(moment, standing.dueOn) : state === 'overdue'
+  if (overdue) return { state: 'overdue', because: lapsedText(name, rule.procedure, test.performedOn, band) }
   if (standing.state === 'failed') return { state: 'failed', because: finding!.text }
   return { state, because: '' }
 }
 
-function dated(moment: Moment, rule: Rule, row: CheckRow): CheckRow {
-  const state = dateState(moment, rule, row.dueOn)
-  return state === 'overdue' || row.state === 'current' ? { ...row, state } : row
+function inDateState(moment: Moment, rule: Rule, dueOn: PlainDate | null): 'current' | 'due-soon' {
+  if (dueOn === null) return 'current'
+  const days = daysBetween(moment.today, dueOn)
+  return days >= 0 && days <= rule.warningDays ? 'due-soon' : 'current'
 }
 
-function dateState(moment: Moment, rule: Rule, dueOn: PlainDate | null): 'current' | 'due-soon' | 'overdue' {
-  if (dueOn === null) return 'current'
-  if (moment.passedAt(dueOn) <= moment.at) return 'overdue'
-  return daysBetween(moment.today, dueOn) <= rule.warningDays ? 'due-soon' : 'current'
+function heatRow(moment: Moment, asked: Asked, band: Band): CheckRow | undefined {
+  const heat = heatStanding(moment, asked.subjectId, asked.rule, band)
+  if (heat.state === 'not-asked') return undefined
+  const newest = newestOf(heat)
+  // The band stands on the pass where there is one; a failure alone is retested from its own day.
+  const basis = 'by' in heat && heat.by ? heat.by : newest
+  const dueOn = basis ? dueOf(basis.test, asked.rule) : null
+  const by = { test: newest?.test ?? null, finding: newest?.finding ?? null, dueOn }
+  const row = { ...shown(asked, by), ...heatSaid(moment, { asked, band, dueOn }, heat) }
+  return withRaised(moment, asked, row)
+}
+
+function newestOf(heat: HeatStanding): Candidate | null {
+  if ('failed' in heat && heat.failed) return heat.failed
+  return 'by' in heat ? heat.by : null
+}
+
+function heatSaid(
+  moment: Moment,
+  { asked, band, dueOn }: { asked: Asked; band: Band; dueOn: PlainDate | null },
+  heat: Exclude<HeatStanding, { state: 'not-asked' }>,
+): Said {
+  if (heat.state === 'never' || heat.state === 'in-doubt' || heat.state === 'lapsed') {
+    const state = heat.state === 'lapsed' ? 'overdue' : heat.state
+    return { state, because: heatUnprovenText(asked.name, band, heat) }
+  }
+  const failed = 'failed' in heat ? heat.failed : null
+  if (hasPassed(moment, dueOn)) {
+    const testedOn = failed?.test.performedOn ?? moment.today
+    return { state: 'overdue', because: lapsedText(asked.name, 'heat-test', testedOn, band) }
+  }
+  if (failed) return { state: 'failed', because: failed.finding.text }
+  return { state: inDateState(moment, asked.rule, dueOn), because: '' }
 }
 
 /** What an event asks for comes before what the calendar asks for. */
 function withRaised(moment: Moment, asked: Asked, row: CheckRow): CheckRow {
-  const open = openRaisedChecks(moment, asked.subjectId).filter((check) => asksFor(check, asked))
+  const open = openRaisedChecks(moment, asked.subjectId, asked.band).filter((check) =>
+    asked.procedures.includes(check.procedure),
+  )
   const first = open.sort((a, b) => (a.dueOn < b.dueOn ? -1 : 1))[0]
   if (!first) return row
-  const late = moment.passedAt(first.dueOn) <= moment.at
+  const late = hasPassed(moment, first.dueOn)
   const state = late ? 'overdue' : row.state === 'current' ? 'due-soon' : row.state
-  const because = late ? raisedText(asked.name, first.procedure, first.reason, first.dueOn) : first.reason
+  const because = late ? raisedText(asked.name, first) : first.reason
   return { ...row, state, because, dueOn: earliestDate([first.dueOn, row.dueOn]) ?? null }
-}
-
-function asksFor(check: RaisedCheck, asked: Asked): boolean {
-  const onBand = check.band === null || asked.band === null || check.band === asked.band
-  return onBand && asked.procedures.includes(check.procedure)
 }

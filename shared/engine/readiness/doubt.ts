@@ -24,15 +24,14 @@ export function doubtAbout(moment: Moment, test: Evidence, band: Band | null): D
  * good calibration after a lapse shows that the instrument had stayed right, and restores what was measured meanwhile.
  */
 function calibrationDoubt(moment: Moment, test: Evidence): Doubt | undefined {
+  if (test.instrumentId === null) return undefined
   const instrument = moment.state.instruments.find(({ id }) => id === test.instrumentId)
   if (!instrument) return undefined
-  const calibrations = moment.tests(instrument.id, 'calibration')
-  const after = calibrations.findLast(
-    (one) => one.performedAt > test.performedAt && one.recordedAt <= moment.at,
-  )
+  const known = moment.tests(instrument.id, 'calibration').filter((one) => one.recordedAt <= moment.at)
+  const after = known.findLast((one) => one.performedAt > test.performedAt)
   if (after?.finding === 'fail') return { kind: 'calibration-failed', instrument: instrument.designation }
   if (after) return undefined
-  const before = calibrations.find((one) => one.performedAt <= test.performedAt)
+  const before = known.find((one) => one.performedAt <= test.performedAt)
   if (!before) return undefined
   if (before.finding === 'fail') return { kind: 'calibration-failed', instrument: instrument.designation }
   const policy = policyAt(moment.state, test.performedAt)
@@ -43,28 +42,41 @@ function calibrationDoubt(moment: Moment, test: Evidence): Doubt | undefined {
 }
 
 function recallDoubt(moment: Moment, test: Evidence, band: Band | null): Doubt | undefined {
-  const check = moment.state.raisedChecks.find(
-    (one) =>
-      one.doubtsEarlier &&
-      one.subjectId === test.subjectId &&
-      one.raisedAt <= moment.at &&
-      test.performedAt <= one.raisedAt &&
-      (one.band === null || band === null || one.band === band) &&
-      (DOUBTED_BY_RECALL[one.procedure] ?? [one.procedure]).includes(test.procedure) &&
-      !isAnswered(moment, one),
-  )
-  return check && { kind: 'recall', check }
+  const check = openRecall(moment, test.subjectId, test.procedure, band)
+  return check && test.performedAt <= check.raisedAt ? { kind: 'recall', check } : undefined
 }
 
-/** A raised check is answered by a test of its procedure, on its band, made after it was raised and not in doubt itself. */
-export function isAnswered(moment: Moment, check: RaisedCheck): boolean {
+/** The recall that nobody has answered and that doubts results of this procedure on this band. */
+export function openRecall(
+  moment: Moment,
+  subjectId: string,
+  procedure: Procedure,
+  band: Band | null,
+): RaisedCheck | undefined {
+  return moment.state.raisedChecks.find(
+    (one) =>
+      one.doubtsEarlier &&
+      one.subjectId === subjectId &&
+      one.raisedAt <= moment.at &&
+      (one.band === null || band === null || one.band === band) &&
+      (DOUBTED_BY_RECALL[one.procedure] ?? [one.procedure]).includes(procedure) &&
+      !isAnswered(moment, one, band),
+  )
+}
+
+/**
+ * A raised check is answered by a test of its procedure made after it was raised and not in doubt itself: on its band,
+ * or for a check of all bands on the band asked about.
+ */
+export function isAnswered(moment: Moment, check: RaisedCheck, band: Band | null): boolean {
+  const on = check.band ?? band
   return moment
     .tests(check.subjectId, check.procedure)
     .some(
       (test) =>
         test.performedAt > check.raisedAt &&
         test.recordedAt <= moment.at &&
-        (check.band === null || test.findings.some(({ band }) => band === null || band === check.band)) &&
+        (on === null || test.findings.some((finding) => finding.band === null || finding.band === on)) &&
         calibrationDoubt(moment, test) === undefined,
     )
 }

@@ -1,15 +1,23 @@
-import { isFailure } from '../outcome.ts'
-import { reasonForStanding } from './check-reason.ts'
+import { BATTERIES_ACTION, MEASURE_LOAD_ACTION, replaceAction } from './actions.ts'
+import { standingPart } from './band-part.ts'
+import { countBattery, hoursAt, type CountedBattery } from './counted-battery.ts'
 import type { Moment } from './moment.ts'
-import { reasonOf } from './reason.ts'
+import { reasonAbout, reasonOf } from './reason.ts'
 import { ruleFor } from './rules-in-force.ts'
-import { amountText, replaceAction, SWAP_MINUTES } from './sentences.ts'
+import {
+  HOURS_UNKNOWN,
+  hoursShortText,
+  loadText,
+  NO_ENDURANCE,
+  noRatingText,
+  notCountedText,
+} from './sentences.ts'
 import { itemsOf, type FilledPosition } from './slots.ts'
 import { standingOf } from './standing.ts'
-import { temperatureFactor } from './temperature-factor.ts'
-import type { Evidence, PolicySettings, ReadinessItem, Reason } from './types.ts'
+import type { Evidence, ReadinessItem, Reason } from './types.ts'
 
 export interface Endurance {
+  /** h; null when no battery counts or nobody measured the load. */
   readonly hours: number | null
   readonly usableAh: number | null
   readonly factors: readonly string[]
@@ -17,114 +25,82 @@ export interface Endurance {
   readonly tests: readonly Evidence[]
 }
 
-interface CountedBattery {
-  readonly item: ReadinessItem
-  readonly fraction: number
-  readonly usableAh: number
-  readonly factor: string
-}
-
-/** A new battery may hold more than its rating; the sum takes no more than this (calculation sheet, section 10). */
-const MOST_OF_RATING = 1.1
-const DEFAULT_ENDURANCE_C = 20
-
 /**
  * Hours from the measured capacity of the batteries whose capacity test stands, the usable fraction, the temperature
  * and the kit's measured mean load. A battery below its limit counts for nothing.
  */
 export function judgeEndurance(moment: Moment, filled: readonly FilledPosition[]): Endurance {
-  const batteries = itemsOf(filled, 'battery')
-  const plansBatteries = filled.some(({ position }) => position.category === 'battery')
-  if (!plansBatteries) return { hours: null, usableAh: null, factors: [], reasons: [], tests: [] }
-  const judged = batteries.map((item) => judgeBattery(moment, item))
-  const counted = judged.flatMap(({ counted: one }) => (one ? [one] : []))
-  const usableAh = counted.reduce((sum, battery) => sum + battery.usableAh, 0)
-  const loadA = itemsOf(filled, 'radio')[0]?.facts.meanLoadA
-  const hours = counted.length > 0 && loadA ? usableAh / loadA : null
+  const batteries = filled.filter(({ position }) => position.category === 'battery')
+  if (batteries.length === 0) return { hours: null, usableAh: null, factors: [], reasons: [], tests: [] }
+  const judged = batteries.flatMap(({ position, working }) =>
+    working.map((item) => judgeBattery(moment, item, position.vital)),
+  )
+  const counted = judged.flatMap(({ counted: one }) => one ?? [])
+  const loadA = meanLoadA(filled)
+  const hours = counted.length > 0 && loadA !== null ? hoursAt(counted, loadA) : null
   return {
     hours,
-    usableAh: counted.length > 0 ? usableAh : null,
-    factors: [...counted.map(({ factor }) => factor), ...(loadA ? [`mean load ${amountText(loadA)} A`] : [])],
-    reasons: [...judged.flatMap(({ reasons }) => reasons), ...hoursReasons(moment, counted.length, hours)],
+    usableAh: counted.length > 0 ? counted.reduce((sum, battery) => sum + battery.usableAh, 0) : null,
+    factors: [...counted.map(({ factor }) => factor), ...(loadA === null ? [] : [loadText(loadA)])],
+    reasons: [
+      ...judged.flatMap(({ reasons }) => reasons),
+      ...hoursReasons(moment.state.promise.hours, counted, hours),
+    ],
     tests: judged.flatMap(({ tests }) => tests),
   }
 }
 
+/** What the whole station draws, A, written down with its radio; the larger where two say so. */
+function meanLoadA(filled: readonly FilledPosition[]): number | null {
+  const loads = itemsOf(filled, 'radio').flatMap(({ facts }) => facts.meanLoadA ?? [])
+  const loadA = Math.max(0, ...loads)
+  return loadA > 0 ? loadA : null
+}
+
 interface JudgedBattery {
-  readonly counted: CountedBattery | null
+  readonly counted: CountedBattery | undefined
   readonly reasons: readonly Reason[]
   readonly tests: readonly Evidence[]
 }
 
-function judgeBattery(moment: Moment, item: ReadinessItem): JudgedBattery {
+function judgeBattery(moment: Moment, item: ReadinessItem, vitalPosition: boolean): JudgedBattery {
   const rule = ruleFor(moment.policy, item, 'battery-capacity', moment.today)
-  const asked = { subjectId: item.id, procedures: ['battery-capacity'] as const, rule, band: null }
+  const asked = { subjectId: item.id, procedures: ['battery-capacity'], rule, band: null } as const
   const standing = standingOf(moment, asked)
-  const tests = standing.test ? [standing.test] : []
   const fraction = standing.finding?.value ?? null
-  if (standing.state === 'good') {
-    const counted = fraction === null ? null : countBattery(item, fraction, moment.policy?.settings ?? {})
-    return { counted, reasons: [], tests }
+  if (standing.state === 'failed') {
+    const text = notCountedText(item.designation, fraction)
+    return uncounted(batteryReason(item, 'battery-not-counted', text, standing.test))
   }
-  if (standing.state === 'failed')
-    return { counted: null, reasons: [failedReason(item, fraction, standing.test!)], tests }
-  const subject = { name: item.designation, itemId: item.id, positionId: item.positionId }
-  const level = rule?.vital ? 'not-proven' : 'limit'
-  const reason =
-    rule && reasonForStanding(subject, { procedure: 'battery-capacity', band: null, level }, standing)
-  return { counted: null, reasons: reason ? [reason] : [], tests: [] }
+  if (standing.state !== 'good') {
+    const weighed = rule && { ...rule, vital: rule.vital && vitalPosition }
+    const check = { item, rule: weighed, procedure: 'battery-capacity', band: null } as const
+    return { counted: undefined, reasons: standingPart(check, standing).reasons, tests: [] }
+  }
+  const counted = countBattery(item, fraction ?? 0, moment.policy?.settings ?? {})
+  if (counted) return { counted, reasons: [], tests: [standing.test!] }
+  return uncounted(batteryReason(item, 'battery-unrated', noRatingText(item.designation), standing.test))
 }
 
-function failedReason(item: ReadinessItem, fraction: number | null, test: Evidence): Reason {
-  const held =
-    fraction === null ? 'failed its capacity test' : `holds ${Math.round(fraction * 100)} % of its rating`
-  return reasonOf({
-    code: 'battery-not-counted',
-    level: 'limit',
-    text: `${item.designation} ${held} and is not counted`,
-    itemId: item.id,
-    positionId: item.positionId,
-    testId: test.id,
-    procedure: 'battery-capacity',
-    action: replaceAction(item.designation),
-  })
+function uncounted(reason: Reason): JudgedBattery {
+  return { counted: undefined, reasons: [reason], tests: [] }
 }
 
-function countBattery(
-  item: ReadinessItem,
-  fraction: number,
-  settings: PolicySettings,
-): CountedBattery | null {
-  const { ratedAh, chemistry = 'agm' } = item.facts
-  if (!ratedAh) return null
-  const usable = settings.usableFraction?.[chemistry] ?? (isLithium(chemistry) ? 0.8 : 0.5)
-  const atC = settings.enduranceC ?? DEFAULT_ENDURANCE_C
-  const cold = settings.temperatureFactor ?? temperatureFactor(chemistry, atC)
-  if (isFailure(cold)) return null
-  const counts = Math.min(fraction, MOST_OF_RATING)
-  const factor =
-    `${item.designation}: ${amountText(ratedAh)} Ah, ${Math.round(fraction * 1000) / 10} % measured, ` +
-    `${Math.round(usable * 100)} % of it usable, ${Math.round(cold * 100)} % at ${atC} °C`
-  return { item, fraction, usableAh: ratedAh * counts * usable * cold, factor }
+function batteryReason(item: ReadinessItem, code: string, text: string, test: Evidence | null): Reason {
+  const shown = { testId: test?.id ?? null, procedure: 'battery-capacity' } as const
+  return reasonAbout(item, { code, level: 'limit', text, ...shown, action: replaceAction(item.designation) })
 }
 
-function isLithium(chemistry: string): boolean {
-  return chemistry === 'lifepo4' || chemistry === 'lithium-ion'
-}
-
-function hoursReasons(moment: Moment, counted: number, hours: number | null): Reason[] {
-  const promised = moment.state.promise.hours
+function hoursReasons(
+  promised: number | null,
+  counted: readonly CountedBattery[],
+  hours: number | null,
+): Reason[] {
   if (promised === null) return []
-  const action = {
-    kind: 'replace',
-    text: 'Fit batteries that passed their capacity test',
-    minutes: SWAP_MINUTES,
-  } as const
-  if (counted === 0) {
-    const text = 'No battery endurance: from mains or a vehicle only'
-    return [reasonOf({ code: 'no-battery-endurance', level: 'limit', text, action })]
-  }
-  if (hours === null || hours >= promised) return []
-  const text = `${amountText(hours)} h from its batteries instead of the ${amountText(promised)} h promised`
-  return [reasonOf({ code: 'hours-short', level: 'limit', text, action })]
+  const limit = { level: 'limit', action: BATTERIES_ACTION } as const
+  if (counted.length === 0) return [reasonOf({ code: 'no-battery-endurance', text: NO_ENDURANCE, ...limit })]
+  if (hours === null)
+    return [reasonOf({ code: 'hours-unknown', text: HOURS_UNKNOWN, ...limit, action: MEASURE_LOAD_ACTION })]
+  if (hours >= promised) return []
+  return [reasonOf({ code: 'hours-short', text: hoursShortText(hours, promised), ...limit })]
 }

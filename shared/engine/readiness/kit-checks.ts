@@ -1,60 +1,94 @@
+import { testAction } from './actions.ts'
 import { reasonForStanding } from './check-reason.ts'
+import { countRule, countStanding, WHOLE_KIT } from './count-standing.ts'
 import type { Moment } from './moment.ts'
 import { reasonOf } from './reason.ts'
-import { ruleFor } from './rules-in-force.ts'
-import { dayText, testAction } from './sentences.ts'
+import { ruleFor, rulesFor } from './rules-in-force.ts'
+import { failedCheckText, sealText, shortCountText } from './sentences.ts'
 import type { FilledPosition } from './slots.ts'
 import { standingOf, type Standing } from './standing.ts'
-import type { Reason } from './types.ts'
+import type { Evidence, Reason, Rule } from './types.ts'
 import type { JudgedChecks } from './whole-checks.ts'
 
-/** The seal and the count. */
+/** The seal, the count, and whatever else the policy asks of the kit as a whole. */
 export function judgeKit(moment: Moment, filled: readonly FilledPosition[]): JudgedChecks {
-  const { kit } = moment.state
-  const rule = ruleFor(moment.policy, { category: 'kit', facts: {} }, 'count', moment.today)
-  const standing = standingOf(moment, { subjectId: kit.id, procedures: ['count'], rule, band: null })
-  const reasons = kit.sealMatches ? [] : [sealReason(kit.designation)]
-  if (standing.state === 'failed')
-    return { reasons: [...reasons, ...countReasons(moment, filled, standing)], tests: [] }
-  const subject = { name: kit.designation, itemId: null, positionId: null }
-  const level = rule?.vital ? 'not-proven' : 'limit'
-  const reason = rule && reasonForStanding(subject, { procedure: 'count', band: null, level }, standing)
-  const tests = standing.state === 'good' && rule?.vital ? [standing.test!] : []
-  return { reasons: reason ? [...reasons, reason] : reasons, tests }
+  const rules = new Map(
+    rulesFor(moment.policy, WHOLE_KIT, moment.today).map((rule) => [rule.procedure, rule]),
+  )
+  const others = [...rules.keys()].filter((procedure) => procedure !== 'count')
+  const judged = others.map((procedure) => {
+    const rule = ruleFor(moment.policy, WHOLE_KIT, procedure, moment.today)!
+    const asked = { subjectId: moment.state.kit.id, procedures: [procedure], rule, band: null }
+    return judgeWhole(moment, rule, standingOf(moment, asked))
+  })
+  const all = [judgeCount(moment, filled), ...judged]
+  return {
+    reasons: [...sealReasons(moment), ...all.flatMap(({ reasons }) => reasons)],
+    tests: all.flatMap(({ tests }) => tests),
+  }
 }
 
-function sealReason(designation: string): Reason {
-  return reasonOf({
-    code: 'seal-unmatched',
-    level: 'not-proven',
-    text: `The seal of ${designation} is broken or not the one on record`,
-    procedure: 'count',
-    action: testAction(designation, 'count', null),
-  })
+function sealReasons({ state: { kit } }: Moment): Reason[] {
+  if (kit.sealMatches) return []
+  return [
+    reasonOf({
+      code: 'seal-unmatched',
+      level: 'not-proven',
+      text: sealText(kit.designation),
+      procedure: 'count',
+      action: testAction(kit.designation, 'count', null),
+    }),
+  ]
+}
+
+function judgeCount(moment: Moment, filled: readonly FilledPosition[]): JudgedChecks {
+  const standing = countStanding(moment)
+  const rule = countRule(moment)
+  const short = standing.test ? shortReasons(moment, filled, standing.test) : []
+  if (!rule || standing.state === 'failed') return { reasons: short, tests: [] }
+  const whole = judgeWhole(moment, rule, standing)
+  return { ...whole, reasons: [...short, ...whole.reasons] }
+}
+
+function judgeWhole({ state: { kit } }: Moment, rule: Rule, standing: Standing): JudgedChecks {
+  const { procedure, vital } = rule
+  const tests = vital && standing.state === 'good' && standing.test ? [standing.test] : []
+  if (standing.state === 'failed') {
+    const text = failedCheckText(kit.designation, procedure, standing.finding!)
+    const action = testAction(kit.designation, procedure, null)
+    const level = vital ? 'not-fit' : 'limit'
+    const testId = standing.test!.id
+    return {
+      reasons: [reasonOf({ code: `${procedure}-failed`, level, text, testId, procedure, action })],
+      tests,
+    }
+  }
+  const subject = { name: kit.designation, itemId: null, positionId: null }
+  const level = vital ? 'not-proven' : 'limit'
+  const reason = reasonForStanding(subject, { procedure, band: null, level }, standing)
+  return { reasons: reason ? [reason] : [], tests }
 }
 
 /**
- * What a count found missing. A position that is still short says so itself; one that was filled since needs another
- * count before the kit is proven again.
+ * What a count found short. A position that the record too knows to be short says so itself; one that was filled since
+ * needs another count; one that the record calls full is as short as it was found.
  */
-function countReasons(moment: Moment, filled: readonly FilledPosition[], { test }: Standing): Reason[] {
-  const { designation } = moment.state.kit
-  const failed = test!.findings.filter(({ finding }) => finding === 'fail')
-  const refilled = failed.flatMap(({ positionId }) =>
-    filled.filter(({ position }) => position.id === positionId),
+function shortReasons(moment: Moment, filled: readonly FilledPosition[], count: Evidence): Reason[] {
+  const short = filled.filter(
+    ({ position, working }) =>
+      working.length >= position.quantity &&
+      count.findings.some(({ positionId, finding }) => positionId === position.id && finding === 'fail'),
   )
-  const open = refilled.filter(({ position, working }) => working.length >= position.quantity)
-  if (open.length === 0 && refilled.length === failed.length) return []
-  const vital = open.some(({ position }) => position.vital) || refilled.length < failed.length
-  const names = open.map(({ position }) => position.name).join(', ')
-  return [
-    reasonOf({
-      code: 'count-again',
-      level: vital ? 'not-proven' : 'limit',
-      text: `The count of ${dayText(test!.performedOn)} found parts missing${names ? ` (${names})` : ''}: count again`,
-      testId: test!.id,
+  return short.map(({ position, items }) => {
+    const refilled = items.some(({ placedAt }) => (placedAt ?? -Infinity) > count.performedAt)
+    return reasonOf({
+      code: 'count-short',
+      level: !position.vital ? 'limit' : refilled ? 'not-proven' : 'not-fit',
+      text: shortCountText(count.performedOn, position.name, refilled),
+      positionId: position.id,
+      testId: count.id,
       procedure: 'count',
-      action: testAction(designation, 'count', null),
-    }),
-  ]
+      action: testAction(moment.state.kit.designation, 'count', null),
+    })
+  })
 }

@@ -1,13 +1,13 @@
 import type { Band } from '../vocabulary.ts'
-import { CLEAR, joinParts, type BandPart } from './band-part.ts'
+import { replaceAction } from './actions.ts'
+import { CLEAR, joinParts, standingPart, type BandPart } from './band-part.ts'
 import type { Moment } from './moment.ts'
-import { reasonOf } from './reason.ts'
+import { reasonAbout } from './reason.ts'
 import { ruleFor } from './rules-in-force.ts'
-import { amountText, replaceAction } from './sentences.ts'
-import { standingOf, type Standing } from './standing.ts'
+import { lineLossText } from './sentences.ts'
+import type { Standing } from './standing.ts'
 import type { ReadinessItem } from './types.ts'
-
-const LOSS = ['feedline-loss'] as const
+import { standingOnBand } from './whole-or-band.ts'
 
 /**
  * Loss between radio and antenna other than the transformer's. What was entered for the kit holds the antenna's SWR
@@ -19,30 +19,34 @@ export function linePart(moment: Moment, lines: readonly ReadinessItem[], band: 
 
 function oneLine(moment: Moment, line: ReadinessItem, band: Band): BandPart {
   const entered = line.facts.lossDb?.[band] ?? null
+  const rule = ruleFor(moment.policy, line, 'feedline-loss', moment.today, band)
+  const check = { item: line, procedure: 'feedline-loss', rule, band, failsEverywhere: true } as const
+  const standing = standingOnBand(moment, check)
+  const measured = standing.finding?.measure === 'lossDb' ? standing.finding.value : null
+  if (standing.state === 'failed') return failedLine(line, band, standing, worse(entered, measured))
+  const part = standingPart({ item: line, rule, procedure: 'feedline-loss', band: null }, standing)
   // Only a feedline must say its loss; a jumper or filter without a figure is taken as lossless, as its kit's figure
   // from radio to antenna includes it.
-  if (line.category !== 'feedline') return { ...CLEAR, lossDb: entered ?? 0 }
-  const rule = ruleFor(moment.policy, line, 'feedline-loss', moment.today)
-  const standing = standingOf(moment, { subjectId: line.id, procedures: LOSS, rule, band: null })
-  const measured = standing.finding?.measure === 'lossDb' ? standing.finding.value : null
-  if (standing.state !== 'failed') return { ...CLEAR, lossDb: entered ?? measured }
-  return failedLine(line, standing, worse(entered, measured))
+  const known = entered ?? measured ?? (line.category === 'feedline' ? null : 0)
+  return { ...part, lossDb: known }
 }
 
-function failedLine(line: ReadinessItem, standing: Standing, lossDb: number | null): BandPart {
-  const loss = standing.finding?.value ?? null
-  const figure = loss === null ? standing.finding!.text : `loses ${amountText(loss)} dB`
-  const reason = reasonOf({
+function failedLine(
+  line: ReadinessItem,
+  band: Band,
+  { test, finding }: Standing,
+  lossDb: number | null,
+): BandPart {
+  const reason = reasonAbout(line, {
     code: 'feedline-failed',
     level: 'limit',
-    text: `${line.designation} ${figure}: less power reaches the antenna`,
-    itemId: line.id,
-    positionId: line.positionId,
-    testId: standing.test!.id,
+    text: lineLossText(line.designation, band, finding!),
+    band,
+    testId: test!.id,
     procedure: 'feedline-loss',
     action: replaceAction(line.designation),
   })
-  return { ...CLEAR, state: 'limited', lossDb, reasons: [reason] }
+  return { ...CLEAR, state: 'limited', lossDb, tests: [test!], reasons: [reason] }
 }
 
 function worse(a: number | null, b: number | null): number | null {

@@ -13,6 +13,8 @@ export interface Dossier {
   tests(subjectId: string, procedure: Procedure): readonly Evidence[]
   /** The instant at which a due day has passed: the next local midnight. */
   passedAt(due: PlainDate): EpochMs
+  /** The local day of an instant. */
+  dayOf(at: EpochMs): PlainDate
 }
 
 /** One instant at which a kit is judged. */
@@ -29,6 +31,7 @@ export function dossierOf(state: KitState): Dossier {
   return {
     state,
     tests: (subjectId, procedure) => bySubject.get(`${subjectId} ${procedure}`) ?? [],
+    dayOf: (at) => certain(localDateOf(at, state.zone)),
     passedAt: (due) => {
       const known = ends.get(due)
       if (known !== undefined) return known

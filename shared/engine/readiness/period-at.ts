@@ -1,10 +1,12 @@
 import { VERDICTS, type Verdict } from '../vocabulary.ts'
+import { SETTLE_ACTION } from './actions.ts'
 import { judgeBands } from './bands.ts'
 import { judgeEndurance } from './endurance.ts'
 import { judgeKit } from './kit-checks.ts'
 import { judgeModes } from './modes.ts'
 import type { Moment } from './moment.ts'
 import { reasonOf, sortReasons } from './reason.ts'
+import { decisionText } from './sentences.ts'
 import { fillPositions, positionReasons } from './slots.ts'
 import type { Decision, Evidence, Period, Reason } from './types.ts'
 import { judgeItems } from './whole-checks.ts'
@@ -14,7 +16,7 @@ export type Judgement = Omit<Period, 'from' | 'to'>
 /** The verdict at one instant with everything it rests on (design 4.3). */
 export function judgementAt(moment: Moment): Judgement {
   const { state } = moment
-  const filled = fillPositions(state)
+  const filled = fillPositions(moment)
   const bands = judgeBands(moment, filled)
   const endurance = judgeEndurance(moment, filled)
   const modes = judgeModes(moment, filled)
@@ -31,7 +33,7 @@ export function judgementAt(moment: Moment): Judgement {
   const decisions = state.decisions.filter(
     (one) => one.from <= moment.at && (one.until === null || moment.at < one.until),
   )
-  const reasons = sortReasons([...found.flat(), ...decisions.map(decisionReason)])
+  const reasons = sortReasons([...found.flat(), ...decisions.map((one) => decisionReason(moment, one))])
   return {
     verdict: verdictOf(reasons),
     availability: state.kit.availability,
@@ -59,26 +61,20 @@ function verdictOf(reasons: readonly Reason[]): Verdict {
   return VERDICTS[Math.max(0, ...ranks)]!
 }
 
-/** A person may lower a verdict, never raise one; an accepted risk is shown and changes nothing. */
-function decisionReason(decision: Decision): Reason {
-  if (decision.kind === 'risk-accepted') {
-    const text = `${decision.by} accepted a risk: ${decision.reason}`
-    return reasonOf({ code: 'risk-accepted', level: 'note', text })
-  }
-  const level =
-    decision.toVerdict === 'not-fit'
-      ? 'not-fit'
-      : decision.toVerdict === 'not-proven'
-        ? 'not-proven'
-        : 'limit'
-  const text = `${decision.by} lowered the verdict: ${decision.reason}`
-  const action = {
-    kind: 'decide',
-    text: 'Settle it with whoever lowered the verdict',
-    minutes: null,
-  } as const
-  return reasonOf({ code: 'lowered', level, text, action })
+/** A person may lower a verdict, never raise one; an accepted risk is shown, with its end, and changes nothing. */
+function decisionReason(moment: Moment, decision: Decision): Reason {
+  const text = decisionText(decision, decision.until === null ? null : moment.dayOf(decision.until))
+  if (decision.kind === 'risk-accepted') return reasonOf({ code: 'risk-accepted', level: 'note', text })
+  const level = LEVEL_OF_VERDICT[decision.toVerdict ?? 'proven-with-limits']
+  return reasonOf({ code: 'lowered', level, text, action: SETTLE_ACTION })
 }
+
+const LEVEL_OF_VERDICT = {
+  'not-fit': 'not-fit',
+  'not-proven': 'not-proven',
+  'proven-with-limits': 'limit',
+  proven: 'limit',
+} as const satisfies Record<Verdict, Reason['level']>
 
 function oldestDay(tests: readonly Evidence[]): string | null {
   return tests.reduce<string | null>(

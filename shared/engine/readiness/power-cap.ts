@@ -1,12 +1,12 @@
-import { reasonOf } from './reason.ts'
-import { amountText, FETCH_MINUTES } from './sentences.ts'
+import { replaceAction, strongerAction } from './actions.ts'
+import { reasonAbout } from './reason.ts'
+import { leadText, ratedBelowText } from './sentences.ts'
 import { itemsOf, type FilledPosition } from './slots.ts'
-import type { KitState, ReadinessItem, Reason } from './types.ts'
+import type { ReadinessItem, Reason } from './types.ts'
 
-/** The radio's output before any loss, and what holds it down. */
+/** A radio's output before any loss, and what holds it down. */
 export interface RadioPower {
-  /** Null: the kit has no radio that works, or nobody entered its watts. */
-  readonly promisedW: number | null
+  /** Null: nobody promised or entered watts. */
   readonly allowedW: number | null
   readonly reasons: readonly Reason[]
 }
@@ -15,50 +15,55 @@ export interface RadioPower {
  * The kind's promised watts, within the radio's rating, capped by the weakest lead, fuse or box that feeds it: the
  * highest power setting whose current the weakest part carries.
  */
-export function radioPower(state: KitState, filled: readonly FilledPosition[]): RadioPower {
-  const radio = itemsOf(filled, 'radio')[0]
-  if (!radio) return { promisedW: null, allowedW: null, reasons: [] }
-  const promisedW = state.promise.watts ?? radio.facts.ratedWatts ?? null
-  if (promisedW === null) return { promisedW, allowedW: null, reasons: [] }
-  const ratedW = Math.min(promisedW, radio.facts.ratedWatts ?? Infinity)
-  const reasons = ratedW < promisedW ? [ratedBelowPromise(radio, ratedW, promisedW)] : []
-  const weakest = weakestPart(filled)
-  const carriedW = weakest && carriedBy(radio, weakest.facts.ratedA!, ratedW)
-  if (!weakest || carriedW === undefined || carriedW >= ratedW)
-    return { promisedW, allowedW: ratedW, reasons }
-  return { promisedW, allowedW: carriedW, reasons: [...reasons, leadReason(weakest, carriedW)] }
+export function radioPower(
+  promisedW: number | null,
+  radio: ReadinessItem,
+  weakest: ReadinessItem | undefined,
+): RadioPower {
+  const ratedW = radio.facts.ratedWatts
+  const wantedW = promisedW ?? ratedW ?? null
+  if (wantedW === null) return { allowedW: null, reasons: [] }
+  const settingW = Math.min(wantedW, ratedW ?? Infinity)
+  const reasons = settingW < wantedW ? [ratedBelow(radio, settingW, wantedW)] : []
+  const carriedW = weakest ? carriedBy(radio, weakest.facts.ratedA!, settingW) : settingW
+  if (!weakest || carriedW >= settingW) return { allowedW: settingW, reasons }
+  return { allowedW: carriedW, reasons: [...reasons, tooWeak(weakest, carriedW)] }
 }
 
-function weakestPart(filled: readonly FilledPosition[]): ReadinessItem | undefined {
+/** The lead or box with the lowest rating on record. */
+export function weakestFeed(filled: readonly FilledPosition[]): ReadinessItem | undefined {
   return itemsOf(filled, 'dc-lead', 'distribution-box')
     .filter(({ facts }) => facts.ratedA !== undefined)
     .sort((a, b) => a.facts.ratedA! - b.facts.ratedA!)[0]
 }
 
-/** Undefined: the radio's currents are not on record, so nothing can be said. */
-function carriedBy(radio: ReadinessItem, ratedA: number, ratedW: number): number | undefined {
-  const settings = (radio.facts.drawA ?? []).filter(({ watts }) => watts <= ratedW)
-  if (settings.length === 0) return undefined
-  return Math.max(0, ...settings.filter(({ amps }) => amps <= ratedA).map(({ watts }) => watts))
+/**
+ * Watts at which the radio draws no more than the rating. Currents are on record for some settings only: a power in
+ * between is taken to draw what the next setting above it does, and one above all of them is not known to be too much.
+ */
+function carriedBy(radio: ReadinessItem, ratedA: number, settingW: number): number {
+  const settings = [...(radio.facts.drawA ?? [])].sort((a, b) => a.watts - b.watts)
+  const top = settings.findIndex(({ watts }) => watts >= settingW)
+  const within = top === -1 ? settings : settings.slice(0, top + 1)
+  const tooMuch = within.findIndex(({ amps }) => amps > ratedA)
+  if (tooMuch === -1) return settingW
+  return within[tooMuch - 1]?.watts ?? 0
 }
 
-function leadReason(part: ReadinessItem, watts: number): Reason {
-  return reasonOf({
+function tooWeak(part: ReadinessItem, watts: number): Reason {
+  return reasonAbout(part, {
     code: 'lead-rated-low',
     level: watts > 0 ? 'limit' : 'not-fit',
-    text: `${amountText(watts)} W at most: ${part.designation} carries ${amountText(part.facts.ratedA!)} A`,
-    positionId: part.positionId,
-    itemId: part.id,
-    action: { kind: 'buy', text: `Fit a stronger part than ${part.designation}`, minutes: FETCH_MINUTES },
+    text: leadText(part.designation, watts, part.facts.ratedA!),
+    action: strongerAction(part.designation),
   })
 }
 
-function ratedBelowPromise(radio: ReadinessItem, ratedW: number, promisedW: number): Reason {
-  return reasonOf({
+function ratedBelow(radio: ReadinessItem, ratedW: number, wantedW: number): Reason {
+  return reasonAbout(radio, {
     code: 'radio-rated-low',
     level: 'limit',
-    text: `${amountText(ratedW)} W at most: ${radio.designation} is rated below the ${amountText(promisedW)} W promised`,
-    positionId: radio.positionId,
-    itemId: radio.id,
+    text: ratedBelowText(radio.designation, ratedW, wantedW),
+    action: replaceAction(radio.designation),
   })
 }

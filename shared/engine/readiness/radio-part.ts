@@ -1,53 +1,69 @@
 import type { Band } from '../vocabulary.ts'
-import { CLEAR, covers, type BandPart } from './band-part.ts'
+import { replaceAction } from './actions.ts'
+import { bestPart, CLEAR, covers, joinParts, standingPart, type BandPart } from './band-part.ts'
 import type { Moment } from './moment.ts'
-import type { RadioPower } from './power-cap.ts'
-import { reasonOf } from './reason.ts'
+import { radioPower } from './power-cap.ts'
+import { reasonAbout } from './reason.ts'
 import { ruleFor } from './rules-in-force.ts'
-import { amountText, replaceAction } from './sentences.ts'
-import { standingOf } from './standing.ts'
-import type { ReadinessItem } from './types.ts'
+import { notCoveredText, outText, radioLowText } from './sentences.ts'
+import type { Standing } from './standing.ts'
+import type { ReadinessItem, Reason } from './types.ts'
+import { standingOnBand } from './whole-or-band.ts'
 
-const CHECK = ['radio-check'] as const
+interface Station {
+  readonly radios: readonly ReadinessItem[]
+  /** The weakest lead or box between battery and radio. */
+  readonly feed: ReadinessItem | undefined
+}
 
-/** What the radio puts out on a band: the power allowed, or the measured one where its check failed. */
-export function radioPart(
+/** The best of the kit's radios on a band: the power allowed, or the measured one where its check failed. */
+export function radioPart(moment: Moment, { radios, feed }: Station, band: Band): BandPart {
+  return bestPart(radios.map((radio) => oneRadio(moment, radio, feed, band))) ?? CLEAR
+}
+
+function oneRadio(
   moment: Moment,
-  radio: ReadinessItem | undefined,
-  power: RadioPower,
+  radio: ReadinessItem,
+  feed: ReadinessItem | undefined,
   band: Band,
 ): BandPart {
-  if (!radio) return CLEAR
-  if (!covers(radio.facts.bands, band))
-    return outPart(radio, band, `${band} out: ${radio.designation} does not cover it`)
-  const lowered = power.promisedW !== null && power.allowedW !== null && power.allowedW < power.promisedW
-  const base: BandPart = { ...CLEAR, state: lowered ? 'limited' : 'proven', capW: power.allowedW ?? Infinity }
-  const rule = ruleFor(moment.policy, radio, 'radio-check', moment.today)
-  const standing = standingOf(moment, { subjectId: radio.id, procedures: CHECK, rule, band })
-  const { finding, test } = standing
-  if (standing.state !== 'failed' || finding?.measure !== 'watts') return base
-  const measuredW = finding.value ?? 0
-  if (measuredW <= 0)
-    return outPart(radio, band, `${band} out: ${radio.designation} gives no power`, test!.id)
-  const text = `${band}: ${radio.designation} gives ${amountText(measuredW)} W`
-  const reason = reasonFor(radio, band, 'radio-power-low', text, test!.id)
-  return { ...base, state: 'limited', capW: Math.min(base.capW, measuredW), reasons: [reason] }
+  if (!covers(radio.facts.bands, band)) {
+    const text = notCoveredText(band, radio.designation)
+    return outPart(failure(radio, band, { code: 'radio-not-covering', text }))
+  }
+  const { allowedW, reasons } = radioPower(moment.state.promise.watts, radio, feed)
+  const state = allowedW === 0 ? 'out' : reasons.length > 0 ? 'limited' : 'proven'
+  const fed: BandPart = { ...CLEAR, state, capW: allowedW ?? Infinity, reasons }
+  return joinParts([fed, checkedPart(moment, radio, band)])
 }
 
-function outPart(radio: ReadinessItem, band: Band, text: string, testId: string | null = null): BandPart {
-  return { ...CLEAR, state: 'out', reasons: [reasonFor(radio, band, 'radio-out', text, testId)] }
+function checkedPart(moment: Moment, radio: ReadinessItem, band: Band): BandPart {
+  const rule = ruleFor(moment.policy, radio, 'radio-check', moment.today, band)
+  const check = { item: radio, procedure: 'radio-check', rule, band, failsEverywhere: false } as const
+  const standing = standingOnBand(moment, check)
+  if (standing.state !== 'failed')
+    return standingPart({ item: radio, rule, procedure: 'radio-check', band: null }, standing)
+  return failedCheck(radio, band, standing)
 }
 
-function reasonFor(radio: ReadinessItem, band: Band, code: string, text: string, testId: string | null) {
-  return reasonOf({
-    code,
-    level: 'limit',
-    text,
-    band,
-    itemId: radio.id,
-    positionId: radio.positionId,
-    testId,
-    procedure: testId ? 'radio-check' : null,
-    action: replaceAction(radio.designation),
-  })
+/** Less power than asked for is a limit; no power, or a radio that does not receive, takes the band out. */
+function failedCheck(radio: ReadinessItem, band: Band, { test, finding }: Standing): BandPart {
+  const measuredW = finding!.measure === 'watts' ? (finding!.value ?? 0) : 0
+  const shown = { testId: test!.id, procedure: 'radio-check' } as const
+  if (measuredW <= 0) {
+    const text = outText(band, radio.designation, finding!.text)
+    return { ...outPart(failure(radio, band, { code: 'radio-out', text, ...shown })), tests: [test!] }
+  }
+  const text = radioLowText(radio.designation, band, measuredW)
+  const reason = failure(radio, band, { code: 'radio-power-low', level: 'limit', text, ...shown })
+  return { ...CLEAR, state: 'limited', capW: measuredW, tests: [test!], reasons: [reason] }
+}
+
+function outPart(reason: Reason): BandPart {
+  return { ...CLEAR, state: 'out', reasons: [reason] }
+}
+
+function failure(radio: ReadinessItem, band: Band, said: Partial<Reason> & Pick<Reason, 'code' | 'text'>) {
+  const action = replaceAction(radio.designation)
+  return reasonAbout(radio, { level: 'not-fit', band, action, ...said })
 }

@@ -1,7 +1,9 @@
+import type { BatteryShare } from '../battery-energy.ts'
 import type { PlainDate } from '../plain-date.ts'
 import type { Band, Procedure } from '../vocabulary.ts'
 import type { Doubt } from './doubt.ts'
-import type { Action } from './types.ts'
+import type { HeatStanding } from './heat-standing.ts'
+import type { BandCapability, Decision, Position, RaisedCheck, ReadinessItem, TestFinding } from './types.ts'
 
 /** Every sentence of a verdict, in one place: plain enough to be read out to a served agency. */
 
@@ -13,9 +15,14 @@ export function dayText(day: PlainDate): string {
   return `${date} ${MONTHS[(month ?? 1) - 1]} ${year}`
 }
 
-/** At most three digits that mean something: 84.8 is "85", 12.03 "12", 4.12 "4.1". */
+/** No more digits than mean something: 84.8 is "85", 12.03 "12", 4.12 "4.1". */
 export function amountText(value: number): string {
   return value >= 10 ? String(Math.round(value)) : String(Math.round(value * 10) / 10)
+}
+
+/** A figure that misses its limit must not be rounded onto it: 79.96 % is "79.9 %", 15.97 h "15.9". */
+function shortText(value: number): string {
+  return String(Math.floor(value * 10 + 1e-6) / 10)
 }
 
 export const PROCEDURE_WORDS: Readonly<Record<Procedure, string>> = {
@@ -33,23 +40,15 @@ export const PROCEDURE_WORDS: Readonly<Record<Procedure, string>> = {
   'on-air-check': 'on-air check',
 }
 
-/** Attended minutes; a capacity run is unattended after its first ten (common practice, no source). */
-export const MINUTES: Readonly<Record<Procedure, number>> = {
-  'heat-test': 60,
-  'pair-loss': 20,
-  'open-short-load': 20,
-  'antenna-sweep': 15,
-  'feedline-loss': 15,
-  'battery-capacity': 10,
-  'radio-check': 15,
-  inspection: 10,
-  count: 30,
-  calibration: 60,
-  'boot-and-update': 60,
-  'on-air-check': 15,
+export function onBand(band: Band | null): string {
+  return band ? ` on ${band}` : ''
 }
-export const SWAP_MINUTES = 15
-export const FETCH_MINUTES = 120
+
+export function capital(text: string): string {
+  return text.charAt(0).toUpperCase() + text.slice(1)
+}
+
+// Checks that did not come, or do not count.
 
 export function lapsedText(
   name: string,
@@ -64,8 +63,8 @@ export function neverText(name: string, procedure: Procedure, band: Band | null)
   return `${name}: no ${PROCEDURE_WORDS[procedure]}${onBand(band)} on record`
 }
 
-export function raisedText(name: string, procedure: Procedure, reason: string, dueOn: PlainDate): string {
-  return `${name}: ${PROCEDURE_WORDS[procedure]} asked for by ${dayText(dueOn)} (${reason}) has not come`
+export function raisedText(name: string, { procedure, band, reason, dueOn }: RaisedCheck): string {
+  return `${name}: ${PROCEDURE_WORDS[procedure]}${onBand(band)} asked for by ${dayText(dueOn)} (${reason}) has not come`
 }
 
 export function doubtText(name: string, procedure: Procedure, doubt: Doubt, band: Band | null): string {
@@ -75,30 +74,139 @@ export function doubtText(name: string, procedure: Procedure, doubt: Doubt, band
   return `${what}, the calibration of ${doubt.instrument} ${how}`
 }
 
-/** What lifts a missing, lapsed or doubted check. */
-export function testAction(name: string, procedure: Procedure, band: Band | null): Action {
-  const kind = procedure === 'count' ? 'count' : procedure === 'calibration' ? 'calibrate' : 'test'
-  const text =
-    procedure === 'count'
-      ? `Count ${name}`
-      : `${capital(PROCEDURE_WORDS[procedure])} of ${name}${onBand(band)}`
-  return { kind, text, minutes: MINUTES[procedure] }
+export function failedCheckText(name: string, procedure: Procedure, finding: TestFinding): string {
+  return `${name}: ${PROCEDURE_WORDS[procedure]} failed, ${finding.text}`
 }
 
-export function replaceAction(name: string): Action {
-  return { kind: 'replace', text: `Replace ${name}`, minutes: SWAP_MINUTES }
+// Bands.
+
+export function outText(band: Band, name: string, why: string): string {
+  return `${band} out: ${name}, ${why}`
 }
 
-export function onBand(band: Band | null): string {
-  return band ? ` on ${band}` : ''
+export function notCoveredText(band: Band, name: string): string {
+  return `${band} out: ${name} does not cover it`
 }
 
-export function capital(text: string): string {
-  return text.charAt(0).toUpperCase() + text.slice(1)
+export function cappedText(name: string, band: Band, capW: number, failed: TestFinding | null): string {
+  const why = failed ? `${name} ${failed.text}` : `${name} is heat tested to that power only`
+  return `${band}: ${amountText(capW)} W at most, ${why}`
 }
 
-/** "10 m, 15 m and 20 m". */
-export function listText(words: readonly string[]): string {
-  if (words.length < 2) return words.join('')
-  return `${words.slice(0, -1).join(', ')} and ${words.at(-1)}`
+export function heatUnprovenText(
+  name: string,
+  band: Band,
+  standing: HeatStanding & { state: 'never' | 'lapsed' | 'in-doubt' },
+): string {
+  if (standing.state === 'never') return neverText(name, 'heat-test', band)
+  if (standing.state === 'in-doubt') return doubtText(name, 'heat-test', standing.doubt, band)
+  if (standing.raised) return raisedText(name, standing.raised)
+  return lapsedText(name, 'heat-test', standing.by.test.performedOn, band)
+}
+
+export function efficiencyText(name: string, band: Band, efficiency: number | null): string {
+  const share = efficiency === null ? 'too little' : `${shortText(efficiency * 100)} %`
+  return `${band}: ${name} passes on ${share} of the power`
+}
+
+export function lineLossText(name: string, band: Band, { value, text }: TestFinding): string {
+  return `${band}: ${name} ${value === null ? text : `loses ${amountText(value)} dB`}`
+}
+
+export function radioLowText(name: string, band: Band, measuredW: number): string {
+  return `${band}: ${name} gives ${amountText(measuredW)} W`
+}
+
+export function atAntennaText(text: string, watts: number | null): string {
+  return watts === null ? text : `${text}, ${amountText(watts)} W at the antenna`
+}
+
+export function leadText(name: string, watts: number, ratedA: number): string {
+  const power = watts > 0 ? `${amountText(watts)} W at most` : 'No power setting is low enough'
+  return `${power}: ${name} carries ${amountText(ratedA)} A`
+}
+
+export function ratedBelowText(name: string, ratedW: number, promisedW: number): string {
+  return `${amountText(ratedW)} W at most: ${name} is rated below the ${amountText(promisedW)} W promised`
+}
+
+/** The limit of a band in a few words, empty when there is none. */
+export function bandLimitText(
+  state: BandCapability['state'],
+  watts: number | null,
+  promisedW: number | null,
+): string {
+  if (state === 'proven') return ''
+  if (state !== 'limited') return state === 'out' ? 'out' : 'not proven'
+  const fewer = watts !== null && promisedW !== null && watts < promisedW
+  return fewer ? `${amountText(watts)} W at most` : 'with limits'
+}
+
+// Batteries and modes.
+
+export function notCountedText(name: string, fraction: number | null): string {
+  const held =
+    fraction === null ? 'failed its capacity test' : `holds ${shortText(fraction * 100)} % of its rating`
+  return `${name} ${held} and is not counted`
+}
+
+export function noRatingText(name: string): string {
+  return `${name} is not counted: its rated capacity is not on record`
+}
+
+/** One battery's share of the hours, every factor in order. */
+export function batteryText(name: string, share: BatteryShare, atC: number): string {
+  const measured = `${Math.round(share.capacityFraction * 1000) / 10} % measured`
+  const usable = `${Math.round(share.depth * 100)} % of it usable`
+  const left = `${Math.round(share.temperatureFactor * 100)} % at ${atC} °C`
+  return `${name}: ${amountText(share.ratedAh)} Ah, ${measured}, ${usable}, ${left}`
+}
+
+export function loadText(loadA: number): string {
+  return `mean load ${Math.round(loadA * 100) / 100} A`
+}
+
+export const HOURS_UNKNOWN = 'Hours not known: what the station draws is not on record'
+export const NO_ENDURANCE = 'From mains or a vehicle only: no battery endurance'
+
+export function hoursShortText(hours: number, promised: number): string {
+  return `${shortText(hours)} h from its batteries instead of the ${amountText(promised)} h promised`
+}
+
+export function voiceOnlyText(name: string, why: string): string {
+  return `Voice only: ${name} ${why}`
+}
+
+export const NEVER_BOOTED = 'was never booted and updated'
+export const NO_MODE_LEFT = 'No promised mode is left without a computer that works'
+
+export function bootedText(bootedOn: PlainDate): string {
+  return `was last booted and updated on ${dayText(bootedOn)}`
+}
+
+// The kit itself.
+
+export function brokenText(
+  { designation, condition, conditionReason }: ReadinessItem,
+  position: string,
+): string {
+  return `${designation} (${position}) is ${condition}${conditionReason ? `: ${conditionReason}` : ''}`
+}
+
+export function emptyText({ name, quantity }: Position, held: number): string {
+  return quantity === 1 ? `Position ${name} is empty` : `Position ${name} holds ${held} of ${quantity}`
+}
+
+export function sealText(name: string): string {
+  return `The seal of ${name} is broken or not the one on record`
+}
+
+export function shortCountText(countedOn: PlainDate, position: string, refilled: boolean): string {
+  const text = `The count of ${dayText(countedOn)} found too little in ${position}`
+  return refilled ? `${text}; it was filled since and not counted again` : text
+}
+
+export function decisionText({ kind, by, reason }: Decision, untilOn: PlainDate | null): string {
+  const what = kind === 'lowered' ? 'lowered the verdict' : 'accepted a risk'
+  return `${by} ${what}${untilOn ? ` until ${dayText(untilOn)}` : ''}: ${reason}`
 }

@@ -1,7 +1,9 @@
 import type { Category } from '../vocabulary.ts'
-import { reasonOf } from './reason.ts'
-import { FETCH_MINUTES, replaceAction } from './sentences.ts'
-import type { KitState, Position, ReadinessItem, Reason } from './types.ts'
+import { bringBackAction, fillAction, replaceAction } from './actions.ts'
+import type { Moment } from './moment.ts'
+import { reasonAbout, reasonOf } from './reason.ts'
+import { brokenText, emptyText } from './sentences.ts'
+import type { Position, ReadinessItem, Reason } from './types.ts'
 
 /** A position with the items in it that can work. */
 export interface FilledPosition {
@@ -10,11 +12,21 @@ export interface FilledPosition {
   readonly working: readonly ReadinessItem[]
 }
 
-export function fillPositions(state: KitState): FilledPosition[] {
-  return state.positions.map((position) => {
-    const items = state.items.filter(({ positionId }) => positionId === position.id)
+export function fillPositions(moment: Moment): FilledPosition[] {
+  const inspected = moment.state.items.map((item) => asInspected(moment, item))
+  return moment.state.positions.map((position) => {
+    const items = inspected.filter(({ positionId }) => positionId === position.id)
     return { position, items, working: items.filter(({ condition }) => condition === 'serviceable') }
   })
+}
+
+/** An inspection that says unserviceable holds until another one passes: nobody can type it away. */
+function asInspected(moment: Moment, item: ReadinessItem): ReadinessItem {
+  if (item.condition !== 'serviceable') return item
+  const newest = moment.tests(item.id, 'inspection').find(({ recordedAt }) => recordedAt <= moment.at)
+  if (newest?.finding !== 'fail') return item
+  const found = newest.findings.find(({ finding }) => finding === 'fail')?.text ?? ''
+  return { ...item, condition: 'unserviceable', conditionReason: found.replace(/^unserviceable: /, '') }
 }
 
 export function itemsOf(filled: readonly FilledPosition[], ...categories: Category[]): ReadinessItem[] {
@@ -23,45 +35,47 @@ export function itemsOf(filled: readonly FilledPosition[], ...categories: Catego
     .flatMap(({ working }) => working)
 }
 
+export function vitalItemsOf(filled: readonly FilledPosition[], category: Category): ReadinessItem[] {
+  return itemsOf(
+    filled.filter(({ position }) => position.vital),
+    category,
+  )
+}
+
+/** The load plan carries this category, and nowhere as vital: the kit can go without. */
+export function isSupportingOnly(filled: readonly FilledPosition[], category: Category): boolean {
+  const positions = filled.filter(({ position }) => position.category === category)
+  return positions.length > 0 && positions.every(({ position }) => !position.vital)
+}
+
 /** What is wrong with the positions themselves: empty, or held by something that cannot work. */
 export function positionReasons(filled: readonly FilledPosition[]): Reason[] {
   return filled.flatMap(({ position, items, working }) => {
     if (working.length >= position.quantity) return []
     const level = position.vital ? 'not-fit' : 'limit'
     const broken = items.filter(({ condition }) => condition !== 'serviceable')
-    if (broken.length > 0) return broken.map((item) => brokenReason(position, item, level))
-    return [emptyReason(position, items.length, level)]
+    const short = items.length < position.quantity ? [emptyReason(position, items.length, level)] : []
+    return [...broken.map((item) => brokenReason(position, item, level)), ...short]
   })
 }
 
-const CONDITION_WORDS = { unserviceable: 'unserviceable', missing: 'missing', away: 'away' } as const
-
 function brokenReason(position: Position, item: ReadinessItem, level: 'not-fit' | 'limit'): Reason {
-  const word = item.condition === 'serviceable' ? '' : CONDITION_WORDS[item.condition]
-  const why = item.conditionReason ? `: ${item.conditionReason}` : ''
   const gone = item.condition === 'missing' || item.condition === 'away'
-  return reasonOf({
+  return reasonAbout(item, {
     code: `item-${item.condition}`,
     level,
-    text: `${item.designation} (${position.name}) is ${word}${why}`,
+    text: brokenText(item, position.name),
     positionId: position.id,
-    itemId: item.id,
-    action: gone
-      ? { kind: 'find', text: `Bring ${item.designation} back, or replace it`, minutes: FETCH_MINUTES }
-      : replaceAction(item.designation),
+    action: gone ? bringBackAction(item.designation) : replaceAction(item.designation),
   })
 }
 
 function emptyReason(position: Position, held: number, level: 'not-fit' | 'limit'): Reason {
-  const text =
-    position.quantity === 1
-      ? `Position ${position.name} is empty`
-      : `Position ${position.name} holds ${held} of ${position.quantity}`
   return reasonOf({
     code: 'position-empty',
     level,
-    text,
+    text: emptyText(position, held),
     positionId: position.id,
-    action: { kind: 'buy', text: `Find or buy what belongs in ${position.name}`, minutes: FETCH_MINUTES },
+    action: fillAction(position.name),
   })
 }

@@ -1,14 +1,14 @@
 import { addMonths, type PlainDate } from '../plain-date.ts'
 import type { Band, Procedure } from '../vocabulary.ts'
-import { doubtAbout, isAnswered, type Doubt } from './doubt.ts'
+import { doubtAbout, isAnswered, openRecall, type Doubt } from './doubt.ts'
 import type { Moment } from './moment.ts'
-import type { EpochMs, Evidence, RaisedCheck, Rule, TestFinding } from './types.ts'
+import type { Evidence, RaisedCheck, Rule, TestFinding } from './types.ts'
 
 /** What the record says about one check of one subject, on one band or as a whole. */
 export interface Standing {
   /**
    * `good`: a passed result in date. `failed`: the newest result failed; it stays failed until tested anew.
-   * `lapsed`: passed once, its day is over, or an event asked for a new test that did not come in time.
+   * `lapsed`: its day is over, or an event asked for a new test that did not come in time.
    */
   readonly state: 'good' | 'failed' | 'lapsed' | 'never' | 'in-doubt'
   readonly test: Evidence | null
@@ -20,12 +20,14 @@ export interface Standing {
   readonly dueOn: PlainDate | null
 }
 
-interface Asked {
+export interface Asked {
   readonly subjectId: string
   readonly procedures: readonly Procedure[]
   readonly rule: Rule | undefined
   /** Null: the subject as a whole. */
   readonly band: Band | null
+  /** A failure that leaves something to go with (fewer watts) speaks for it only while it is in date. */
+  readonly failureLapses?: boolean
 }
 
 export interface Candidate {
@@ -50,47 +52,68 @@ export function candidates(
   return found
 }
 
-/** Judges a check by its newest result that is not in doubt; a doubted failure still stands against a pass. */
-export function standingOf(moment: Moment, asked: Asked): Standing {
-  let firstDoubt: Standing | undefined
-  for (const { test, finding } of candidates(moment, asked)) {
-    const doubt = doubtAbout(moment, test, asked.band)
-    if (!doubt) return standingOfTest(moment, asked, { test, finding })
-    firstDoubt ??= { ...EMPTY, state: 'in-doubt', test, finding, doubt }
-    if (finding.finding === 'fail') break
-  }
-  return firstDoubt ?? raisedStanding(moment, asked) ?? EMPTY
+const EMPTY: Standing = {
+  state: 'never',
+  test: null,
+  finding: null,
+  doubt: null,
+  raised: null,
+  dueOn: null,
 }
 
-const EMPTY: Standing = { state: 'never', test: null, finding: null, doubt: null, raised: null, dueOn: null }
+/** Judges a check by its newest result that is not in doubt; a doubted failure still stands against a pass. */
+export function standingOf(moment: Moment, asked: Asked): Standing {
+  let doubted: Standing | undefined
+  for (const candidate of candidates(moment, asked)) {
+    const doubt = doubtAbout(moment, candidate.test, asked.band)
+    if (!doubt) {
+      const standing = standingOfTest(moment, asked, candidate)
+      return standing.state === 'lapsed' ? (doubted ?? standing) : standing
+    }
+    doubted ??= { ...EMPTY, state: 'in-doubt', ...candidate, doubt }
+    if (candidate.finding.finding === 'fail') break
+  }
+  return doubted ?? untestedStanding(moment, asked)
+}
 
 function standingOfTest(moment: Moment, asked: Asked, { test, finding }: Candidate): Standing {
   const dueOn = dueOf(test, asked.rule)
   const base = { ...EMPTY, test, finding, dueOn }
-  if (finding.finding === 'fail') return { ...base, state: 'failed' }
-  const raised = raisedAndLate(moment, asked)
+  const failed = finding.finding === 'fail'
+  if (failed && !asked.failureLapses) return { ...base, state: 'failed' }
+  const raised = lateRaisedCheck(moment, asked)
   if (raised) return { ...base, state: 'lapsed', raised }
-  return { ...base, state: dueOn !== null && moment.passedAt(dueOn) <= moment.at ? 'lapsed' : 'good' }
+  if (hasPassed(moment, dueOn)) return { ...base, state: 'lapsed' }
+  return { ...base, state: failed ? 'failed' : 'good' }
 }
 
-function raisedStanding(moment: Moment, asked: Asked): Standing | undefined {
-  const raised = raisedAndLate(moment, asked)
-  return raised && { ...EMPTY, raised }
+/** Never tested, and perhaps recalled or asked for by an event. */
+function untestedStanding(moment: Moment, asked: Asked): Standing {
+  const recall = asked.procedures
+    .map((procedure) => openRecall(moment, asked.subjectId, procedure, asked.band))
+    .find((check) => check !== undefined)
+  if (recall) return { ...EMPTY, state: 'in-doubt', doubt: { kind: 'recall', check: recall } }
+  return { ...EMPTY, raised: lateRaisedCheck(moment, asked) ?? null }
 }
 
 /** A raised check of this subject and procedure whose day has passed without an answer. */
-function raisedAndLate(moment: Moment, asked: Asked): RaisedCheck | undefined {
-  return openRaisedChecks(moment, asked.subjectId).find(
-    (check) =>
-      asked.procedures.includes(check.procedure) &&
-      (check.band === null || asked.band === null || check.band === asked.band) &&
-      moment.passedAt(check.dueOn) <= moment.at,
+export function lateRaisedCheck(
+  moment: Moment,
+  asked: Pick<Asked, 'subjectId' | 'procedures' | 'band'>,
+): RaisedCheck | undefined {
+  return openRaisedChecks(moment, asked.subjectId, asked.band).find(
+    (check) => asked.procedures.includes(check.procedure) && hasPassed(moment, check.dueOn),
   )
 }
 
-export function openRaisedChecks(moment: Moment, subjectId: string): RaisedCheck[] {
+/** Raised checks that ask about this band, or about the subject where no band is named. */
+export function openRaisedChecks(moment: Moment, subjectId: string, band: Band | null): RaisedCheck[] {
   return moment.state.raisedChecks.filter(
-    (check) => check.subjectId === subjectId && check.raisedAt <= moment.at && !isAnswered(moment, check),
+    (check) =>
+      check.subjectId === subjectId &&
+      check.raisedAt <= moment.at &&
+      (check.band === null || band === null || check.band === band) &&
+      !isAnswered(moment, check, band),
   )
 }
 
@@ -99,10 +122,12 @@ export function dueOf(test: Evidence, rule: Rule | undefined): PlainDate | null 
   return rule?.intervalMonths ? addMonths(test.performedOn, rule.intervalMonths) : null
 }
 
-/** The instant at which a standing lapses if nobody does anything; null: never. */
-export function lapsesAt(moment: Moment, standing: Standing): EpochMs | null {
-  return standing.state === 'good' && standing.dueOn !== null ? moment.passedAt(standing.dueOn) : null
+/** The due day itself is still in date. */
+export function hasPassed(moment: Moment, dueOn: PlainDate | null): boolean {
+  return dueOn !== null && moment.passedAt(dueOn) <= moment.at
 }
+
+const RANK = { pass: 0, marginal: 1, fail: 2 } as const
 
 /** The worst of what a test found about a band (or about anything, when no band is asked). */
 function worstFinding(test: Evidence, band: Band | null): TestFinding | undefined {
@@ -113,5 +138,3 @@ function worstFinding(test: Evidence, band: Band | null): TestFinding | undefine
   }
   return worst
 }
-
-const RANK = { pass: 0, marginal: 1, fail: 2 } as const

@@ -1,112 +1,117 @@
 import type { Band } from '../vocabulary.ts'
-import { CLEAR, joinParts, type BandPart } from './band-part.ts'
-import { reasonForStanding } from './check-reason.ts'
+import { replaceAction, testAction } from './actions.ts'
+import { bestPart, CLEAR, joinParts, standingPart, type BandPart } from './band-part.ts'
 import { heatStanding, type HeatStanding } from './heat-standing.ts'
 import type { Moment } from './moment.ts'
-import { reasonOf } from './reason.ts'
+import { reasonAbout } from './reason.ts'
 import { ruleFor } from './rules-in-force.ts'
-import { amountText, doubtText, lapsedText, replaceAction, testAction } from './sentences.ts'
-import { standingOf, type Candidate } from './standing.ts'
-import type { ReadinessItem, Reason, Rule } from './types.ts'
+import { cappedText, efficiencyText, heatUnprovenText, outText } from './sentences.ts'
+import { standingOf, type Standing } from './standing.ts'
+import type { Evidence, ReadinessItem, Reason, Rule } from './types.ts'
 
 const EFFICIENCY = ['pair-loss', 'open-short-load'] as const
 
-/** Loss and heat of one matching transformer on a band. */
-export function transformerPart(moment: Moment, item: ReadinessItem, band: Band): BandPart {
-  return joinParts([efficiencyPart(moment, item, band), heatPart(moment, item, band)])
+/** The best of the kit's matching transformers on a band: loss and heat. None: nothing is lost there. */
+export function transformerPart(
+  moment: Moment,
+  transformers: readonly ReadinessItem[],
+  band: Band,
+): BandPart {
+  const parts = transformers.map((item) =>
+    joinParts([efficiencyPart(moment, item, band), heatPart(moment, item, band)]),
+  )
+  return bestPart(parts) ?? CLEAR
+}
+
+interface Place {
+  readonly item: ReadinessItem
+  readonly band: Band
 }
 
 function efficiencyPart(moment: Moment, item: ReadinessItem, band: Band): BandPart {
-  const rule =
-    ruleFor(moment.policy, item, 'pair-loss', moment.today) ??
-    ruleFor(moment.policy, item, 'open-short-load', moment.today)
-  const standing = standingOf(moment, { subjectId: item.id, procedures: EFFICIENCY, rule, band })
-  const tests = standing.test ? [standing.test] : []
-  const efficiency = standing.finding?.measure === 'efficiency' ? standing.finding.value : null
-  const lossDb = efficiency !== null && efficiency > 0 ? -10 * Math.log10(Math.min(1, efficiency)) : null
-  if (standing.state === 'good') return { ...CLEAR, lossDb, tests }
-  if (standing.state === 'failed') {
-    const percent = efficiency === null ? 'too little' : `${Math.round(efficiency * 100)} %`
-    const text = `${band}: ${item.designation} passes on ${percent} of the power`
-    const reason = about(item, band, 'efficiency-low', text, {
-      test: standing.test!,
-      finding: standing.finding!,
-    })
-    return { ...CLEAR, state: 'limited', lossDb, tests, reasons: [reason] }
-  }
-  if (!rule) return { ...CLEAR, lossDb, tests }
-  const subject = { name: item.designation, itemId: item.id, positionId: item.positionId }
-  const reason = reasonForStanding(subject, { procedure: rule.procedure, band, level: 'limit' }, standing)
-  return {
-    ...CLEAR,
-    state: rule.vital ? 'not-proven' : 'limited',
-    lossDb,
-    tests,
-    reasons: reason ? [reason] : [],
-  }
+  const rule = EFFICIENCY.map((procedure) =>
+    ruleFor(moment.policy, item, procedure, moment.today, band),
+  ).find((one) => one !== undefined)
+  const asked = { subjectId: item.id, procedures: EFFICIENCY, rule, band, failureLapses: true }
+  const standing = standingOf(moment, asked)
+  const efficiency = efficiencyOf(standing)
+  const lossDb = efficiency === null ? null : -10 * Math.log10(efficiency)
+  if (standing.state !== 'failed')
+    return { ...standingPart({ item, rule, procedure: 'pair-loss', band }, standing), lossDb }
+  const text = efficiencyText(item.designation, band, efficiency)
+  const reason = failure({ item, band }, standing, { code: 'efficiency-low', level: 'limit', text })
+  return { ...limited(standing, reason), lossDb }
 }
 
-/** A band without a heat test of its own is judged by efficiency. */
+function efficiencyOf({ finding }: Standing): number | null {
+  const value = finding?.measure === 'efficiency' ? finding.value : null
+  return value !== null && value > 0 ? Math.min(1, value) : null
+}
+
 function heatPart(moment: Moment, item: ReadinessItem, band: Band): BandPart {
-  const rule = ruleFor(moment.policy, item, 'heat-test', moment.today)
+  const rule =
+    ruleFor(moment.policy, item, 'heat-test', moment.today, band) ??
+    ruleFor(moment.policy, item, 'heat-test', moment.today)
   const standing = heatStanding(moment, item.id, rule, band)
+  const place = { item, band }
   switch (standing.state) {
-    case 'untested':
+    case 'not-asked':
       return CLEAR
     case 'good':
       return { ...CLEAR, tests: [standing.by.test] }
     case 'capped':
-      return cappedPart(item, band, standing)
+      return cappedPart(place, standing)
     case 'out': {
-      const text = `${band} out: ${item.designation} ${standing.failed.finding.text}`
-      return { ...CLEAR, state: 'out', reasons: [about(item, band, 'heat-failed', text, standing.failed)] }
+      const text = outText(band, item.designation, standing.failed.finding.text)
+      const reason = failure(place, standing.failed, { code: 'heat-failed', level: 'not-fit', text })
+      return { ...CLEAR, state: 'out', tests: [standing.failed.test], reasons: [reason] }
     }
     default:
-      return unprovenHeat(item, band, rule, standing)
+      return unprovenHeat(place, rule, standing)
   }
 }
 
-function cappedPart(item: ReadinessItem, band: Band, standing: HeatStanding & { state: 'capped' }): BandPart {
-  const { capW, by, failed } = standing
-  const why = failed
-    ? `${item.designation} ${failed.finding.text}`
-    : `${item.designation} is heat tested to that power only`
-  const text = `${band}: ${amountText(capW)} W at most, ${why}`
-  const reason = failed
-    ? about(item, band, 'heat-capped', text, failed)
-    : {
-        ...about(item, band, 'heat-capped', text, by),
-        action: testAction(item.designation, 'heat-test', band),
-      }
-  return { ...CLEAR, state: 'limited', capW, tests: [by.test], reasons: [reason] }
+function cappedPart(place: Place, { capW, by, failed }: HeatStanding & { state: 'capped' }): BandPart {
+  const { designation } = place.item
+  const text = cappedText(designation, place.band, capW, failed?.finding ?? null)
+  const reason = failure(place, failed ?? by, { code: 'heat-capped', level: 'limit', text })
+  const action = failed ? reason.action : testAction(designation, 'heat-test', place.band)
+  return { ...limited(by, { ...reason, action }), capW }
 }
 
 function unprovenHeat(
-  item: ReadinessItem,
-  band: Band,
+  { item, band }: Place,
   rule: Rule | undefined,
-  standing: HeatStanding & { state: 'lapsed' | 'in-doubt' },
+  standing: HeatStanding & { state: 'never' | 'lapsed' | 'in-doubt' },
 ): BandPart {
-  const { test } = standing.by
-  const text =
-    standing.state === 'in-doubt'
-      ? `Not proven on ${band}: ${doubtText(item.designation, 'heat-test', standing.doubt, null)}`
-      : `Not proven on ${band}: ${lapsedText(item.designation, 'heat-test', test.performedOn, null)}`
-  const action = testAction(item.designation, 'heat-test', band)
-  const reason = { ...about(item, band, `heat-test-${standing.state}`, text, standing.by), action }
-  return { ...CLEAR, state: rule?.vital === false ? 'limited' : 'not-proven', reasons: [reason] }
+  const vital = rule?.vital ?? true
+  const reason = reasonAbout(item, {
+    code: `heat-test-${standing.state}`,
+    level: vital ? 'not-proven' : 'limit',
+    text: heatUnprovenText(item.designation, band, standing),
+    band,
+    testId: 'by' in standing ? (standing.by?.test.id ?? null) : null,
+    procedure: 'heat-test',
+    action: testAction(item.designation, 'heat-test', band),
+  })
+  return { ...CLEAR, state: vital ? 'not-proven' : 'limited', reasons: [reason] }
 }
 
-function about(item: ReadinessItem, band: Band, code: string, text: string, { test }: Candidate): Reason {
-  return reasonOf({
-    code,
-    level: 'limit',
-    text,
-    band,
-    itemId: item.id,
-    positionId: item.positionId,
-    testId: test.id,
-    procedure: test.procedure,
-    action: replaceAction(item.designation),
-  })
+interface Shown {
+  readonly test: Evidence | null
+}
+
+function limited({ test }: Shown, reason: Reason): BandPart {
+  return { ...CLEAR, state: 'limited', tests: test ? [test] : [], reasons: [reason] }
+}
+
+/** What a failed test says against a transformer on a band; another one would lift it. */
+function failure(
+  { item, band }: Place,
+  { test }: Shown,
+  said: Pick<Reason, 'code' | 'level' | 'text'>,
+): Reason {
+  const action = replaceAction(item.designation)
+  const procedure = test?.procedure ?? null
+  return reasonAbout(item, { ...said, band, testId: test?.id ?? null, procedure, action })
 }

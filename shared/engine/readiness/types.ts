@@ -88,6 +88,8 @@ export interface ReadinessItem {
   readonly condition: Condition
   readonly conditionReason: string
   readonly facts: ItemFacts
+  /** When it came into its position; absent: not known. */
+  readonly placedAt?: EpochMs | null
 }
 
 /** A rule of the policy in force; see `appliesTo` for which items it means. */
@@ -156,6 +158,8 @@ export interface KitState {
     readonly availability: Availability
     readonly availabilityReason: string
     readonly sealMatches: boolean
+    /** When the kit went out on issue, where it is `assigned`; absent: not known. */
+    readonly assignedAt?: EpochMs | null
   }
   readonly promise: KitPromise
   readonly positions: readonly Position[]

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import { bandOf, lowering, periodAt, textsOf, verdictAt } from './support/answers.ts'
-import { ANT_07_SWEEPS, K_04, K_05, K_07, K_18, K_18_SWAPPED } from './support/demo/hf-kits.ts'
+import { ANT_07_SWEEPS, K_04, K_05, K_18, K_18_SWAPPED } from './support/demo/hf-kits.ts'
 import { RECALLED_AT } from './support/demo/hot-batch.ts'
 import { hfKit } from './support/demo/stations.ts'
 import { AGM_26 } from './support/demo/things.ts'

@@ -60,7 +60,7 @@ export const DEMO_1: Policy = {
   name: 'DEMO-1',
   effectiveFrom: at('2025-09-01'),
   rules: DEMO_RULES,
-  settings: { usableFraction: { lifepo4: 0.9, agm: 0.5 }, enduranceC: 20, peukert: 1 },
+  settings: { usableFraction: { lifepo4: 0.9, agm: 0.5 }, enduranceC: 20, temperatureFactor: 1, peukert: 1 },
 }
 
 /** The demo policy with the rules of one procedure changed. */
