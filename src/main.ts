@@ -1,4 +1,4 @@
-import { config } from 'zod'
+import './api/no-eval.ts'
 import { createPinia } from 'pinia'
 import { createApp } from 'vue'
 import App from './App.vue'
@@ -7,9 +7,6 @@ import { setReactions } from './api/call-api.ts'
 import { usePasswordPrompt } from './composables/usePasswordPrompt.ts'
 import { createAppRouter } from './router/index.ts'
 import { useSessionStore } from './stores/session.ts'
-
-// The page's security policy forbids code from text; without this zod would try it once and be reported.
-config({ jitless: true })
 
 const app = createApp(App)
 const pinia = createPinia()

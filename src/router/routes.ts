@@ -1,5 +1,5 @@
 import type { RouteRecordRaw } from 'vue-router'
-import { ANY_MEMBER } from '#shared/contracts/roles.ts'
+import { ANY_MEMBER, CREW } from '#shared/contracts/roles.ts'
 
 /**
  * Every page, one table. The name is the slug of the page; views are loaded when they are first opened. `light` pages
@@ -11,6 +11,20 @@ export const routes: RouteRecordRaw[] = [
     name: 'board',
     component: () => import('@/views/BoardView.vue'),
     meta: { title: 'Board', roles: ANY_MEMBER, light: true },
+  },
+  {
+    path: '/kits/:kitId',
+    name: 'kit',
+    component: () => import('@/views/KitView.vue'),
+    props: true,
+    meta: { title: 'Kit', roles: CREW, light: true },
+  },
+  {
+    path: '/tests/:testId',
+    name: 'test',
+    component: () => import('@/views/TestView.vue'),
+    props: true,
+    meta: { title: 'Test', roles: CREW, light: true },
   },
   {
     path: '/profile',
