@@ -14,7 +14,7 @@ export interface Caller {
   readonly memberId: string
   readonly groupId: string
   readonly name: string
-  /** The roles in force now: without those that need the password again. */
+  /** The roles in force now: those that need the password again count as `volunteer`. */
   readonly roles: readonly Role[]
   /** All roles the member holds. */
   readonly heldRoles: readonly Role[]

@@ -46,8 +46,12 @@ export function needsRenewal(facts: SessionFacts, now: Date): boolean {
   return now.getTime() - Date.parse(facts.seenAt) > RENEW_AFTER_MS
 }
 
-/** The roles in force: those that need a fresh password are dropped an hour after it was given. */
+/**
+ * The roles in force. An hour after the password was given, those that need a fresh one count as `volunteer`: what every
+ * member of the crew may do goes on without a question.
+ */
 export function rolesInForce(held: readonly Role[], facts: SessionFacts, now: Date): readonly Role[] {
   if (now.getTime() - Date.parse(facts.passwordAt) <= STRONG_RIGHTS_MS) return held
-  return held.filter((role) => !ROLES_THAT_RENEW.includes(role))
+  const inForce = held.map((role) => (ROLES_THAT_RENEW.includes(role) ? 'volunteer' : role))
+  return [...new Set(inForce)]
 }

@@ -11,9 +11,9 @@ export const sessionView = z.object({
       id,
       name: z.string(),
       callSign: z.string().nullable(),
-      /** In force now. */
+      /** In force now: a role that needs the password again counts as `volunteer`. */
       roles: z.array(z.enum(ROLES)),
-      /** All that the member holds: what is missing in `roles` needs the password again. */
+      /** What the member holds: of these, what `roles` lacks needs the password again. */
       heldRoles: z.array(z.enum(ROLES)),
       units: z.object({ temperature: temperatureUnit, length: lengthUnit }),
       group: z.object({

@@ -144,6 +144,13 @@ describe('session', () => {
     })
   })
 
+  it('lets an administrator go on as a member of the crew meanwhile', async () => {
+    const administrator = await app.givenMember(group, { roles: ['administrator'] })
+    app.clock.advance(2, 'hours')
+    await administrator.get('/api/v1/members').expect(200)
+    await administrator.get('/api/v1/profile').expect(200)
+  })
+
   it('asks for the password where only a held-back right would do', async () => {
     const administrator = await app.givenMember(group, { roles: ['administrator'] })
     await administrator.get('/api/v1/people').expect(200)
