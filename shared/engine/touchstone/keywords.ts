@@ -51,7 +51,7 @@ export class Version2Header {
   openReference(value: string, line: number): Failure | undefined {
     const values: number[] = []
     for (const token of value.split(/\s+/).filter((part) => part !== '')) {
-      const ohm = readNumber(token, 0, token.length)
+      const ohm = readNumber(token)
       if (ohm === undefined) return failure('TS_NUMBER', `${quoted(token)} is not a number.`, { line })
       values.push(ohm)
     }
@@ -116,7 +116,7 @@ export class Version2Header {
   }
 
   private takePorts(value: string, line: number): Failure | undefined {
-    const ports = readNumber(value, 0, value.length)
+    const ports = readNumber(value)
     if (ports === undefined) return failure('TS_NUMBER', `${quoted(value)} is not a number.`, { line })
     if (ports !== 1 && ports !== 2) {
       return failure('TS_PORTS', `The file has ${ports} ports: one or two can be read.`, { line })
@@ -134,7 +134,7 @@ export class Version2Header {
   }
 
   private takeCount(value: string, line: number, keep: (counted: Counted) => void): Failure | undefined {
-    const count = readNumber(value, 0, value.length)
+    const count = readNumber(value)
     if (count === undefined) return failure('TS_NUMBER', `${quoted(value)} is not a number.`, { line })
     if (!Number.isInteger(count) || count < 0) {
       return failure('TS_V2_COUNT', `A count of ${count} makes no sense.`, { line })

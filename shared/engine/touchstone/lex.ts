@@ -1,5 +1,5 @@
 import { failure, type Failure } from '../outcome.ts'
-import { readNumber } from './read-number.ts'
+import { isBlank, NumberScanner } from './read-number.ts'
 
 /**
  * First pass over a Touchstone file: physical lines become option lines, keyword lines and data lines with
@@ -29,14 +29,10 @@ export interface Lexed {
   readonly stoppedBy?: Failure
 }
 
-const TAB = 9
-const LINE_FEED = 10
-const CARRIAGE_RETURN = 13
-const SPACE = 32
-const COMMENT = 33
-const OPTION = 35
-const BRACKET = 91
-const DELETE = 127
+const OPTION = '#'.charCodeAt(0)
+const BRACKET = '['.charCodeAt(0)
+/** Control characters other than tab and line ends. */
+const CONTROL = new RegExp('[\\0-\\x08\\x0b\\x0c\\x0e-\\x1f\\x7f]')
 
 export function lexTouchstone(text: string): Lexed {
   return new Lexer(text).run()
@@ -49,8 +45,19 @@ class Lexer {
   private at = 0
   /** Inside an information block, or after `[End]`: only the characters are checked. */
   private skipping: 'no' | 'information' | 'rest' = 'no'
+  private readonly lineFeeds: NextPlace
+  private readonly carriageReturns: NextPlace
+  private readonly comments: NextPlace
+  private readonly scanner: NumberScanner
+  private readonly firstControl: number
 
-  constructor(private readonly text: string) {}
+  constructor(private readonly text: string) {
+    this.lineFeeds = new NextPlace(text, '\n')
+    this.carriageReturns = new NextPlace(text, '\r')
+    this.comments = new NextPlace(text, '!')
+    this.scanner = new NumberScanner(text)
+    this.firstControl = text.search(CONTROL)
+  }
 
   run(): Lexed {
     while (this.at < this.text.length) {
@@ -68,17 +75,12 @@ class Lexer {
   private takeLine(): Failure | undefined {
     const { text } = this
     let from = this.at
-    let to = -1
-    let at = from
-    for (; at < text.length; at++) {
-      const code = text.charCodeAt(at)
-      if (code === LINE_FEED || code === CARRIAGE_RETURN) break
-      if ((code < SPACE && code !== TAB) || code === DELETE) return this.badCharacter(code)
-      if (code === COMMENT && to < 0) to = at
-    }
-    if (to < 0) to = at
-    const isCrLf = text.charCodeAt(at) === CARRIAGE_RETURN && text.charCodeAt(at + 1) === LINE_FEED
-    this.at = at + (isCrLf ? 2 : 1)
+    const lineFeed = this.lineFeeds.from(from)
+    const carriageReturn = this.carriageReturns.from(from)
+    const end = Math.min(lineFeed, carriageReturn)
+    if (this.firstControl >= from && this.firstControl < end) return this.badCharacter()
+    this.at = carriageReturn + 1 === lineFeed ? lineFeed + 1 : end + 1
+    const to = Math.min(end, this.comments.from(from))
     while (from < to && isBlank(text.charCodeAt(from))) from++
     return from < to ? this.takeContent(from, to) : undefined
   }
@@ -108,22 +110,22 @@ class Lexer {
   }
 
   private takeNumbers(from: number, to: number): Failure | undefined {
-    const { text, numbers } = this
+    const { text, numbers, scanner } = this
     const start = numbers.length
     let at = from
     while (at < to) {
-      const begin = at
-      while (at < to && !isBlank(text.charCodeAt(at))) at++
-      const value = readNumber(text, begin, at)
-      if (value === undefined) return this.badNumber(text.slice(begin, at))
+      const value = scanner.scan(at, to)
+      if (value === undefined) return this.badNumber(text.slice(at, scanner.end))
       numbers.push(value)
+      at = scanner.end
       while (at < to && isBlank(text.charCodeAt(at))) at++
     }
     this.lines.push({ kind: 'data', line: this.line, start, count: numbers.length - start })
     return undefined
   }
 
-  private badCharacter(code: number): Failure {
+  private badCharacter(): Failure {
+    const code = this.text.charCodeAt(this.firstControl)
     const message = `Character ${code} does not belong in a text file: this is not a Touchstone file.`
     return failure('TS_ENCODING', message, { line: this.line })
   }
@@ -140,6 +142,21 @@ export function quoted(token: string): string {
   return `"${plain.length > 24 ? `${plain.slice(0, 24)}...` : plain}"`
 }
 
-function isBlank(code: number): boolean {
-  return code === SPACE || code === TAB
+/** Where a character stands next, asked at rising places: each part of the text is searched once. */
+class NextPlace {
+  private found = -1
+
+  constructor(
+    private readonly text: string,
+    private readonly character: string,
+  ) {}
+
+  /** The length of the text when there is none. */
+  from(at: number): number {
+    if (this.found < at) {
+      const found = this.text.indexOf(this.character, at)
+      this.found = found < 0 ? this.text.length : found
+    }
+    return this.found
+  }
 }

@@ -70,7 +70,7 @@ function readPart(tokens: readonly string[], at: number): { kind: Kind; value: s
 
 function readResistance(token: string | undefined): { kind: Kind; value: number } | Failure {
   if (token === undefined) return failure('TS_OPTION_R', 'R needs a resistance in ohm after it.')
-  const ohm = readNumber(token, 0, token.length)
+  const ohm = readNumber(token)
   if (ohm === undefined) return failure('TS_OPTION_R', `The resistance ${quoted(token)} is not a number.`)
   if (ohm <= 0) return failure('TS_OPTION_R', `The resistance is ${ohm} ohm: it must be above 0.`)
   return { kind: 'resistance', value: ohm }

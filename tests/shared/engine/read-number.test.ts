@@ -2,7 +2,7 @@ import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { readNumber } from '#shared/engine/touchstone/read-number.ts'
 
-const read = (text: string): number | undefined => readNumber(text, 0, text.length)
+const read = (text: string): number | undefined => readNumber(text)
 
 describe('readNumber', () => {
   it('gives the same double as Number for every decimal', () => {
