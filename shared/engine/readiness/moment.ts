@@ -1,20 +1,15 @@
-import { localDateOf, overdueFrom } from '../local-day.ts'
-import { isFailure, type Outcome } from '../outcome.ts'
-import type { PlainDate } from '../plain-date.ts'
 import { groupBy } from '../group-by.ts'
+import type { PlainDate } from '../plain-date.ts'
 import type { Procedure } from '../vocabulary.ts'
 import { policyAt } from './rules-in-force.ts'
 import type { EpochMs, Evidence, KitState, Policy } from './types.ts'
+import { zoneDays, type ZoneDays } from './zone-days.ts'
 
 /** A kit's state prepared once for all the instants at which it is judged. */
-export interface Dossier {
+export interface Dossier extends ZoneDays {
   readonly state: KitState
   /** Tests of one subject by one procedure, newest first. */
   tests(subjectId: string, procedure: Procedure): readonly Evidence[]
-  /** The instant at which a due day has passed: the next local midnight. */
-  passedAt(due: PlainDate): EpochMs
-  /** The local day of an instant. */
-  dayOf(at: EpochMs): PlainDate
 }
 
 /** One instant at which a kit is judged. */
@@ -24,35 +19,26 @@ export interface Moment extends Dossier {
   readonly policy: Policy | undefined
 }
 
+const NONE: readonly Evidence[] = []
+
 export function dossierOf(state: KitState): Dossier {
-  const bySubject = groupBy(state.evidence, (test) => `${test.subjectId} ${test.procedure}`)
-  for (const tests of bySubject.values()) tests.sort(newestFirst)
-  const ends = new Map<PlainDate, EpochMs>()
-  return {
-    state,
-    tests: (subjectId, procedure) => bySubject.get(`${subjectId} ${procedure}`) ?? [],
-    dayOf: (at) => certain(localDateOf(at, state.zone)),
-    passedAt: (due) => {
-      const known = ends.get(due)
-      if (known !== undefined) return known
-      const end = certain<number>(overdueFrom(due, state.zone))
-      ends.set(due, end)
-      return end
-    },
+  const bySubject = groupBy(state.evidence, (test) => test.subjectId)
+  const sorted = new Map<string, Map<Procedure, Evidence[]>>()
+  for (const [subjectId, tests] of bySubject) {
+    const byProcedure = groupBy(tests, (test) => test.procedure)
+    for (const list of byProcedure.values()) list.sort(newestFirst)
+    sorted.set(subjectId, byProcedure)
   }
+  const { passedAt, dayOf } = zoneDays(state.zone)
+  const tests = (subjectId: string, procedure: Procedure) => sorted.get(subjectId)?.get(procedure) ?? NONE
+  return { state, tests, passedAt, dayOf }
 }
 
 export function momentOf(dossier: Dossier, at: EpochMs): Moment {
-  const today = certain<PlainDate>(localDateOf(at, dossier.state.zone))
-  return { ...dossier, at, today, policy: policyAt(dossier.state, at) }
+  const { state, tests, passedAt, dayOf } = dossier
+  return { state, tests, passedAt, dayOf, at, today: dayOf(at), policy: policyAt(state, at) }
 }
 
 function newestFirst(a: Evidence, b: Evidence): number {
   return b.performedAt - a.performedAt || b.recordedAt - a.recordedAt || (a.id < b.id ? 1 : -1)
-}
-
-/** Days and zones come checked from the database: a failure here cannot be. */
-function certain<T extends string | number>(outcome: Outcome<T>): T {
-  if (isFailure(outcome)) throw new RangeError(outcome.message)
-  return outcome
 }

@@ -11,8 +11,7 @@ const MONTHS = ['Jan', 'Feb', 'Mar', 'Apr', 'May', 'Jun', 'Jul', 'Aug', 'Sep', '
 
 /** "14 Mar 2026". */
 export function dayText(day: PlainDate): string {
-  const [year, month, date] = day.split('-').map(Number)
-  return `${date} ${MONTHS[(month ?? 1) - 1]} ${year}`
+  return `${Number(day.slice(8))} ${MONTHS[Number(day.slice(5, 7)) - 1]} ${day.slice(0, 4)}`
 }
 
 /** No more digits than mean something: 84.8 is "85", 12.03 "12", 4.12 "4.1". */

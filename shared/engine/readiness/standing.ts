@@ -26,6 +26,8 @@ export interface Asked {
   readonly rule: Rule | undefined
   /** Null: the subject as a whole. */
   readonly band: Band | null
+  /** Whose raised checks count, where it is not `band`. */
+  readonly raisedOn?: Band
   /** A failure that leaves something to go with (fewer watts) speaks for it only while it is in date. */
   readonly failureLapses?: boolean
 }
@@ -99,9 +101,9 @@ function untestedStanding(moment: Moment, asked: Asked): Standing {
 /** A raised check of this subject and procedure whose day has passed without an answer. */
 export function lateRaisedCheck(
   moment: Moment,
-  asked: Pick<Asked, 'subjectId' | 'procedures' | 'band'>,
+  asked: Pick<Asked, 'subjectId' | 'procedures' | 'band' | 'raisedOn'>,
 ): RaisedCheck | undefined {
-  return openRaisedChecks(moment, asked.subjectId, asked.band).find(
+  return openRaisedChecks(moment, asked.subjectId, asked.raisedOn ?? asked.band).find(
     (check) => asked.procedures.includes(check.procedure) && hasPassed(moment, check.dueOn),
   )
 }

@@ -1,7 +1,7 @@
 import type { Band, Procedure } from '../vocabulary.ts'
 import type { Moment } from './moment.ts'
-import { candidates, standingOf, type Standing } from './standing.ts'
-import type { ReadinessItem, Rule } from './types.ts'
+import { standingOf, type Standing } from './standing.ts'
+import type { ReadinessItem, Rule, TestFinding } from './types.ts'
 
 interface Check {
   readonly item: ReadinessItem
@@ -18,11 +18,22 @@ interface Check {
  */
 export function standingOnBand(moment: Moment, check: Check): Standing {
   const { item, procedure, rule, band, failsEverywhere } = check
-  const asked = { subjectId: item.id, procedures: [procedure], rule, failureLapses: true }
-  const own = standingOf(moment, { ...asked, band })
-  if (own.finding?.finding === 'fail') return own
-  const whole = standingOf(moment, { ...asked, band: null })
-  const measured = candidates(moment, { ...asked, band }).length > 0
-  if (whole.state === 'failed' && (measured || !failsEverywhere)) return { ...whole, state: 'good' }
-  return whole
+  // Written out: copying an object here costs more than the judgement.
+  const asked = (on: Band | null) => ({
+    subjectId: item.id,
+    procedures: [procedure],
+    rule,
+    band: on,
+    raisedOn: band,
+    failureLapses: true,
+  })
+  const whole = standingOf(moment, asked(null))
+  // Without any failure of that procedure the bands cannot differ.
+  if (!moment.tests(item.id, procedure).some(({ findings }) => findings.some(isFailure))) return whole
+  const own = standingOf(moment, asked(band))
+  if (own.finding && isFailure(own.finding)) return own
+  const measured = own.test !== null
+  return whole.state === 'failed' && (measured || !failsEverywhere) ? { ...whole, state: 'good' } : whole
 }
+
+const isFailure = ({ finding }: TestFinding) => finding === 'fail'
