@@ -27,6 +27,13 @@ export const routes: RouteRecordRaw[] = [
     meta: { title: 'Test', roles: CREW, light: true },
   },
   {
+    path: '/items/:itemId/tests/new/:procedure',
+    name: 'record-test',
+    component: () => import('@/views/RecordTestView.vue'),
+    props: true,
+    meta: { title: 'Record a test', roles: CREW, light: true },
+  },
+  {
     path: '/profile',
     name: 'profile',
     component: () => import('@/views/ProfileView.vue'),

@@ -1,0 +1,10 @@
+import { defineAsyncComponent, type Component } from 'vue'
+import type { Procedure } from '#shared/engine/vocabulary.ts'
+
+/**
+ * The form of each procedure that tests an item. Each takes `form` (what the service knows for the test) and
+ * `corrects`, and emits `recorded` with the stored test.
+ */
+export const itemForms: Partial<Record<Procedure, Component>> = {
+  'heat-test': defineAsyncComponent(() => import('@/components/heat-test/HeatTestRun.vue')),
+}

@@ -1,0 +1,92 @@
+import { computed, shallowRef, watch } from 'vue'
+import type { TestForm } from '#shared/contracts/test-form.ts'
+import { uuidv7 } from '@/api/new-id.ts'
+import {
+  hottestC,
+  withoutReading,
+  withReading,
+  type HeatPlan,
+  type HeatRun,
+  type HeatSetUp,
+} from '@/components/heat-test/heat-run.ts'
+
+const keyOf = (itemId: string) => `halyard.heat-test.${itemId}`
+
+/** One heat test of one item, kept on this device until it is recorded or given up. */
+export function useHeatRun(form: TestForm) {
+  const itemId = form.item.id
+  const run = shallowRef<HeatRun>(readKept(itemId) ?? newRun(form))
+  const plan = computed<HeatPlan>(() => planOf(form))
+  watch(run, (value) => keep(itemId, value), { immediate: true })
+
+  const change = (changes: Partial<HeatRun>) => void (run.value = { ...run.value, ...changes })
+
+  return {
+    run,
+    plan,
+    hottest: computed(() => hottestC(run.value)),
+    setUp: (changes: Partial<HeatSetUp>) => change({ setUp: { ...run.value.setUp, ...changes } }),
+    change,
+    keyDown: () =>
+      change({ step: 'keyed', keyDownAt: Date.now(), keyUpAt: null, readings: [], stoppedAtLimit: false }),
+    read: (temperatureC: number) => void (run.value = withReading(run.value, temperatureC, Date.now())),
+    remove: (place: number) => void (run.value = withoutReading(run.value, place)),
+    keyUp: (stoppedAtLimit: boolean) => change({ step: 'cooling', keyUpAt: Date.now(), stoppedAtLimit }),
+    review: () => change({ step: 'review' }),
+    /** Begins again with the same set-up and a new id. */
+    restart: () => void (run.value = { ...newRun(form), setUp: run.value.setUp }),
+    /** It is recorded, or nobody wants it: nothing stays on the device. */
+    forget: () => localStorage.removeItem(keyOf(itemId)),
+  }
+}
+
+function newRun(form: TestForm): HeatRun {
+  return {
+    testId: uuidv7(),
+    step: 'set-up',
+    setUp: {
+      band: form.bands.at(-1) ?? null,
+      powerW: form.heat?.powerW ?? null,
+      load: 'fixture-2450',
+      enclosure: 'closed',
+      ambientC: null,
+      method: form.lastMethod ?? form.methods[0]?.name ?? '',
+      instrumentId: form.lastInstrument?.id ?? form.instruments[0]?.id ?? '',
+      instrumentNote: '',
+      conditions: '',
+    },
+    keyDownAt: null,
+    keyUpAt: null,
+    readings: [],
+    stoppedAtLimit: false,
+    swr: { start: null, highest: null, lowest: null },
+    notes: '',
+  }
+}
+
+/** Without a rule in force the card's customary method stands (common practice, no source). */
+function planOf({ heat }: TestForm): HeatPlan {
+  return {
+    stopC: heat?.stopC ?? 85,
+    minutes: heat?.minutes ?? 10,
+    readingMinutes: heat?.readingMinutes ?? [0, 1, 2, 3, 5, 8, 10],
+    coolingMinutes: heat?.coolingMinutes ?? [5],
+  }
+}
+
+function readKept(itemId: string): HeatRun | null {
+  try {
+    const kept = JSON.parse(localStorage.getItem(keyOf(itemId)) ?? 'null') as HeatRun | null
+    return kept?.testId && kept.setUp ? kept : null
+  } catch {
+    return null
+  }
+}
+
+function keep(itemId: string, run: HeatRun): void {
+  try {
+    localStorage.setItem(keyOf(itemId), JSON.stringify(run))
+  } catch {
+    // Storage that is full or refused costs the reload, not the test: it goes on in this page.
+  }
+}
