@@ -4,6 +4,7 @@ import { ConfigError, readConfig, type Config } from './config.ts'
 import type { AppContext } from './context.ts'
 import { createDataSource } from './data-source.ts'
 import { createHttpServer, listen } from './http-server.ts'
+import { boardHub } from './live/board-hub.ts'
 import { createLog } from './log.ts'
 import { prepareDatabase } from './prepare-database.ts'
 import { startHousekeeping } from './services/housekeeping.ts'
@@ -44,6 +45,7 @@ function beginPreparing(ctx: AppContext): { ready: Promise<void>; away: Promise<
 
 /** Everything beside answering requests; each part is stopped by `shutdown`. */
 async function startParts(ctx: AppContext, shutdown: Shutdown): Promise<void> {
+  await shutdown.add(boardHub(ctx))
   await shutdown.add(startHousekeeping(ctx))
 }
 

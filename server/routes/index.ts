@@ -8,15 +8,20 @@ import { healthRoutes } from './health.ts'
 import { itemRoutes } from './items.ts'
 import { kitKindRoutes } from './kit-kinds.ts'
 import { kitRoutes } from './kits.ts'
+import { liveRoutes } from './live.ts'
 import { moveRoutes } from './moves.ts'
 import { oneTimeLinkRoutes } from './one-time-links.ts'
 import { peopleRoutes } from './people.ts'
 import { placeRoutes } from './places.ts'
+import { policyRoutes } from './policies.ts'
 import { profileRoutes } from './profile.ts'
+import { raisedCheckRoutes } from './raised-checks.ts'
+import { readinessRoutes } from './readiness.ts'
 import { registryRoutes } from './registry.ts'
 import { reminderRoutes } from './reminders.ts'
 import { sessionRoutes } from './sessions.ts'
 import { testRoutes } from './tests.ts'
+import { tagSheetRoutes } from './tag-sheets.ts'
 
 /** Every group of endpoints, in the order of the OpenAPI document. */
 const routes: readonly ((endpoints: EndpointRouter, ctx: AppContext) => void)[] = [
@@ -35,8 +40,13 @@ const routes: readonly ((endpoints: EndpointRouter, ctx: AppContext) => void)[] 
   consumableRoutes,
   stockRoutes,
   registryRoutes,
+  tagSheetRoutes,
   testRoutes,
   boardRoutes,
+  readinessRoutes,
+  policyRoutes,
+  raisedCheckRoutes,
+  liveRoutes,
   reminderRoutes,
 ]
 

@@ -1,8 +1,10 @@
 import { listTests, readTest } from '#shared/contracts/read-tests.ts'
 import { recordTest as recordTestContract } from '#shared/contracts/record-test.ts'
+import { readTestForm as formContract } from '#shared/contracts/test-form.ts'
 import type { AppContext } from '../context.ts'
 import { inGroup } from '../group-transaction.ts'
 import { listTestsOf } from '../services/evidence/list-tests.ts'
+import { readTestForm } from '../services/evidence/read-test-form.ts'
 import { recordTest } from '../services/evidence/record-test.ts'
 import { readStoredTest } from '../services/evidence/stored-test.ts'
 import type { EndpointRouter } from './endpoint.ts'
@@ -13,4 +15,7 @@ export function testRoutes(endpoints: EndpointRouter, ctx: AppContext): void {
   )
   endpoints.add(readTest, ({ params, by }) => inGroup(ctx, by, (tx) => readStoredTest(tx, params.testId)))
   endpoints.add(listTests, ({ query, by }) => inGroup(ctx, by, (tx) => listTestsOf(tx, query)))
+  endpoints.add(formContract, ({ params, query, by }) =>
+    inGroup(ctx, by, (tx) => readTestForm(tx, { itemId: params.itemId, procedure: query.procedure })),
+  )
 }

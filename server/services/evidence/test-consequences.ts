@@ -72,7 +72,7 @@ async function applyCount(tx: GroupTx, { kitId, inputs }: Count, performedOn: st
 }
 
 const IN_KIT: Statement = {
-  name: 'items-in-kit',
+  name: 'counted-items-in-kit',
   text: 'SELECT id FROM item WHERE id = ANY($1::uuid[]) AND kit_id = $2',
 }
 

@@ -36,7 +36,7 @@ const KIT: Statement = { name: 'test-kit', text: 'SELECT id, designation FROM ki
 
 /** 404 when it is not in the group, a fault of the field when the procedure is not done to such a thing. */
 export async function readSubject(tx: GroupTx, body: RecordTestBody): Promise<TestSubject> {
-  if ('kitId' in body) return readKit(tx, body.kitId)
+  if ('kitId' in body) return readKitSubject(tx, body.kitId)
   const item = await readItemSubject(tx, body.itemId)
   if (item.category !== 'kit' && canBeTested(item.category, body.procedure)) return item
   const subjects = SUBJECTS[body.procedure]
@@ -61,7 +61,7 @@ export async function readItemSubject(tx: GroupTx, itemId: string): Promise<Test
   }
 }
 
-async function readKit(tx: GroupTx, kitId: string): Promise<TestSubject> {
+export async function readKitSubject(tx: GroupTx, kitId: string): Promise<TestSubject> {
   const [row] = await tx.sql<{ id: string; designation: string }>(KIT, [kitId])
   if (!row) throw notFound('kit')
   return { type: 'kit', ...row, category: 'kit', facts: {}, details: {}, kitId: row.id }

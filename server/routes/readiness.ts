@@ -1,0 +1,14 @@
+import { listDueChecks as dueContract } from '#shared/contracts/due-checks.ts'
+import { readKitReadiness as readContract } from '#shared/contracts/kit-readiness.ts'
+import type { AppContext } from '../context.ts'
+import { inGroup } from '../group-transaction.ts'
+import { listDueChecks } from '../services/readiness/due-checks.ts'
+import { readKitReadiness } from '../services/readiness/read-kit-readiness.ts'
+import type { EndpointRouter } from './endpoint.ts'
+
+export function readinessRoutes(endpoints: EndpointRouter, ctx: AppContext): void {
+  endpoints.add(readContract, ({ params, query, by }) =>
+    inGroup(ctx, by, (tx) => readKitReadiness(tx, { kitId: params.kitId, asOf: query.asOf })),
+  )
+  endpoints.add(dueContract, ({ query, by }) => inGroup(ctx, by, (tx) => listDueChecks(tx, query)))
+}

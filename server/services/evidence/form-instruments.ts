@@ -1,0 +1,64 @@
+import type { TestForm } from '#shared/contracts/test-form.ts'
+import { addMonths } from '#shared/engine/plain-date.ts'
+import { INSTRUMENTS } from '#shared/engine/procedures/subjects.ts'
+import { ruleFor } from '#shared/engine/readiness/rules-in-force.ts'
+import type { Policy } from '#shared/engine/readiness/types.ts'
+import type { Category, Procedure } from '#shared/engine/vocabulary.ts'
+import type { GroupTx, Statement } from '../../group-transaction.ts'
+
+interface InstrumentRow {
+  [column: string]: unknown
+  id: string
+  designation: string
+  category: Category
+  calibrated_on: string | null
+}
+
+const FITTING: Statement = {
+  name: 'fitting-instruments',
+  text: `SELECT i.id, i.designation, i.category, (
+      SELECT max(t.performed_on)::text FROM test t WHERE t.item_id = i.id AND t.procedure = 'calibration'
+        AND t.finding <> 'fail' AND NOT EXISTS (SELECT FROM test s WHERE s.supersedes_id = t.id)
+    ) AS calibrated_on
+    FROM item i
+    WHERE i.group_id = $1 AND i.category = ANY($2) AND i.condition = 'serviceable' AND i.retired_at IS NULL
+    ORDER BY array_position($2, i.category), i.designation, i.id LIMIT 100`,
+}
+
+/** Serviceable instruments that the procedure is read from, with the last day of their calibration. */
+export async function fittingInstruments(
+  tx: GroupTx,
+  procedure: Procedure,
+  policy: Policy,
+): Promise<TestForm['instruments']> {
+  const [rows, today] = await Promise.all([
+    tx.sql<InstrumentRow>(FITTING, [tx.groupId, INSTRUMENTS[procedure]]),
+    tx.today(),
+  ])
+  return rows.map(({ id, designation, category, calibrated_on: calibratedOn }) => {
+    const months = ruleFor(policy, { category, facts: {} }, 'calibration', today)?.intervalMonths
+    const until = calibratedOn !== null && months ? addMonths(calibratedOn, months) : null
+    return { id, designation, category, calibratedUntilOn: until }
+  })
+}
+
+interface LastRow {
+  [column: string]: unknown
+  method: string
+  instrument_id: string | null
+}
+
+const LAST: Statement = {
+  name: 'last-method',
+  text: `SELECT method, instrument_id FROM test WHERE group_id = $1 AND recorded_by = $2 AND procedure = $3
+    ORDER BY performed_at DESC, id LIMIT 1`,
+}
+
+/** What the member at hand used last for the procedure. */
+export async function lastUsed(
+  tx: GroupTx,
+  procedure: Procedure,
+): Promise<{ method: string; instrumentId: string | null } | null> {
+  const [row] = await tx.sql<LastRow>(LAST, [tx.groupId, tx.actor.memberId, procedure])
+  return row ? { method: row.method, instrumentId: row.instrument_id } : null
+}
