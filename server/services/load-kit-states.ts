@@ -32,7 +32,7 @@ export async function loadKitStates(
       tx.sql<statements.InstrumentRow>(statements.INSTRUMENTS, ids),
       tx.sql<statements.RaisedCheckRow>(statements.RAISED_CHECKS, ids),
       tx.sql<statements.DecisionRow>(statements.DECISIONS, ids),
-      policiesOf(tx),
+      readPolicies(tx),
       tx.zone(),
     ])
   const byKind = groupBy(positions, (row) => row.kit_kind_id)
