@@ -12,8 +12,8 @@ import { boardQuery, type BoardFilters } from './useBoardFilters.ts'
 export interface ShownBoard {
   readonly board: BoardAnswer
   readonly layout: readonly SectionLayout[]
-  /** Kits whose row changed while it was on the screen. */
-  readonly changed: ReadonlySet<string>
+  /** When the rows that changed on the screen did so, epoch ms by kit. */
+  readonly changed: ReadonlyMap<string, number>
   /** Rows would stand elsewhere if they were sorted now. */
   readonly outOfOrder: boolean
   /** When this was read, epoch ms. */
@@ -25,7 +25,7 @@ export type BoardState =
   | { readonly status: 'failed'; readonly error: unknown }
   | { readonly status: 'shown'; readonly shown: ShownBoard; readonly stale: unknown }
 
-const NONE: ReadonlySet<string> = new Set()
+const NONE: ReadonlyMap<string, number> = new Map()
 
 /**
  * The board for the filters given, which follows the group's changes by itself. Rows stay where they are while they
@@ -74,9 +74,7 @@ export function useLiveBoard(filters: () => BoardFilters) {
     const before = state.value.status === 'shown' && order === 'kept' ? state.value.shown : null
     const sorted = layoutOf(board.rows)
     const layout = before ? keepLayout(before.layout, board.rows) : sorted
-    const changed = before
-      ? new Set([...before.changed, ...changedKits(before.board.rows, board.rows)])
-      : NONE
+    const changed = before ? withChanges(before, board) : NONE
     const shown = { board, layout, changed, outOfOrder: !sameLayout(layout, sorted), readAtMs: Date.now() }
     state.value = { status: 'shown', shown, stale: null }
     store.kept = { address: at, memberId: session.member?.id ?? '', board, layout }
@@ -124,4 +122,10 @@ export function useLiveBoard(filters: () => BoardFilters) {
   }
 
   return { state: shallowReadonly(state), connected: shallowReadonly(connected), load, sortAgain }
+}
+
+function withChanges(before: ShownBoard, board: BoardAnswer): ReadonlyMap<string, number> {
+  const atMs = Date.now()
+  const fresh = changedKits(before.board.rows, board.rows).map((kitId) => [kitId, atMs] as const)
+  return new Map([...before.changed, ...fresh])
 }

@@ -13,9 +13,9 @@ export const BAND_STATE_WORDS: Readonly<Record<BandCapability['state'], string>>
   out: 'out',
 }
 
-/** `40 m` is `40` under a strip where all others are metres too; `70 cm` keeps its unit. */
+/** `40 m` is `40` under a strip where nearly all are metres; `70 cm` keeps its unit. */
 export function shortBand(band: Band): string {
-  return band.endsWith(' m') ? band.slice(0, -2) : band.replace(' ', '')
+  return band.endsWith(' m') ? band.slice(0, -2) : band.replace(' ', '\u2009')
 }
 
 export function inBandOrder(cells: readonly BandCell[]): BandCell[] {

@@ -31,10 +31,10 @@ export function sameLayout(a: readonly SectionLayout[], b: readonly SectionLayou
 }
 
 /** Kits whose row says something else than before. */
-export function changedKits(before: readonly BoardRow[], after: readonly BoardRow[]): Set<string> {
+export function changedKits(before: readonly BoardRow[], after: readonly BoardRow[]): string[] {
   const known = new Map(before.map((row) => [row.kitId, JSON.stringify(row)]))
   const changed = after.filter((row) => known.get(row.kitId) !== JSON.stringify(row))
-  return new Set(changed.map(({ kitId }) => kitId))
+  return changed.map(({ kitId }) => kitId)
 }
 
 /** Rows that are drawn or left out together. */

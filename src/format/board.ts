@@ -1,6 +1,7 @@
 import type { BoardAnswer, BoardCount, BoardRow } from '#shared/contracts/board.ts'
 import { unpackBands } from '#shared/engine/readiness/band-codes.ts'
 import { counted } from '@/words.ts'
+import { wallClock } from './day.ts'
 import { numberText, quantityText } from './quantity.ts'
 
 /** What the first sentence of the board is made of: stations only. */
@@ -90,4 +91,11 @@ export function hoursOf(row: Pick<BoardRow, 'bandCodes' | 'hours'>): { text: str
   if (row.hours !== null)
     return { text: quantityText(row.hours, 'h', row.hours < 20 ? 1 : 0), where: 'endurance' }
   return row.bandCodes === '' ? null : { text: 'mains', where: 'or a vehicle' }
+}
+
+const JUST_NOW_MS = 60_000
+
+/** `updated just now` for a minute, then `updated 18:02`. */
+export function updatedText(atMs: number, nowMs: number, zone: string): string {
+  return nowMs - atMs < JUST_NOW_MS ? 'updated just now' : `updated ${wallClock(atMs, zone).time}`
 }
