@@ -34,6 +34,14 @@ export const routes: RouteRecordRaw[] = [
     meta: { title: 'Record a test', roles: CREW, light: true },
   },
   {
+    // Of the procedures only the count tests a whole kit.
+    path: '/kits/:kitId/tests/new/:procedure(count)',
+    name: 'record-kit-test',
+    component: () => import('@/views/RecordKitTestView.vue'),
+    props: true,
+    meta: { title: 'Count a kit', roles: CREW, light: true },
+  },
+  {
     path: '/profile',
     name: 'profile',
     component: () => import('@/views/ProfileView.vue'),

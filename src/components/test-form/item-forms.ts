@@ -7,4 +7,12 @@ import type { Procedure } from '#shared/engine/vocabulary.ts'
  */
 export const itemForms: Partial<Record<Procedure, Component>> = {
   'heat-test': defineAsyncComponent(() => import('@/components/heat-test/HeatTestRun.vue')),
+  'pair-loss': defineAsyncComponent(() => import('./PairLossForm.vue')),
+  'antenna-sweep': defineAsyncComponent(() => import('./AntennaSweepForm.vue')),
+  'feedline-loss': defineAsyncComponent(() => import('./FeedlineLossForm.vue')),
+  'battery-capacity': defineAsyncComponent(() => import('./BatteryCapacityForm.vue')),
+  'radio-check': defineAsyncComponent(() => import('./RadioCheckForm.vue')),
+  inspection: defineAsyncComponent(() => import('./InspectionForm.vue')),
+  calibration: defineAsyncComponent(() => import('./CalibrationForm.vue')),
+  'boot-and-update': defineAsyncComponent(() => import('./BootAndUpdateForm.vue')),
 }
