@@ -4,10 +4,12 @@ import { ConfigError, readConfig, type Config } from './config.ts'
 import type { AppContext } from './context.ts'
 import { createDataSource } from './data-source.ts'
 import { createHttpServer, listen } from './http-server.ts'
+import { startJobs } from './jobs/index.ts'
 import { boardHub } from './live/board-hub.ts'
 import { createLog } from './log.ts'
 import { prepareDatabase } from './prepare-database.ts'
 import { startHousekeeping } from './services/housekeeping.ts'
+import { smtpTransport } from './services/mail-transport.ts'
 import { Shutdown } from './shutdown.ts'
 
 /** sysexits.h EX_CONFIG: a wrong setting; starting again does not help. */
@@ -47,6 +49,7 @@ function beginPreparing(ctx: AppContext): { ready: Promise<void>; away: Promise<
 async function startParts(ctx: AppContext, shutdown: Shutdown): Promise<void> {
   await shutdown.add(boardHub(ctx))
   await shutdown.add(startHousekeeping(ctx))
+  if (ctx.config.jobs) await shutdown.add(await startJobs(ctx, smtpTransport(ctx.config.smtpUrl)))
 }
 
 function endOnSignals(shutdown: Shutdown): void {

@@ -42,7 +42,12 @@ export async function startJobs(ctx: AppContext, transport: MailTransport): Prom
     const cron = SCHEDULES[queue]
     if (cron) await boss.schedule(queue, cron)
   }
-  return { stop: () => boss.stop({ graceful: true, wait: true, timeout: 8000 }) }
+  return {
+    stop: async () => {
+      await boss.stop({ graceful: true, wait: true, timeout: 8000 })
+      transport.close()
+    },
+  }
 }
 
 /** Scheduled jobs carry no data: one run serves all that piled up. */

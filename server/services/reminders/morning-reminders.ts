@@ -3,7 +3,7 @@ import { systemActor } from '../../caller.ts'
 import type { AppContext } from '../../context.ts'
 import { inGroup, type GroupTx, type Statement } from '../../group-transaction.ts'
 import { poolOf } from '../../pool.ts'
-import { dueChecksOfGroup } from '../due-checks.ts'
+import { dueChecksOf } from '../readiness/due-checks.ts'
 import { queueMail } from '../queue-mail.ts'
 import { outlooks, type Outlook } from './outlook.ts'
 import { recipientsOf, type Recipient } from './recipients.ts'
@@ -46,7 +46,7 @@ export async function remindGroup(ctx: AppContext, tx: GroupTx): Promise<void> {
   if (!claimed) return
   const recipients = await recipientsOf(tx, today)
   if (recipients.length === 0) return
-  const checks = await dueChecksOfGroup(tx)
+  const checks = await dueChecksOf(tx)
   const kits = await outlooks(tx)
   const [group] = await tx.sql<{ name: string }>(GROUP_NAME, [tx.groupId])
   for (const recipient of recipients) {
