@@ -1,0 +1,25 @@
+import { inspection } from './evidence.ts'
+import type { Ids } from './operations.ts'
+
+/** Bodies where the schema alone does not tell what is valid. */
+export const BODIES: Readonly<Record<string, (ids: Ids) => object>> = {
+  'change-stock': () => ({ difference: '1', reason: 'Bought' }),
+  'move-item': (ids) => ({
+    moveId: ids('moveId'),
+    from: { kind: 'nowhere' },
+    to: { kind: 'place', placeId: ids('placeId') },
+  }),
+  'print-tag-sheet': (ids) => ({
+    selection: { kind: 'chosen', kitIds: [ids('kitId')], itemIds: [] },
+    format: { kind: 'sheet', paper: 'a4', size: 'lid' },
+  }),
+  'raise-check': (ids) => ({
+    procedure: 'inspection',
+    itemId: ids('itemId'),
+    cause: 'drop',
+    reason: 'It fell off the tailgate',
+    dueOn: '2026-06-10',
+  }),
+  'raise-recall': () => ({ band: null, reason: 'A sibling failed', dueOn: '2026-06-10' }),
+  'record-test': (ids) => inspection(ids('itemId'), '2026-05-01T12:00:00Z'),
+}
