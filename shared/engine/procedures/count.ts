@@ -42,7 +42,7 @@ export function judgeCount(inputs: CountInputs, plan: Plan): Outcome<Judgement> 
 
 function positionFinding({ id, name, quantity }: Position, found: number): TestFinding {
   const finding = found < quantity ? 'fail' : 'pass'
-  const short = found === 0 ? `${name} missing` : `only ${found} of ${quantity} ${name}`
+  const short = found === 0 ? `${name} missing` : `${name}: ${found} of ${quantity}`
   return findingOf({
     positionId: id,
     measure: 'present',
