@@ -63,7 +63,13 @@ async function requireSameCreation(tx: GroupTx, { memberId, body }: NewPerson): 
   if (!first || !sameContent(first.after, body)) throw idTaken()
 }
 
-async function insertPerson(tx: GroupTx, ctx: AppContext, { memberId, body }: NewPerson): Promise<void> {
+async function insertPerson(tx: GroupTx, ctx: AppContext, person: NewPerson): Promise<void> {
+  await enrolPerson(tx, person)
+  await mailPasswordLink(tx, ctx, { memberId: person.memberId, purpose: 'invitation' })
+}
+
+/** Adds a member without inviting them: nothing is mailed. */
+export async function enrolPerson(tx: GroupTx, { memberId, body }: NewPerson): Promise<void> {
   await namingEmail(() => insertRow(tx, { memberId, body }))
   await record(tx, {
     action: 'member-added',
@@ -72,7 +78,6 @@ async function insertPerson(tx: GroupTx, ctx: AppContext, { memberId, body }: Ne
     summary: `added ${body.name} as ${body.roles.join(', ')}`,
     after: body,
   })
-  await mailPasswordLink(tx, ctx, { memberId, purpose: 'invitation' })
 }
 
 async function insertRow(tx: GroupTx, { memberId, body }: NewPerson): Promise<void> {
