@@ -31,6 +31,9 @@ export class Kit extends RegistryRow {
   @Column('uuid', { name: 'holder_id', nullable: true })
   holderId: string | null
 
+  @Column('uuid', { name: 'responsible_id', nullable: true })
+  responsibleId: string | null
+
   @Column('text', { name: 'seal_number', nullable: true })
   sealNumber: string | null
 

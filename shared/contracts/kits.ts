@@ -14,6 +14,8 @@ export const kitBody = z.strictObject({
   homePlaceId: id.nullable().default(null),
   /** Where the kit is now; null while it is with a holder or nobody knows. */
   placeId: id.nullable().default(null),
+  /** Who answers for it and is reminded of what falls due; whoever it is assigned to comes first. */
+  responsibleId: id.nullable().default(null),
   sealNumber: line(40, 1).nullable().default(null),
   /** False: the seal is broken or is not the recorded one, and the kit is not proven until counted. */
   sealMatches: z.boolean().default(true),
@@ -32,6 +34,8 @@ const kitFields = {
   expectedReturnOn: plainDate.nullable(),
   /** Who has it, where it is assigned to a member. */
   holder: named.nullable(),
+  /** Who answers for it while nobody holds it. */
+  responsible: named.nullable(),
   /** As of this moment; null until readiness was computed. */
   verdict: verdict.nullable(),
   /** Null: no end in sight, or no verdict. */

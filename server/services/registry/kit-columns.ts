@@ -12,12 +12,12 @@ export const KIT_VERDICT = `CASE WHEN b.valid_until > $2 THEN b.verdict ELSE (
 export const KIT_COLUMNS = `t.id, t.tag, t.designation, t.availability, t.availability_reason,
   t.expected_return_on::text, t.kit_kind_id, kk.code AS kind_code, kk.name AS kind_name, kk.station,
   t.home_place_id, hp.name AS home_place_name, t.place_id, p.name AS place_name,
-  t.holder_id, m.name AS holder_name, ${RECORD_COLUMNS}, ${KIT_VERDICT} AS verdict,
+  t.holder_id, m.name AS holder_name, t.responsible_id, rm.name AS responsible_name, ${RECORD_COLUMNS}, ${KIT_VERDICT} AS verdict,
   CASE WHEN b.valid_until > $2 AND b.holds_until < 'infinity' THEN b.holds_until END AS holds_until`
 
 export const KIT_TABLES = `kit t JOIN kit_kind kk ON kk.id = t.kit_kind_id
   LEFT JOIN place hp ON hp.id = t.home_place_id LEFT JOIN place p ON p.id = t.place_id
-  LEFT JOIN member m ON m.id = t.holder_id LEFT JOIN board_row b ON b.kit_id = t.id`
+  LEFT JOIN member m ON m.id = t.holder_id LEFT JOIN member rm ON rm.id = t.responsible_id LEFT JOIN board_row b ON b.kit_id = t.id`
 
 export interface KitColumns extends RecordColumns {
   id: string
@@ -36,6 +36,8 @@ export interface KitColumns extends RecordColumns {
   place_name: string | null
   holder_id: string | null
   holder_name: string | null
+  responsible_id: string | null
+  responsible_name: string | null
   verdict: Verdict | null
   holds_until: Date | null
 }
@@ -52,6 +54,7 @@ export function kitFieldsOf(row: KitColumns): Answer {
     availabilityReason: row.availability_reason,
     expectedReturnOn: row.expected_return_on,
     holder: namedOf(row.holder_id, row.holder_name),
+    responsible: namedOf(row.responsible_id, row.responsible_name),
     verdict: row.verdict,
     holdsUntil: instant(row.holds_until),
     ...recordFieldsOf(row),

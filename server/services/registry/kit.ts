@@ -14,7 +14,7 @@ type Body = z.output<typeof kitBody>
 type Answer = z.input<typeof kitRecord>
 
 async function check(tx: GroupTx, body: Body, row: Kit | null): Promise<void> {
-  const { kitKindId, homePlaceId, placeId } = body
+  const { kitKindId, homePlaceId, placeId, responsibleId } = body
   await requireReference(tx, {
     to: 'kit-kind',
     id: kitKindId,
@@ -28,6 +28,12 @@ async function check(tx: GroupTx, body: Body, row: Kit | null): Promise<void> {
     before: row?.homePlaceId,
   })
   await requireReference(tx, { to: 'place', id: placeId, pointer: '#/placeId', before: row?.placeId })
+  await requireReference(tx, {
+    to: 'member',
+    id: responsibleId,
+    pointer: '#/responsibleId',
+    before: row?.responsibleId,
+  })
   if (row?.designation !== body.designation) await claimDesignation(tx, 'kit', body.designation)
   if (row && row.kitKindId !== kitKindId && (await itemsIn(tx, row.id)) > 0) {
     throw new AppError('state-conflict', `${row.designation} keeps its kind while something is packed in it.`)

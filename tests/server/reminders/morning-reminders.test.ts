@@ -1,7 +1,10 @@
+import pg from 'pg'
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest'
 import { remindAllGroups } from '#server/services/reminders/morning-reminders.ts'
 import { fullCount, givenStation, recorded, type Station } from '../../support/evidence.ts'
 import { startTestApp, type TestApp, type TestGroup, type TestMember } from '../../support/test-app.ts'
+
+const CLEAR = 'DELETE FROM reminder; DELETE FROM reminder_run; DELETE FROM mail'
 
 interface QueuedMail {
   recipient: string
@@ -25,11 +28,8 @@ describe('morning reminders', () => {
     keeper = await app.givenMember(group, { name: 'Quentin', roles: ['quartermaster', 'administrator'] })
     holder = await app.givenMember(group, { name: 'Holda' })
     await app.givenMember(group, { name: 'Idle' })
-    station = await givenStation(keeper)
+    station = await givenStation(keeper, { kit: { responsibleId: holder.memberId } })
     await recorded(keeper, fullCount(station.kit, '2025-05-01T11:00:00Z'))
-    await app.inGroup(group, (tx) =>
-      tx.manager.query('UPDATE kit SET responsible_id = $1 WHERE id = $2', [holder.memberId, station.kit.id]),
-    )
     app.clock.set('2026-06-01T12:00:00Z')
   })
 
@@ -121,7 +121,7 @@ describe('morning reminders', () => {
       })
       expect(response.status).toBe(204)
     }
-    await ownerQuery(app, 'DELETE FROM reminder; DELETE FROM reminder_run; DELETE FROM mail')
+    await ownerQuery(app, CLEAR)
     await remindAllGroups(app.ctx)
     expect((await mails()).map(({ recipient }) => recipient)).toEqual([keeper.email])
     const link = path.replace('/stop', '')
@@ -137,13 +137,8 @@ describe('morning reminders', () => {
 })
 
 /** As the owner of the tables: what the application itself may not do. */
-async function ownerQuery(app: TestApp, sql: string) {
-  const { Client } = (await import('pg')).default
-  const client = new Client({ connectionString: app.database!.ownerUrl })
+async function ownerQuery(app: TestApp, sql: string): Promise<void> {
+  const client = new pg.Client({ connectionString: app.database!.ownerUrl })
   await client.connect()
-  try {
-    return { rows: await client.query(sql) }
-  } finally {
-    await client.end()
-  }
+  await client.query(sql).finally(() => client.end())
 }
