@@ -2,7 +2,14 @@ import type { Band } from '../vocabulary.ts'
 import { doubtAbout, openRecall, type Doubt } from './doubt.ts'
 import type { Moment } from './moment.ts'
 import { bandsNamed } from './rules-in-force.ts'
-import { candidates, dueOf, hasPassed, lateRaisedCheck, type Candidate } from './standing.ts'
+import {
+  candidates,
+  dueOf,
+  hasPassed,
+  lateRaisedCheck,
+  openRaisedChecks,
+  type Candidate,
+} from './standing.ts'
 import type { RaisedCheck, Rule } from './types.ts'
 
 /** What the heat tests of a transformer say about one band. */
@@ -20,7 +27,8 @@ export type HeatStanding =
       readonly failed: Candidate | null
     }
   | { readonly state: 'out'; readonly failed: Candidate }
-  | { readonly state: 'lapsed'; readonly by: Candidate; readonly raised: RaisedCheck | null }
+  /** `by` is null where an event asked for a first test. */
+  | { readonly state: 'lapsed'; readonly by: Candidate | null; readonly raised: RaisedCheck | null }
   /** `by` is null where a recall came before any test. */
   | { readonly state: 'in-doubt'; readonly by: Candidate | null; readonly doubt: Doubt }
 
@@ -49,12 +57,11 @@ export function heatStanding(
   const late = lateRaisedCheck(moment, asked)
   const [best] = passes.filter(({ test }) => !late && !hasPassed(moment, dueOf(test, rule)))
   if (best) return standsOn(moment, asked, best, failed)
+  const without = withoutOwnTest(moment, asked)
+  if (!failed && without.state === 'not-asked') return without
   if (doubted) return doubted
   if (passes[0]) return { state: 'lapsed', by: passes[0], raised: late ?? null }
-  if (failed) return { state: 'out', failed }
-  const recall = openRecall(moment, subjectId, 'heat-test', band)
-  if (recall) return { state: 'in-doubt', by: null, doubt: { kind: 'recall', check: recall } }
-  return withoutOwnTest(moment, asked)
+  return failed ? { state: 'out', failed } : without
 }
 
 interface Sorted {
@@ -62,18 +69,26 @@ interface Sorted {
   readonly passes: readonly Candidate[]
   /** The failure at the lowest power among those that are newer than the passes. */
   readonly failed: Candidate | null
-  readonly doubted: HeatStanding | null
+  readonly doubted: Doubted | null
+}
+
+interface Doubted {
+  readonly state: 'in-doubt'
+  readonly by: Candidate
+  readonly doubt: Doubt
 }
 
 function sort(moment: Moment, asked: HeatAsked): Sorted {
   const passes: Candidate[] = []
   let failed: Candidate | null = null
-  let doubted: HeatStanding | null = null
+  let doubted: Doubted | null = null
   for (const candidate of candidates(moment, asked)) {
     const doubt = doubtAbout(moment, candidate.test, asked.band)
     const fails = candidate.finding.finding === 'fail'
     if (doubt) {
-      doubted ??= { state: 'in-doubt', by: candidate, doubt }
+      // A pass in doubt hides no failure that is sure, and a failure in doubt softens none.
+      if (!failed || (!fails && powerOf(candidate) < powerOf(failed)))
+        doubted ??= { state: 'in-doubt', by: candidate, doubt }
       // What is older than a doubted failure cannot be relied on either.
       if (fails) break
     } else if (fails) {
@@ -82,7 +97,8 @@ function sort(moment: Moment, asked: HeatAsked): Sorted {
     } else if (!failed || powerOf(candidate) < powerOf(failed)) passes.push(candidate)
   }
   passes.sort((a, b) => powerOf(b) - powerOf(a) || b.test.performedAt - a.test.performedAt)
-  return { passes, failed, doubted }
+  const hides = doubted && failed && powerOf(doubted.by) >= powerOf(failed)
+  return { passes, failed, doubted: hides ? null : doubted }
 }
 
 /** Passed since at the same power or more: the failure is answered. */
@@ -110,6 +126,12 @@ function askedPower(rule: Rule | undefined): number {
 
 /** What a band is without a full heat test of its own. */
 function withoutOwnTest(moment: Moment, { subjectId, rule, band }: HeatAsked): HeatStanding {
+  const recall = openRecall(moment, subjectId, 'heat-test', band)
+  if (recall) return { state: 'in-doubt', by: null, doubt: { kind: 'recall', check: recall } }
+  const raised = openRaisedChecks(moment, subjectId, band).find(
+    (check) => check.band === band && check.procedure === 'heat-test' && hasPassed(moment, check.dueOn),
+  )
+  if (raised) return { state: 'lapsed', by: null, raised }
   if (!rule) return { state: 'not-asked' }
   const named = bandsNamed(rule)
   if (named) return { state: named.includes(band) ? 'never' : 'not-asked' }

@@ -1,7 +1,7 @@
 import { replaceAction, strongerAction } from './actions.ts'
 import { reasonAbout } from './reason.ts'
 import { leadText, ratedBelowText } from './sentences.ts'
-import { itemsOf, type FilledPosition } from './slots.ts'
+import { vitalItemsOf, type FilledPosition } from './slots.ts'
 import type { ReadinessItem, Reason } from './types.ts'
 
 /** A radio's output before any loss, and what holds it down. */
@@ -30,9 +30,9 @@ export function radioPower(
   return { allowedW: carriedW, reasons: [...reasons, tooWeak(weakest, carriedW)] }
 }
 
-/** The lead or box with the lowest rating on record. */
+/** The lead or box with the lowest rating on record, of those that the kit cannot go without: a spare caps nothing. */
 export function weakestFeed(filled: readonly FilledPosition[]): ReadinessItem | undefined {
-  return itemsOf(filled, 'dc-lead', 'distribution-box')
+  return vitalItemsOf(filled, 'dc-lead', 'distribution-box')
     .filter(({ facts }) => facts.ratedA !== undefined)
     .sort((a, b) => a.facts.ratedA! - b.facts.ratedA!)[0]
 }

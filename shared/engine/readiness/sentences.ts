@@ -100,6 +100,7 @@ export function heatUnprovenText(
   if (standing.state === 'never') return neverText(name, 'heat-test', band)
   if (standing.state === 'in-doubt') return doubtText(name, 'heat-test', standing.doubt, band)
   if (standing.raised) return raisedText(name, standing.raised)
+  if (!standing.by) return neverText(name, 'heat-test', band)
   return lapsedText(name, 'heat-test', standing.by.test.performedOn, band)
 }
 

@@ -35,10 +35,10 @@ export function itemsOf(filled: readonly FilledPosition[], ...categories: Catego
     .flatMap(({ working }) => working)
 }
 
-export function vitalItemsOf(filled: readonly FilledPosition[], category: Category): ReadinessItem[] {
+export function vitalItemsOf(filled: readonly FilledPosition[], ...categories: Category[]): ReadinessItem[] {
   return itemsOf(
     filled.filter(({ position }) => position.vital),
-    category,
+    ...categories,
   )
 }
 
