@@ -33,16 +33,7 @@ describe('morning reminders', () => {
     app.clock.set('2026-06-01T12:00:00Z')
   })
 
-  beforeEach(() =>
-    app.inGroup(group, async (tx) => {
-      const { rows } = await ownerQuery(
-        app,
-        'DELETE FROM reminder; DELETE FROM reminder_run; DELETE FROM mail',
-      )
-      expect(rows).toBeDefined()
-      expect(tx.groupId).toBe(group.id)
-    }),
-  )
+  beforeEach(() => ownerQuery(app, CLEAR))
 
   afterAll(() => app.close())
 
