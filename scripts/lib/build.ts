@@ -10,7 +10,7 @@ if (!isBuilt()) {
   const draft = join(stateFolder, 'dist.new')
   const old = join(stateFolder, 'dist.old')
   const hash = sourcesHash()
-  await build({ root, logLevel: 'warn', build: { outDir: draft, emptyOutDir: true } })
+  await build({ root, logLevel: 'error', build: { outDir: draft, emptyOutDir: true } })
   writeFileSync(join(draft, STAMP), hash)
   rmSync(old, { recursive: true, force: true })
   if (existsSync(dist)) renameSync(dist, old)

@@ -51,14 +51,20 @@ then start this again."
 
 # argon2 brings a program ready made, which not every Node 20 can load: it may crash at once.
 loads_argon2() {
-  (ulimit -c 0 && node -e 'require("argon2")') >/dev/null 2>&1
+  { (ulimit -c 0 && node -e 'require("argon2")'); } >/dev/null 2>&1
 }
 
-# Two starts in one clone must not install over each other: whoever waited finds the work done.
+# Two starts in one clone must not install over each other: whoever waited finds the work done. `exec 9>&-` lets go.
+lock_npm() {
+  exec 9>.halyard/npm.lock
+  flock -n 9 && return
+  say 'Waiting for another scripts/start or scripts/test of this clone, which installs npm packages'
+  flock 9
+}
+
 install_npm_packages() {
   node scripts/lib/is-installed.mjs && return
-  exec 9>.halyard/npm.lock
-  flock 9
+  lock_npm
   if ! node scripts/lib/is-installed.mjs; then
     say 'Installing npm packages (npm ci)'
     # No package but argon2 needs its install script. The signal ends npm should this script be killed.
@@ -72,8 +78,7 @@ install_npm_packages() {
 build_argon2() {
   local prefix
   prefix=$(dirname "$(dirname "$(readlink -f "$(command -v node)")")")
-  exec 9>.halyard/npm.lock
-  flock 9
+  lock_npm
   if ! loads_argon2; then
     say 'Building argon2 for this machine'
     [ ! -e "$prefix/include/node/node_api.h" ] || export npm_config_nodedir=$prefix

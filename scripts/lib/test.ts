@@ -1,6 +1,7 @@
 // What scripts/test does once Node and the npm packages are there: `test.ts [checks] [unit] [api] [browser]`.
-import { mkdirSync, rmSync } from 'node:fs'
+import { mkdirSync, readdirSync, rmSync } from 'node:fs'
 import { join, relative } from 'node:path'
+import { isAlive } from './child.ts'
 import { Ending } from './ending.ts'
 import { root } from './paths.ts'
 import { runStep, type Run, type Tally } from './run-step.ts'
@@ -24,6 +25,7 @@ const NOT_FOR_TESTS = [
 ]
 
 async function test(): Promise<number> {
+  removeOldReports()
   mkdirSync(folder, { recursive: true })
   const run: Run = { folder, env: testEnvironment(await openCluster()), ending }
   const steps = STEPS.filter(({ part }) => parts.has(part))
@@ -32,7 +34,15 @@ async function test(): Promise<number> {
     run,
   )
   for (const step of steps.filter(({ part }) => part !== 'checks')) tallies.push(await runStep(step, run))
-  return report(tallies)
+  return ending.hasBegun ? 1 : report(tallies)
+}
+
+/** Of runs that have ended; one that still goes on beside us keeps its own. */
+function removeOldReports(): void {
+  const reports = join(root, 'test-results')
+  mkdirSync(reports, { recursive: true })
+  const ended = readdirSync(reports).filter((name) => /^\d+$/.test(name) && !isAlive(Number(name)))
+  for (const name of ended) rmSync(join(reports, name), { recursive: true, force: true })
 }
 
 /** API and browser tests share one cluster; the other parts need none. */
