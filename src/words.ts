@@ -99,6 +99,12 @@ export const ROLE_WORDS: Readonly<Record<Role, string>> = {
   observer: 'Observer',
 }
 
+export const SIGN_IN_WORDS = {
+  active: 'Signs in',
+  invited: 'Invited',
+  'no-sign-in': 'No sign-in',
+} as const
+
 /** `1 kit`, `2 kits`: the noun's plural is given where it is not the noun and an s. */
 export function counted(count: number, one: string, many = `${one}s`): string {
   return `${count} ${count === 1 ? one : many}`

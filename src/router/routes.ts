@@ -1,5 +1,5 @@
 import type { RouteRecordRaw } from 'vue-router'
-import { ANY_MEMBER, CREW } from '#shared/contracts/roles.ts'
+import { ADMINISTRATORS, ANY_MEMBER, CREW } from '#shared/contracts/roles.ts'
 
 /**
  * Every page, one table. The name is the slug of the page; views are loaded when they are first opened. `light` pages
@@ -40,6 +40,44 @@ export const routes: RouteRecordRaw[] = [
     component: () => import('@/views/RecordKitTestView.vue'),
     props: true,
     meta: { title: 'Count a kit', roles: CREW, light: true },
+  },
+  {
+    path: '/due',
+    name: 'tests',
+    component: () => import('@/views/DueChecksView.vue'),
+    meta: { title: 'Tests due', roles: CREW, light: true },
+  },
+  {
+    path: '/people',
+    name: 'people',
+    component: () => import('@/views/PeopleView.vue'),
+    meta: { title: 'People', roles: ADMINISTRATORS },
+  },
+  {
+    path: '/people/new',
+    name: 'new-person',
+    component: () => import('@/views/InvitePersonView.vue'),
+    meta: { title: 'Invite somebody', roles: ADMINISTRATORS },
+  },
+  {
+    path: '/people/undelivered',
+    name: 'undelivered',
+    component: () => import('@/views/UndeliveredView.vue'),
+    meta: { title: 'Undelivered mail', roles: ADMINISTRATORS, light: true },
+  },
+  {
+    path: '/people/:memberId',
+    name: 'person',
+    component: () => import('@/views/PersonView.vue'),
+    props: true,
+    meta: { title: 'Member', roles: ADMINISTRATORS },
+  },
+  {
+    path: '/reminders/:token',
+    name: 'reminder-link',
+    component: () => import('@/views/ReminderLinkView.vue'),
+    props: true,
+    meta: { title: 'Your reminders', public: true, light: true },
   },
   {
     path: '/profile',
