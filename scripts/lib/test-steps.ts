@@ -29,6 +29,9 @@ const vitest = (part: 'unit' | 'api', name: string): Step => ({
   count: countVitest,
 })
 
+/** Made once, so that no API or browser test waits for it; part of every run that has a PostgreSQL. */
+export const DEMO_STEP: Step = check('Demo group loads', 'node', script('make-templates.ts'))
+
 /** The long ones first, so that two lanes end at about the same time. REPORT stands for the step's report file. */
 export const STEPS: readonly Step[] = [
   check('Types of every project reference', 'flock', [

@@ -6,7 +6,7 @@ import { Ending } from './ending.ts'
 import { root } from './paths.ts'
 import { runStep, type Run, type Tally } from './run-step.ts'
 import { startTestCluster } from './test-cluster.ts'
-import { PARTS, STEPS, type Part, type Step } from './test-steps.ts'
+import { DEMO_STEP, PARTS, STEPS, type Part, type Step } from './test-steps.ts'
 
 const asked = process.argv.slice(2) as Part[]
 const parts = new Set<Part>(asked.length > 0 ? asked : PARTS)
@@ -27,12 +27,11 @@ const NOT_FOR_TESTS = [
 async function test(): Promise<number> {
   removeOldReports()
   mkdirSync(folder, { recursive: true })
-  const run: Run = { folder, env: testEnvironment(await openCluster()), ending }
+  const testPg = await openCluster()
+  const run: Run = { folder, env: testEnvironment(testPg), ending }
   const steps = STEPS.filter(({ part }) => parts.has(part))
-  const tallies = await runTogether(
-    steps.filter(({ part }) => part === 'checks'),
-    run,
-  )
+  const together = steps.filter(({ part }) => part === 'checks')
+  const tallies = await runTogether(testPg ? [DEMO_STEP, ...together] : together, run)
   for (const step of steps.filter(({ part }) => part !== 'checks')) tallies.push(await runStep(step, run))
   return ending.hasBegun ? 1 : report(tallies)
 }
