@@ -14,7 +14,7 @@ import {
 } from './sentences.ts'
 import { itemsOf, type FilledPosition } from './slots.ts'
 import { standingOf } from './standing.ts'
-import type { Evidence, ReadinessItem, Reason } from './types.ts'
+import type { Action, Evidence, ReadinessItem, Reason } from './types.ts'
 
 export interface Endurance {
   /** h; null when no battery counts or nobody measured the load. */
@@ -36,16 +36,16 @@ export function judgeEndurance(moment: Moment, filled: readonly FilledPosition[]
     working.map((item) => judgeBattery(moment, item, position.vital)),
   )
   const counted = judged.flatMap(({ counted: one }) => one ?? [])
+  const found = judged.flatMap(({ reasons }) => reasons)
+  // What lifts a battery's own reason brings its hours back; without one, better batteries do.
+  const fix = found[0]?.action ?? BATTERIES_ACTION
   const loadA = meanLoadA(filled)
   const hours = counted.length > 0 && loadA !== null ? hoursAt(counted, loadA) : null
   return {
     hours,
     usableAh: counted.length > 0 ? counted.reduce((sum, battery) => sum + battery.usableAh, 0) : null,
     factors: [...counted.map(({ factor }) => factor), ...(loadA === null ? [] : [loadText(loadA)])],
-    reasons: [
-      ...judged.flatMap(({ reasons }) => reasons),
-      ...hoursReasons(moment.state.promise.hours, counted, hours),
-    ],
+    reasons: [...found, ...hoursReasons(moment.state.promise.hours, { hours, counted: counted.length }, fix)],
     tests: judged.flatMap(({ tests }) => tests),
   }
 }
@@ -93,14 +93,14 @@ function batteryReason(item: ReadinessItem, code: string, text: string, test: Ev
 
 function hoursReasons(
   promised: number | null,
-  counted: readonly CountedBattery[],
-  hours: number | null,
+  { hours, counted }: { hours: number | null; counted: number },
+  action: Action,
 ): Reason[] {
   if (promised === null) return []
-  const limit = { level: 'limit', action: BATTERIES_ACTION } as const
-  if (counted.length === 0) return [reasonOf({ code: 'no-battery-endurance', text: NO_ENDURANCE, ...limit })]
-  if (hours === null)
-    return [reasonOf({ code: 'hours-unknown', text: HOURS_UNKNOWN, ...limit, action: MEASURE_LOAD_ACTION })]
-  if (hours >= promised) return []
-  return [reasonOf({ code: 'hours-short', text: hoursShortText(hours, promised), ...limit })]
+  const limit = (code: string, text: string, lift = action) => [
+    reasonOf({ code, level: 'limit', text, action: lift }),
+  ]
+  if (counted === 0) return limit('no-battery-endurance', NO_ENDURANCE)
+  if (hours === null) return limit('hours-unknown', HOURS_UNKNOWN, MEASURE_LOAD_ACTION)
+  return hours < promised ? limit('hours-short', hoursShortText(hours, promised)) : []
 }
