@@ -1,12 +1,9 @@
 import { z } from 'zod'
 import { defineEndpoint } from './endpoint.ts'
 import { amount, id, line, newId, page, pageQuery, plainDate, text } from './fields.ts'
-import { CREW, type Role } from './roles.ts'
+import { CREW, POLICY_MAKERS } from './roles.ts'
 import { ruleBody } from './rules.ts'
 import { answeredAt, procedure } from './words.ts'
-
-/** Who may change what counts as proof. */
-export const POLICY_MAKERS: readonly Role[] = ['administrator', 'net-coordinator']
 
 export const policySettings = z.strictObject({
   /** Usable fraction of the measured capacity by chemistry. */

@@ -19,3 +19,6 @@ export const ADMINISTRATORS: readonly Role[] = ['administrator']
 
 /** Rights that need the password again an hour after it was given. */
 export const ROLES_THAT_RENEW: readonly Role[] = ['administrator', 'quartermaster']
+
+/** Who may change what counts as proof. */
+export const POLICY_MAKERS: readonly Role[] = ['administrator', 'net-coordinator']

@@ -21,3 +21,17 @@ export function limitLines(limits: Readonly<Record<string, unknown>>, text: Unit
     typeof value === 'number' && LINES[name] ? [LINES[name](value, text)] : [],
   )
 }
+
+/** The limits of a rule as labels of a form. */
+export const LIMIT_WORDS: Readonly<Record<string, { readonly label: string; readonly unit?: string }>> = {
+  powerW: { label: 'Carrier', unit: 'W' },
+  minutes: { label: 'Keyed for', unit: 'min' },
+  maxC: { label: 'Stop at', unit: '°C' },
+  maxSwrChange: { label: 'SWR may move by' },
+  minEfficiency: { label: 'Efficiency at least', unit: '0 to 1' },
+  maxSwr: { label: 'SWR at most' },
+  maxRiseDb: { label: 'Loss over its baseline at most', unit: 'dB' },
+  minCapacityFraction: { label: 'Capacity at least', unit: '0 to 1 of the rating' },
+  minPowerFraction: { label: 'Power at least', unit: '0 to 1 of the setting' },
+  voiceOnlyAfterMonths: { label: 'Voice only after', unit: 'months' },
+}

@@ -1,5 +1,5 @@
 import type { RouteRecordRaw } from 'vue-router'
-import { ADMINISTRATORS, ANY_MEMBER, CREW } from '#shared/contracts/roles.ts'
+import { ADMINISTRATORS, ANY_MEMBER, CREW, POLICY_MAKERS } from '#shared/contracts/roles.ts'
 
 /**
  * Every page, one table. The name is the slug of the page; views are loaded when they are first opened. `light` pages
@@ -46,6 +46,18 @@ export const routes: RouteRecordRaw[] = [
     name: 'tests',
     component: () => import('@/views/DueChecksView.vue'),
     meta: { title: 'Tests due', roles: CREW, light: true },
+  },
+  {
+    path: '/policy',
+    name: 'policy',
+    component: () => import('@/views/PolicyView.vue'),
+    meta: { title: 'Policy', roles: CREW, light: true },
+  },
+  {
+    path: '/policy/new',
+    name: 'new-policy',
+    component: () => import('@/views/NewPolicyView.vue'),
+    meta: { title: 'New policy', roles: POLICY_MAKERS, light: true },
   },
   {
     path: '/people',
