@@ -5,7 +5,15 @@ import { root, stateFolder } from './paths.ts'
 import { treeHash } from './tree-hash.ts'
 
 /** Everything that decides what the built client looks like. */
-const SOURCES = ['index.html', 'src', 'shared', 'vite.config.ts', 'tsconfig.base.json', 'package-lock.json']
+const SOURCES = [
+  'index.html',
+  'src',
+  'shared',
+  'vite.config.ts',
+  'scripts/lib/vite-plugins.ts',
+  'tsconfig.base.json',
+  'package-lock.json',
+]
 
 /** Inside the build, so that both come and go together. */
 export const STAMP = '.sources'
