@@ -59,7 +59,7 @@ export class CreateEvidence1796000200000 implements MigrationInterface {
       performed_at timestamptz NOT NULL,
       performed_on date NOT NULL,
       recorded_at timestamptz NOT NULL,
-      claimed_ahead boolean NOT NULL DEFAULT false,
+      claimed_at timestamptz CHECK (claimed_at > recorded_at),
       operator_id uuid NOT NULL,
       recorded_by uuid NOT NULL,
       method text NOT NULL CHECK (length(method) BETWEEN 1 AND 120),

@@ -80,14 +80,13 @@ export interface EvidenceRow {
   performed_at: Date
   performed_on: string
   recorded_at: Date
-  claimed_ahead: boolean
   instrument_id: string | null
   finding: FindingWord
   findings: readonly TestFinding[]
 }
 
 export const EVIDENCE_COLUMNS = `t.id, t.procedure, coalesce(t.item_id, t.kit_id) AS subject_id, t.performed_at,
-  t.performed_on::text, t.recorded_at, t.claimed_ahead, t.instrument_id, t.finding, t.findings`
+  t.performed_on::text, t.recorded_at, t.instrument_id, t.finding, t.findings`
 
 /** Tests that were not corrected since: of the kits, of their items, and the calibrations of the instruments used. */
 export const EVIDENCE: Statement = {

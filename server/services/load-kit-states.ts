@@ -80,13 +80,12 @@ export function itemOf(row: statements.ItemRow): KitState['items'][number] {
   }
 }
 
-/** A test whose device claimed a time to come counts from its receipt (promise P7). */
 export function evidenceOf(row: statements.EvidenceRow): Evidence {
   return {
     id: row.id,
     procedure: row.procedure,
     subjectId: row.subject_id,
-    performedAt: (row.claimed_ahead ? row.recorded_at : row.performed_at).getTime(),
+    performedAt: row.performed_at.getTime(),
     performedOn: row.performed_on,
     recordedAt: row.recorded_at.getTime(),
     instrumentId: row.instrument_id,

@@ -77,7 +77,9 @@ export const storedTest = testSummary.omit({ operatorName: true }).extend({
   instrumentNote: z.string(),
   operator: named,
   recordedBy: named,
-  /** The device's clock was ahead by more than five minutes: the test counts from its receipt. */
+  /** What a device said whose clock was ahead; the test counts from its receipt. Null: the claim was taken. */
+  claimedAt: answeredAt.nullable(),
+  /** It was ahead by more than five minutes: somebody should look at that device. */
   claimedAhead: z.boolean(),
   /** As sent, by procedure. */
   inputs: z.record(z.string(), z.unknown()),

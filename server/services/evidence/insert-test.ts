@@ -10,7 +10,10 @@ export interface TestToInsert {
   readonly body: RecordTestBody
   readonly operatorId: string
   readonly performedOn: string
-  readonly claimedAhead: boolean
+  /** When it counts as done: never after its receipt. */
+  readonly performedAt: Date
+  /** What the device said, where that lies after the receipt. */
+  readonly claimedAt: Date | null
   readonly policyId: string
   readonly ruleId: string | null
   readonly judgement: Judgement
@@ -20,7 +23,7 @@ export interface TestToInsert {
 const INSERT: Statement = {
   name: 'insert-test',
   text: `INSERT INTO test (id, group_id, procedure, item_id, kit_id, performed_at, performed_on, recorded_at,
-      claimed_ahead, operator_id, recorded_by, method, instrument_id, instrument_note, inputs, results, findings,
+      claimed_at, operator_id, recorded_by, method, instrument_id, instrument_note, inputs, results, findings,
       finding, policy_id, rule_id, engine_version, notes, supersedes_id, supersedes_reason, content_hash)
     VALUES ($1, $2, $3, $4, $5, $6, $7, $8, $9, $10, $11, $12, $13, $14, $15, $16, $17, $18, $19, $20, $21, $22, $23,
       $24, $25)
@@ -37,10 +40,10 @@ export async function insertTest(tx: GroupTx, test: TestToInsert): Promise<boole
       body.procedure,
       'itemId' in body ? body.itemId : null,
       'kitId' in body ? body.kitId : null,
-      body.performedAt,
+      test.performedAt,
       test.performedOn,
       tx.now,
-      test.claimedAhead,
+      test.claimedAt,
       test.operatorId,
       tx.actor.memberId ?? test.operatorId,
       body.method,

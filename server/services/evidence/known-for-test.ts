@@ -9,17 +9,16 @@ import type { TestSubject } from './test-subject.ts'
 
 interface Parts {
   readonly body: RecordTestBody
+  readonly performedAt: Date
   readonly subject: TestSubject
   readonly rule: Rule | undefined
   readonly accuracy: Accuracy | null
 }
 
 /** What the finding of a test depends on besides its inputs; reads only what the procedure asks for. */
-export async function knownForTest(
-  tx: GroupTx,
-  { body, subject, rule, accuracy }: Parts,
-): Promise<KnownForTest> {
+export async function knownForTest(tx: GroupTx, { body, subject, ...parts }: Parts): Promise<KnownForTest> {
   const { ratedAh, chemistry } = subject.facts
+  const { rule, accuracy, performedAt } = parts
   return {
     rule,
     instrument: accuracy,
@@ -29,7 +28,7 @@ export async function knownForTest(
     },
     feedline:
       body.procedure === 'feedline-loss'
-        ? await feedlineHistory(tx, subject, body)
+        ? await feedlineHistory(tx, subject, { ...body, performedAt })
         : { baselineDb: {}, last: [] },
     plan: body.procedure === 'count' ? await loadPlan(tx, body.kitId) : { positions: [], sealNumber: null },
   }
@@ -55,7 +54,11 @@ type FeedlineTest = Extract<RecordTestBody, { procedure: 'feedline-loss' }>
 async function feedlineHistory(
   tx: GroupTx,
   subject: TestSubject,
-  { performedAt, supersedes, inputs: { readings } }: FeedlineTest,
+  {
+    performedAt,
+    supersedes,
+    inputs: { readings },
+  }: Omit<FeedlineTest, 'performedAt'> & { performedAt: Date },
 ): Promise<KnownForTest['feedline']> {
   const values = [subject.id, performedAt, supersedes?.testId ?? null]
   const rows = await tx.sql<FeedlineRow>(FEEDLINE, values)

@@ -18,19 +18,25 @@ export interface Recall {
 
 const BATCH: Statement = { name: 'recalled-batch', text: 'SELECT id FROM batch WHERE id = $1' }
 
-/** Units that work, were not asked already, and whose own newest heat test on that band did not fail: those are known. */
+/**
+ * Units that work, were not asked already, and are not known to fail on that band themselves: a failure stands until a
+ * later test at the same power or more passes; one that passes at less power only says what is left.
+ */
 const UNITS: Statement = {
   name: 'units-to-recall',
-  text: `SELECT i.id FROM item i
+  text: `WITH heat AS (
+      SELECT t.item_id, t.performed_at, t.finding, t.inputs ->> 'band' AS band, (t.inputs ->> 'powerW')::numeric AS watts
+      FROM item i JOIN test t ON t.item_id = i.id AND t.procedure = 'heat-test'
+      WHERE i.batch_id = $1 AND ($2::text IS NULL OR t.inputs ->> 'band' = $2)
+        AND NOT EXISTS (SELECT FROM test s WHERE s.supersedes_id = t.id))
+    SELECT i.id FROM item i
     WHERE i.batch_id = $1 AND i.retired_at IS NULL AND i.condition <> 'unserviceable'
       AND NOT EXISTS (SELECT FROM raised_check r WHERE r.item_id = i.id AND r.procedure = 'heat-test'
         AND r.cause = 'recall' AND r.band IS NOT DISTINCT FROM $2 AND r.withdrawn_at IS NULL
-        AND NOT EXISTS (SELECT FROM test a WHERE a.item_id = i.id AND a.procedure = 'heat-test'
-          AND a.performed_at > r.raised_at AND ($2::text IS NULL OR a.inputs ->> 'band' = $2)))
-      AND coalesce((SELECT t.finding FROM test t WHERE t.item_id = i.id AND t.procedure = 'heat-test'
-          AND ($2::text IS NULL OR t.inputs ->> 'band' = $2)
-          AND NOT EXISTS (SELECT FROM test s WHERE s.supersedes_id = t.id)
-        ORDER BY t.performed_at DESC, t.id DESC LIMIT 1), 'pass') <> 'fail'
+        AND NOT EXISTS (SELECT FROM heat a WHERE a.item_id = i.id AND a.performed_at > r.raised_at))
+      AND NOT EXISTS (SELECT FROM heat f WHERE f.item_id = i.id AND f.finding = 'fail'
+        AND NOT EXISTS (SELECT FROM heat p WHERE p.item_id = i.id AND p.finding <> 'fail' AND p.band = f.band
+          AND p.performed_at > f.performed_at AND p.watts >= f.watts))
     ORDER BY i.designation, i.id`,
 }
 

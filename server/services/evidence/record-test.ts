@@ -32,9 +32,6 @@ interface NewTest {
   readonly body: RecordTestBody
 }
 
-/** A device's clock may run ahead by this much before its claim is marked (promise P7). */
-const AHEAD_MS = 5 * 60_000
-
 /**
  * Stores a test with its results, its findings and what it did to its kits, whole or not at all. A saved test is never
  * rewritten: a resend gets the first answer again, and other content under the same id is refused.
@@ -61,7 +58,7 @@ export async function recordTestIn(tx: GroupTx, recording: Recording): Promise<S
   const kitIds = await affectedKits(tx, subject, body.procedure)
   const [, isNew] = await Promise.all([lockKits(tx, kitIds), insertTest(tx, test)])
   if (!isNew) return sameAgain(tx, testId, { known: await storedHash(tx, testId), sent: hash })
-  await applyConsequences(tx, testId, body, test.performedOn)
+  await applyConsequences(tx, test)
   const changes = await rewriteAndCompare(tx, kitIds)
   await Promise.all([insertEffects(tx, testId, changes), auditTest(tx, { subject, test })])
   return readStoredTest(tx, testId)
@@ -93,14 +90,14 @@ async function judge(
     tx.zone(),
   ])
   const claimedAt = new Date(body.performedAt)
-  // A test cannot count before it was received, whatever the device's clock said.
+  // A test cannot count before it was received, whatever the device's clock said (promise P7).
   const performedAt = claimedAt < tx.now ? claimedAt : tx.now
   const performedOn = localDay(performedAt, zone)
   const policy = policyAt({ policies }, performedAt.getTime())
   if (!policy) throw new Error('A group without a policy')
   const rule = ruleFor(policy, subject, body.procedure, performedOn)
   const accuracy = accuracyOf(instrument)
-  const judgement = judged(body, await knownForTest(tx, { body, subject, rule, accuracy }))
+  const judgement = judged(body, await knownForTest(tx, { body, performedAt, subject, rule, accuracy }))
   return {
     subject,
     test: {
@@ -108,7 +105,8 @@ async function judge(
       body,
       operatorId,
       performedOn,
-      claimedAhead: claimedAt.getTime() > tx.now.getTime() + AHEAD_MS,
+      claimedAt: claimedAt > tx.now ? claimedAt : null,
+      performedAt,
       policyId: policy.id,
       ruleId: rule?.id ?? null,
       judgement,

@@ -9,7 +9,7 @@ interface TestRow extends SummaryRow {
   operator_id: string
   recorded_by: string
   recorder_name: string
-  claimed_ahead: boolean
+  claimed_at: Date | null
   inputs: Record<string, unknown>
   results: Record<string, unknown>
   policy_id: string
@@ -31,7 +31,7 @@ interface TestRow extends SummaryRow {
 const TEST: Statement = {
   name: 'stored-test',
   text: `SELECT ${SUMMARY_COLUMNS}, t.instrument_note, t.operator_id, t.recorded_by, m.name AS recorder_name,
-      t.claimed_ahead, t.inputs, t.results, t.policy_id, p.number AS policy_number, p.name AS policy_name, t.rule_id,
+      t.claimed_at, t.inputs, t.results, t.policy_id, p.number AS policy_number, p.name AS policy_name, t.rule_id,
       r.limits AS rule_limits, r.interval_months AS rule_interval_months, r.vital AS rule_vital,
       r.reason AS rule_reason, r.source AS rule_source, t.engine_version, t.notes, t.supersedes_id,
       t.supersedes_reason, s.supersedes_reason AS superseded_reason
@@ -65,7 +65,8 @@ export async function readStoredTest(tx: GroupTx, testId: string): Promise<Store
     instrumentNote: row.instrument_note,
     operator: { id: row.operator_id, name: row.operator_name },
     recordedBy: { id: row.recorded_by, name: row.recorder_name },
-    claimedAhead: row.claimed_ahead,
+    claimedAt: row.claimed_at?.toISOString() ?? null,
+    claimedAhead: isFarAhead(row),
     inputs: row.inputs,
     results: row.results,
     judgedBy: judgedByOf(row),
@@ -96,6 +97,12 @@ function judgedByOf(row: TestRow): StoredTest['judgedBy'] {
           },
   }
 }
+
+/** A device's clock may run ahead by this much before its claim is marked (promise P7). */
+const AHEAD_MS = 5 * 60_000
+
+const isFarAhead = ({ claimed_at: claimedAt, recorded_at: recordedAt }: TestRow) =>
+  claimedAt !== null && claimedAt.getTime() > recordedAt.getTime() + AHEAD_MS
 
 const linkOf = (testId: string | null, reason: string | null) =>
   testId === null ? null : { testId, reason: reason ?? '' }

@@ -1,6 +1,7 @@
 import type { RecordTestBody } from '#shared/contracts/record-test.ts'
 import { dayText } from '#shared/engine/readiness/sentences.ts'
 import type { GroupTx, Statement } from '../../group-transaction.ts'
+import type { TestToInsert } from './insert-test.ts'
 
 /**
  * What some tests change on the things themselves, in the same transaction: an inspection decides whether an item is
@@ -9,13 +10,11 @@ import type { GroupTx, Statement } from '../../group-transaction.ts'
  */
 export async function applyConsequences(
   tx: GroupTx,
-  testId: string,
-  body: RecordTestBody,
-  performedOn: string,
-) {
+  { id, body, performedAt, performedOn }: TestToInsert,
+): Promise<void> {
   if (body.procedure !== 'inspection' && body.procedure !== 'count') return
   const subjectId = 'kitId' in body ? body.kitId : body.itemId
-  const [newer] = await tx.sql(NEWER, [subjectId, body.procedure, body.performedAt, testId])
+  const [newer] = await tx.sql(NEWER, [subjectId, body.procedure, performedAt, id])
   if (newer) return
   if (body.procedure === 'inspection') await applyInspection(tx, body)
   else await applyCount(tx, body, performedOn)
