@@ -1,29 +1,46 @@
-import express, { type Request, type Response } from 'express'
+import { isUtf8 } from 'node:buffer'
+import type { Request, Response } from 'express'
 import { AppError } from '../errors.ts'
+import { readBytes } from './read-bytes.ts'
 
 const LIMIT_BYTES = 100 * 1024
 const MAX_DEPTH = 20
 const MAX_LENGTH = 1000
 const MAX_KEY_LENGTH = 200
 
-const parser = express.json({ limit: LIMIT_BYTES, inflate: false, strict: false, type: () => true })
-
 /**
- * Reads a JSON body within the limits of promise P25. Refuses by the announced length first: the parser itself would
- * read the whole body before it answers.
+ * Reads a JSON body within the limits of promise P25. Refuses by the announced length first, before a byte is read.
+ * @throws AppError `request-malformed`, `content-type-refused` or `body-too-large`.
  */
 export async function readJsonBody(req: Request, res: Response): Promise<unknown> {
   refuseByHeaders(req, res)
-  await new Promise<void>((resolve, reject) => {
-    parser(req, res, (error?: unknown) => (error ? reject(bodyError(error, res)) : resolve()))
-  })
-  const body: unknown = req.body
-  if (body === undefined) throw new AppError('request-malformed', 'The body is empty: send JSON.')
+  const body = parseJson(await readWithin(req, res))
   if (typeof body !== 'object' || body === null || Array.isArray(body)) {
     throw new AppError('request-malformed', 'The body must be one JSON object.')
   }
   checkStructure(body, 1)
   return body
+}
+
+async function readWithin(req: Request, res: Response): Promise<Buffer> {
+  try {
+    return await readBytes(req, LIMIT_BYTES)
+  } catch (error) {
+    // The rest of the body was not read: nothing else can come on this connection.
+    res.set('Connection', 'close')
+    throw error
+  }
+}
+
+function parseJson(bytes: Buffer): unknown {
+  if (bytes.length === 0) throw new AppError('request-malformed', 'The body is empty: send JSON.')
+  if (!isUtf8(bytes)) throw new AppError('request-malformed', 'The body is not UTF-8.')
+  try {
+    return JSON.parse(bytes.toString('utf8'))
+  } catch (error) {
+    const reason = error instanceof Error ? error.message.slice(0, 120) : ''
+    throw new AppError('request-malformed', `The body is not JSON: ${reason}`)
+  }
 }
 
 function refuseByHeaders(req: Request, res: Response): void {
@@ -44,18 +61,6 @@ function refuseByHeaders(req: Request, res: Response): void {
 function refuse(res: Response, code: 'content-type-refused' | 'body-too-large', detail: string): never {
   res.set('Connection', 'close')
   throw new AppError(code, detail)
-}
-
-function bodyError(error: unknown, res: Response): unknown {
-  const { status, type } = error as { status?: number; type?: string }
-  if (status === 413) res.set('Connection', 'close')
-  if (type === 'entity.parse.failed') {
-    return new AppError(
-      'request-malformed',
-      `The body is not JSON: ${String((error as Error).message).slice(0, 120)}`,
-    )
-  }
-  return error
 }
 
 function checkStructure(value: unknown, depth: number): void {
