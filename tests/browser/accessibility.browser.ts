@@ -1,0 +1,75 @@
+import { readFileSync } from 'node:fs'
+import { createRequire } from 'node:module'
+import type { AxeResults } from 'axe-core'
+import { openAs } from './support/sign-in.ts'
+import { expect, test } from './support/test.ts'
+
+const axe = readFileSync(createRequire(import.meta.url).resolve('axe-core/axe.min.js'), 'utf8')
+
+const PAGES = [
+  '/',
+  '/kits',
+  '/items',
+  '/places',
+  '/kit-kinds',
+  '/build-sheets',
+  '/consumables',
+  '/due',
+  '/policy',
+  '/policy/new',
+  '/people',
+  '/people/new',
+  '/people/undelivered',
+  '/tags',
+  '/find',
+  '/profile',
+  '/more',
+]
+
+/** Scripts are strict, so axe is injected by the debugger, which the page's own policy does not bind. */
+async function violations(page: import('@playwright/test').Page): Promise<string[]> {
+  await page.evaluate(axe)
+  const results = await page.evaluate(
+    () =>
+      (window as unknown as { axe: { run(options: object): Promise<AxeResults> } }).axe.run({
+        runOnly: ['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa', 'best-practice'],
+      }) as Promise<AxeResults>,
+  )
+  return results.violations.map(
+    ({ id, nodes }) => `${id}: ${nodes.map(({ target }) => target.join(' ')).join(' | ')}`,
+  )
+}
+
+for (const theme of ['day', 'night'] as const) {
+  test(`axe finds nothing on any page by ${theme}`, async ({ page }) => {
+    test.setTimeout(180_000)
+    await page.addInitScript((name) => localStorage.setItem('halyard.theme', name), theme)
+    await page.goto('/')
+    expect(await violations(page), 'sign-in').toEqual([])
+    await openAs(page, 'tobin')
+    for (const path of PAGES) {
+      await page.goto(path)
+      await expect(page.getByRole('heading', { level: 1 })).toBeVisible()
+      await expect(page.locator('[aria-busy="true"]')).toHaveCount(0)
+      expect(await violations(page), path).toEqual([])
+      const wider = await page.evaluate(() => document.documentElement.scrollWidth - window.innerWidth)
+      expect(wider, `${path} is wider than the screen`).toBeLessThanOrEqual(0)
+    }
+  })
+}
+
+test('axe finds nothing on a kit, an item and a test record', async ({ page }) => {
+  await openAs(page, 'ines')
+  await page.getByRole('row', { name: /K-07/ }).getByRole('link').first().click()
+  await expect(page.getByRole('heading', { level: 1 })).toContainText('K-07')
+  expect(await violations(page), 'kit').toEqual([])
+  await page
+    .getByRole('link', { name: /^Why\?/ })
+    .first()
+    .click()
+  await expect(page.getByRole('heading', { level: 1 })).toContainText(/ of /)
+  expect(await violations(page), 'test').toEqual([])
+  await page.getByRole('link', { name: /^To / }).click()
+  await expect(page.getByText('Latest tests')).toBeVisible()
+  expect(await violations(page), 'item').toEqual([])
+})
