@@ -29,7 +29,7 @@ export interface Cell {
 
 const A4 = { pageWidthMm: 210, pageHeightMm: 297 }
 const LETTER = { pageWidthMm: 215.9, pageHeightMm: 279.4 }
-const FLAG = { columns: 2, cellWidthMm: 95, cellHeightMm: 30, gapXMm: 0 }
+const FLAG = { columns: 2, cellWidthMm: 98, cellHeightMm: 30, gapXMm: 0 }
 
 export const TAG_SHEETS: Readonly<Record<Paper, Readonly<Record<TagSize, TagSheet>>>> = {
   a4: {

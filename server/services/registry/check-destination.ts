@@ -2,6 +2,7 @@ import type { Category } from '#shared/engine/vocabulary.ts'
 import type { Item } from '../../entities/Item.ts'
 import { AppError, invalidField, notFound } from '../../errors.ts'
 import type { GroupTx, Statement } from '../../group-transaction.ts'
+import { aCategory } from './category-words.ts'
 import type { Location } from './location.ts'
 import { requireReference } from './references.ts'
 
@@ -38,7 +39,7 @@ export async function checkDestination(tx: GroupTx, item: Item, to: Location): P
   if (row.category !== item.category) {
     throw invalidField(
       '#/to/positionId',
-      `${row.name} takes ${categoryName(row.category)}, and ${item.designation} is ${categoryName(item.category)}.`,
+      `${row.name} takes ${aCategory(row.category)}, and ${item.designation} is ${aCategory(item.category)}.`,
     )
   }
   if (row.packed.length >= row.quantity) {
@@ -47,11 +48,4 @@ export async function checkDestination(tx: GroupTx, item: Item, to: Location): P
       `${row.name} of ${row.designation} is full: ${row.packed.join(', ')}. Move that out first.`,
     )
   }
-}
-
-/** "a DC lead", "an antenna": the category in a sentence. */
-function categoryName(category: Category): string {
-  const words = category === 'dc-lead' ? 'DC lead' : category.replaceAll('-', ' ')
-  const vowel = 'aei'.includes(category.charAt(0))
-  return `${vowel ? 'an' : 'a'} ${words}`
 }

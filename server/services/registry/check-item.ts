@@ -1,8 +1,10 @@
 import type { z } from 'zod'
 import type { itemBody, newItemBody } from '#shared/contracts/items.ts'
+import type { Category } from '#shared/engine/vocabulary.ts'
 import type { Item } from '../../entities/Item.ts'
 import { invalidField } from '../../errors.ts'
 import type { GroupTx, Statement } from '../../group-transaction.ts'
+import { aCategory } from './category-words.ts'
 import { claimDesignation } from './claim-designation.ts'
 import { requireReference } from './references.ts'
 
@@ -36,19 +38,19 @@ const BUILD: Statement = {
 
 async function checkBuild(tx: GroupTx, { buildSheetId, batchId, details }: Body): Promise<void> {
   if (buildSheetId === null && batchId === null) return
-  const [build] = await tx.sql<{ category: string; agrees: boolean | null }>(BUILD, [
+  const [build] = await tx.sql<{ category: Category; agrees: boolean | null }>(BUILD, [
     tx.groupId,
     buildSheetId,
     batchId,
   ])
   const pointer = buildSheetId === null ? '#/batchId' : '#/buildSheetId'
-  if (build?.category !== details.category) {
+  if (build && build.category !== details.category) {
     throw invalidField(
       pointer,
-      `That is how a ${build?.category} is made, and this is a ${details.category}.`,
+      `That is how ${aCategory(build.category)} is made, and this is ${aCategory(details.category)}.`,
     )
   }
-  if (batchId !== null && !build.agrees) {
+  if (batchId !== null && !build?.agrees) {
     throw invalidField('#/batchId', 'That batch was made by another build sheet.')
   }
 }
