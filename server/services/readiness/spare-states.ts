@@ -22,9 +22,11 @@ export interface Spare {
 const ITEMS: Statement = {
   name: 'spare-items',
   text: `SELECT ${ITEM_COLUMNS}, place_id FROM item
-    WHERE group_id = $1 AND kit_id IS NULL AND retired_at IS NULL ORDER BY designation, id`,
+    WHERE group_id = $1 AND ($2::uuid IS NULL OR id = $2) AND kit_id IS NULL AND retired_at IS NULL
+    ORDER BY designation, id`,
 }
-const SPARE = 'SELECT id FROM item WHERE group_id = $1 AND kit_id IS NULL AND retired_at IS NULL'
+const SPARE = `SELECT id FROM item
+  WHERE group_id = $1 AND ($2::uuid IS NULL OR id = $2) AND kit_id IS NULL AND retired_at IS NULL`
 const EVIDENCE: Statement = {
   name: 'spare-evidence',
   text: `WITH own AS (SELECT t.id, t.item_id AS for_item, t.instrument_id FROM test t WHERE t.item_id IN (${SPARE})),
@@ -47,14 +49,14 @@ const RAISED: Statement = {
     WHERE r.item_id IN (${SPARE}) AND r.withdrawn_at IS NULL ORDER BY r.raised_at, r.id`,
 }
 
-/** Every item in use that sits in no kit. */
-export async function loadSpares(tx: GroupTx): Promise<Spare[]> {
-  const group = [tx.groupId]
+/** Every item in use that sits in no kit, or the one named if it does. */
+export async function loadSpares(tx: GroupTx, itemId: string | null = null): Promise<Spare[]> {
+  const asked = [tx.groupId, itemId]
   const [items, evidence, instruments, raised, policies, zone] = await Promise.all([
-    tx.sql<ItemRow & { place_id: string | null }>(ITEMS, group),
-    tx.sql<EvidenceRow>(EVIDENCE, group),
-    tx.sql<InstrumentRow>(INSTRUMENTS, group),
-    tx.sql<RaisedCheckRow>(RAISED, group),
+    tx.sql<ItemRow & { place_id: string | null }>(ITEMS, asked),
+    tx.sql<EvidenceRow>(EVIDENCE, asked),
+    tx.sql<InstrumentRow>(INSTRUMENTS, asked),
+    tx.sql<RaisedCheckRow>(RAISED, asked),
     policiesOf(tx),
     tx.zone(),
   ])
