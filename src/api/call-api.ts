@@ -5,14 +5,16 @@ import { addressOf } from './address.ts'
 
 const TIME_OUT_MS = 15_000
 
-type Part<Name extends string, Value> = [Value] extends [undefined | Record<string, never>]
-  ? { readonly [K in Name]?: undefined }
-  : { readonly [K in Name]: Value }
+/** Present exactly where the contract names it. */
+type Part<E, Name extends string, Value> =
+  E extends Readonly<Record<Name, unknown>>
+    ? Readonly<Record<Name, Value>>
+    : { readonly [K in Name]?: undefined }
 
 /** What a call needs, as its contract says: `params`, `query`, `body` and, where it is versioned, `version`. */
-export type Call<E extends Endpoint> = Part<'params', ParamsOf<E>> & {
+export type Call<E extends Endpoint> = Part<E, 'params', ParamsOf<E>> & {
   readonly query?: QueryInputOf<E>
-} & Part<'body', BodyInputOf<E>> &
+} & Part<E, 'body', BodyInputOf<E>> &
   (E extends { versioned: true } ? { readonly version: number } : { readonly version?: undefined }) & {
     readonly signal?: AbortSignal
     /** An answer that was asked for before the application had loaded: read instead of asking again. */
@@ -33,14 +35,29 @@ export function setReactions(given: Reactions): void {
 }
 
 /** Asks the service; the only place that fetches. Throws `ProblemError` for every "no" and for silence. */
-export async function callApi<E extends Endpoint>(endpoint: E, call: Call<E>): Promise<ResponseOf<E>> {
+export function callApi<E extends Endpoint>(endpoint: E, call: Call<E>): Promise<ResponseOf<E>> {
+  return reacting((again) => callOnce(endpoint, again ? { ...call, early: undefined } : call))
+}
+
+/** Asks for a file, such as a PDF; problems are thrown as by `callApi`. */
+export function callForFile<E extends Endpoint & { readonly media: string }>(
+  endpoint: E,
+  call: Call<E>,
+): Promise<Blob> {
+  return reacting(async () => {
+    const response = await send(endpoint, call)
+    if (!response.ok) throw await problemOf(response)
+    return response.blob()
+  })
+}
+
+/** Does the work, once more when the service wanted the password and got it. */
+async function reacting<T>(work: (again: boolean) => Promise<T>): Promise<T> {
   try {
-    return await callOnce(endpoint, call)
+    return await work(false)
   } catch (error) {
     if (!(error instanceof ProblemError)) throw error
-    if (error.code === 'password-needed' && (await reactions.askPassword())) {
-      return callOnce(endpoint, { ...call, early: undefined })
-    }
+    if (error.code === 'password-needed' && (await reactions.askPassword())) return work(true)
     if (error.code === 'sign-in-needed') reactions.signedOut()
     throw error
   }
