@@ -1,0 +1,14 @@
+import type { FunctionalComponent, Slot, VNode } from 'vue'
+
+interface CellProps {
+  /** The slot that the list's view gives for this column, if any. */
+  draw: Slot | undefined
+  row: unknown
+  text: string
+}
+
+/** What stands in one cell: the view's own drawing, else the text, else a dash that is not read out. */
+export const RegistryCell: FunctionalComponent<CellProps> = ({ draw, row, text }): VNode[] | string =>
+  draw ? draw({ row }) : text || '–'
+
+RegistryCell.props = ['draw', 'row', 'text']
