@@ -1,5 +1,6 @@
 import type { RouteRecordRaw } from 'vue-router'
 import { ADMINISTRATORS, ANY_MEMBER, CREW, POLICY_MAKERS } from '#shared/contracts/roles.ts'
+import { registryRoutes } from './registry-routes.ts'
 
 /**
  * Every page, one table. The name is the slug of the page; views are loaded when they are first opened. `light` pages
@@ -91,6 +92,7 @@ export const routes: RouteRecordRaw[] = [
     props: true,
     meta: { title: 'Your reminders', public: true, light: true },
   },
+  ...registryRoutes,
   {
     path: '/profile',
     name: 'profile',
