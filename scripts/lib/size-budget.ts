@@ -1,4 +1,4 @@
-import { readFileSync } from 'node:fs'
+import { readFileSync, statSync } from 'node:fs'
 import { join } from 'node:path'
 import { brotliCompressSync, constants } from 'node:zlib'
 
@@ -67,17 +67,17 @@ export interface LoadSize {
 
 /** Text as the server sends it, brotli at its best; fonts are packed already. */
 export function measure(dist: string, { scripts, styles, fonts }: FirstLoad): LoadSize {
-  const read = (file: string) => readFileSync(join(dist, file))
-  const sum = (files: readonly string[], size: (bytes: Buffer) => number) =>
-    files.reduce((total, file) => total + size(read(file)), 0)
+  const packed = (files: readonly string[]) =>
+    files.reduce((total, file) => total + packedBytes(dist, file), 0)
   return {
-    scriptBytes: sum(scripts, brotliSize),
-    styleBytes: sum(styles, brotliSize),
-    fontBytes: sum(fonts, (bytes) => bytes.length),
-    pageBytes: sum(['index.html'], brotliSize),
+    scriptBytes: packed(scripts),
+    styleBytes: packed(styles),
+    fontBytes: fonts.reduce((total, file) => total + statSync(join(dist, file)).size, 0),
+    pageBytes: packed(['index.html']),
   }
 }
 
-function brotliSize(bytes: Buffer): number {
-  return brotliCompressSync(bytes, { params: { [constants.BROTLI_PARAM_QUALITY]: 11 } }).length
+export function packedBytes(dist: string, file: string): number {
+  const params = { [constants.BROTLI_PARAM_QUALITY]: constants.BROTLI_MAX_QUALITY }
+  return brotliCompressSync(readFileSync(join(dist, file)), { params }).length
 }
