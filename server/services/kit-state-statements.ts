@@ -112,14 +112,18 @@ export interface InstrumentRow {
   category: Category
 }
 
+// Materialized: before a fresh database has statistics, the planner would begin with every item of the group.
 export const INSTRUMENTS: Statement = {
   name: 'state-instruments',
-  text: `SELECT DISTINCT u.for_kit, n.id, n.designation, n.category FROM (
-      SELECT i.kit_id AS for_kit, t.instrument_id FROM item i JOIN test t ON t.item_id = i.id
-        WHERE i.kit_id = ANY($1::uuid[]) AND t.instrument_id IS NOT NULL
-      UNION ALL SELECT t.kit_id, t.instrument_id FROM test t
+  text: `WITH items AS MATERIALIZED (SELECT id, kit_id FROM item WHERE kit_id = ANY($1::uuid[])),
+    used AS MATERIALIZED (
+      SELECT i.kit_id AS for_kit, t.instrument_id FROM items i JOIN test t ON t.item_id = i.id
+        WHERE t.instrument_id IS NOT NULL
+      UNION SELECT t.kit_id, t.instrument_id FROM test t
         WHERE t.kit_id = ANY($1::uuid[]) AND t.instrument_id IS NOT NULL
-    ) u JOIN item n ON n.id = u.instrument_id ORDER BY n.designation, n.id`,
+    )
+    SELECT u.for_kit, n.id, n.designation, n.category FROM used u JOIN item n ON n.id = u.instrument_id
+    ORDER BY n.designation, n.id`,
 }
 
 export interface RaisedCheckRow {
