@@ -12,15 +12,20 @@ export const D0_ON: PlainDate = '2026-10-31'
 /** Wall clock of the group, in the scenario's own days: '2026-06-13 19:00'. */
 export type Local = `${number}-${number}-${number} ${number}:${number}`
 
+/** The calendar day on the group's own clock. */
+export function localDayOf(at: Date): PlainDate {
+  const day = localDateOf(at.getTime(), ZONE)
+  if (isFailure(day)) throw new RangeError(day.message)
+  return day
+}
+
 /** The scenario's days moved by one whole number of days, so that D0 falls on the day asked for. */
 export class Calendar {
   readonly #days: number
 
   /** `asOf`: any instant of the day on which D0 shall fall. */
   constructor(asOf: Date) {
-    const day = localDateOf(asOf.getTime(), ZONE)
-    if (isFailure(day)) throw new RangeError(day.message)
-    this.#days = daysBetween(D0_ON, day)
+    this.#days = daysBetween(D0_ON, localDayOf(asOf))
   }
 
   day(scenarioDay: PlainDate): PlainDate {

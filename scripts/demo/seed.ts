@@ -1,8 +1,7 @@
-import type { Actor } from '#server/caller.ts'
-import { systemActor } from '#server/caller.ts'
+import { systemActor, type Actor } from '#server/caller.ts'
 import type { AppContext } from '#server/context.ts'
 import { inGroup } from '#server/group-transaction.ts'
-import { foundGroup } from '#server/services/found-group.ts'
+import { foundGroup, openGroup } from '#server/services/found-group.ts'
 import { refreshBoard } from '#server/services/refresh-board.ts'
 import { Calendar, D0_ON, onDay, ZONE } from './calendar.ts'
 import { RECORD_BEGINS_ON } from './dates.ts'
@@ -27,7 +26,8 @@ const GROUP = {
  * Loads the demo group into a database without any group: fourteen months through the services, in the order of time,
  * each step seen by them at its own moment and from its own member. Every date is moved by the same whole number of
  * days, so that the scenario's D0 falls on the day of `asOf`. The same `asOf` gives the same rows, but for the salts of
- * the passwords and the ids that services make for themselves.
+ * the passwords and the ids that services make for themselves. The group is opened last: if a step fails, nobody ever
+ * sees it.
  */
 export async function seedDemo(ctx: AppContext, { asOf }: { asOf: Date }): Promise<{ groupId: string }> {
   const calendar = new Calendar(asOf)
@@ -38,7 +38,7 @@ export async function seedDemo(ctx: AppContext, { asOf }: { asOf: Date }): Promi
   const theatre: Theatre = { groupId, calendar, ids, where: new Map(), passwordHashes }
   await inGroup(at(ctx, foundedAt), { groupId, actor: systemActor('demo') }, (tx) => foundGroup(tx, GROUP))
   for (const [index, step] of TIMELINE.entries()) await playStep(ctx, theatre, step, index + 1)
-  await refreshBoards(ctx, theatre)
+  await open(ctx, theatre)
   return { groupId }
 }
 
@@ -63,8 +63,14 @@ async function playStep(ctx: AppContext, theatre: Theatre, step: Step, number: n
   }
 }
 
+const WAIT_FOR_DISK = { name: 'wait-for-disk', text: 'SET LOCAL synchronous_commit = on' }
+
 /** What has run out since the last step shows on the kept board from the first look on. */
-async function refreshBoards(ctx: AppContext, { groupId, calendar }: Theatre): Promise<void> {
+async function open(ctx: AppContext, { groupId, calendar }: Theatre): Promise<void> {
   const morning = calendar.at(onDay(D0_ON, '00:00'))
-  await inGroup(at(ctx, morning), { groupId, actor: systemActor('demo') }, refreshBoard)
+  await inGroup(at(ctx, morning), { groupId, actor: systemActor('demo') }, async (tx) => {
+    await refreshBoard(tx)
+    await openGroup(tx)
+    await tx.sql(WAIT_FOR_DISK)
+  })
 }

@@ -1,8 +1,12 @@
 import pg from 'pg'
+import { UNFINISHED } from '../demo/unfinished.ts'
 import type { Ending } from './ending.ts'
 import { startProgram, type ProductEnv } from './product-server.ts'
 
-/** Fills a database without any group with the demo group. True when the demo group is in it afterwards. */
+/**
+ * Fills a database without any group, or with one whose loading was cut off, with the demo group. True when the demo
+ * group is in it afterwards.
+ */
 export async function loadDemo(env: ProductEnv, ending: Ending): Promise<boolean> {
   const url = env.DATABASE_OWNER_URL ?? env.DATABASE_URL
   const before = await groupsIn(url)
@@ -23,7 +27,9 @@ async function groupsIn(url: string): Promise<'none' | 'demo' | 'other'> {
       `SELECT to_regclass('public.groups') IS NOT NULL AS "isThere"`,
     )
     if (!table.rows[0]?.isThere) return 'none'
-    const groups = await client.query<{ demo: boolean }>('SELECT demo FROM groups ORDER BY demo DESC LIMIT 1')
+    const groups = await client.query<{ demo: boolean }>(
+      `SELECT demo FROM groups WHERE NOT (${UNFINISHED}) ORDER BY demo DESC LIMIT 1`,
+    )
     const first = groups.rows[0]
     if (!first) return 'none'
     return first.demo ? 'demo' : 'other'

@@ -113,8 +113,8 @@ function readEntry(line: string): LogEntry {
 }
 
 /** One of our own TypeScript programs with the product's settings; its output goes to ours. */
-export function startProgram(program: string, env: ProductEnv): Child {
-  return startChild('node', ['--import', 'tsx', join(root, program)], {
+export function startProgram(program: string, env: ProductEnv, options: readonly string[] = []): Child {
+  return startChild('node', ['--import', 'tsx', join(root, program), ...options], {
     cwd: root,
     env: { ...process.env, ...env },
   })

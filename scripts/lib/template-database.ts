@@ -1,5 +1,6 @@
 import pg from 'pg'
 import { migrate } from '#server/data-source.ts'
+import { localDayOf } from '../demo/calendar.ts'
 import { root } from './paths.ts'
 import { startProgram } from './product-server.ts'
 import { makeSecret } from './secrets.ts'
@@ -19,15 +20,16 @@ export function ensureTemplate(testPg: TestPg): Promise<string> {
   return ensureDatabase({ testPg, name, from: 'template1', fill: ({ ownerUrl }) => migrate(ownerUrl) })
 }
 
-/** The same with the demo group of today in it. */
-export async function ensureDemoTemplate(testPg: TestPg): Promise<string> {
-  const today = new Date().toISOString().slice(0, 10).replaceAll('-', '')
-  const name = `demo_${today}_${shortHash(DEMO_SOURCES)}`
-  return ensureDatabase({ testPg, name, from: await ensureTemplate(testPg), fill: seedDemo })
+/** The same with the demo group in it, its last day being that of `asOf`: today unless given. */
+export async function ensureDemoTemplate(testPg: TestPg, asOf = new Date()): Promise<string> {
+  const day = localDayOf(asOf).replaceAll('-', '')
+  const name = `demo_${day}_${shortHash(DEMO_SOURCES)}`
+  const fill = (database: TestPg) => loadDemo(database, asOf)
+  return ensureDatabase({ testPg, name, from: await ensureTemplate(testPg), fill })
 }
 
-async function seedDemo({ ownerUrl, appUrl }: TestPg): Promise<void> {
-  const seeding = startProgram('scripts/seed-demo.ts', {
+async function loadDemo({ ownerUrl, appUrl }: TestPg, asOf: Date): Promise<void> {
+  const env = {
     NODE_ENV: 'production',
     PORT: '0',
     PUBLIC_URL: 'http://localhost',
@@ -35,8 +37,9 @@ async function seedDemo({ ownerUrl, appUrl }: TestPg): Promise<void> {
     DATABASE_OWNER_URL: ownerUrl,
     SMTP_URL: 'smtp://127.0.0.1:9',
     SESSION_SECRET: makeSecret(),
-  })
-  if ((await seeding.ended) !== 0) throw new Error('The demo group could not be loaded: see above.')
+  } as const
+  const loading = startProgram('scripts/seed-demo.ts', env, [`--as-of=${asOf.toISOString()}`])
+  if ((await loading.ended) !== 0) throw new Error('The demo group could not be loaded: see above.')
 }
 
 function shortHash(sources: readonly string[]): string {

@@ -9,10 +9,10 @@ export function createTestDatabase(): Promise<TestDatabase> {
   return cloneDatabase(inject('testPg'), inject('templateDatabase'))
 }
 
-/** The same with the demo group in it; the first caller of a run waits until it is loaded. */
-export async function createDemoDatabase(): Promise<TestDatabase> {
+/** The same with the demo group in it, as of today unless told; the first caller waits until it is loaded. */
+export async function createDemoDatabase(asOf?: Date): Promise<TestDatabase> {
   const testPg = inject('testPg')
-  return cloneDatabase(testPg, await ensureDemoTemplate(testPg))
+  return cloneDatabase(testPg, await ensureDemoTemplate(testPg, asOf))
 }
 
 /** A database without any schema, for tests of the migrations themselves. */
