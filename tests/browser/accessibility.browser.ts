@@ -60,7 +60,7 @@ for (const theme of ['day', 'night'] as const) {
 
 test('axe finds nothing on a kit, an item and a test record', async ({ page }) => {
   await openAs(page, 'ines')
-  await page.getByRole('row', { name: /K-07/ }).getByRole('link').first().click()
+  await page.getByRole('row', { name: /^K-07/ }).getByRole('link').first().click()
   await expect(page.getByRole('heading', { level: 1 })).toContainText('K-07')
   expect(await violations(page), 'kit').toEqual([])
   await page

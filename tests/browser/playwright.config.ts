@@ -27,8 +27,8 @@ export default defineConfig({
   globalSetup: './support/global-setup.ts',
   workers: 2,
   forbidOnly: Boolean(process.env.CI),
-  timeout: 60_000,
-  expect: { timeout: 10_000 },
+  timeout: 120_000,
+  expect: { timeout: 15_000 },
   reporter: 'list',
   use: {
     launchOptions: chromium,
