@@ -1,13 +1,26 @@
 import { fileURLToPath, URL } from 'node:url'
 import vue from '@vitejs/plugin-vue'
 import { defineConfig } from 'vitest/config'
-import { nameEarlyChunks, withoutJsonSchema } from './scripts/lib/vite-plugins.ts'
+import { chunkGroups } from './scripts/lib/vite-chunks.ts'
+import { nameEarlyChunks, packFiles, withoutJsonSchema } from './scripts/lib/vite-plugins.ts'
 
-const alias = { '@': fileURLToPath(new URL('./src', import.meta.url)) }
+const local = (path: string) => fileURLToPath(new URL(path, import.meta.url))
+const view = (name: string) => local(`src/views/${name}View.vue`)
+const alias = { '@': local('src') }
+
+const FIRST_SCREEN = [local('src/main.ts'), view('Board')]
+const FIELD_PAGES = ['Item', 'Kit', 'Test', 'RecordTest', 'RecordKitTest', 'Find', 'Tag', 'DueChecks'].map(
+  view,
+)
 
 export default defineConfig({
   publicDir: 'src/public',
-  plugins: [vue(), withoutJsonSchema(), nameEarlyChunks('src/views/BoardView.vue', 'board-chunks')],
+  plugins: [
+    vue(),
+    withoutJsonSchema(),
+    nameEarlyChunks('src/views/BoardView.vue', 'board-chunks'),
+    packFiles(),
+  ],
   resolve: { alias },
   build: {
     outDir: 'dist',
@@ -18,13 +31,7 @@ export default defineConfig({
     rolldownOptions: {
       treeshake: { propertyReadSideEffects: false, unknownGlobalSideEffects: false },
       output: {
-        codeSplitting: {
-          // Few files: a first visit over a slow line pays for every request.
-          groups: [
-            { name: 'core', test: /[\\/]node_modules[\\/](?:@?vue|pinia|vue-router|zod)[\\/]/ },
-            { name: 'common', test: /[\\/](?:src|shared)[\\/]/, minShareCount: 3 },
-          ],
-        },
+        codeSplitting: { groups: chunkGroups({ first: FIRST_SCREEN, field: FIELD_PAGES }) },
       },
     },
   },

@@ -1,5 +1,12 @@
 // Plugins of the client build: what the first screen does not need is left out, what it does need is named early.
+import { readdir, readFile, writeFile } from 'node:fs/promises'
+import { join, resolve } from 'node:path'
+import { promisify } from 'node:util'
+import { brotliCompress, constants, gzip } from 'node:zlib'
 import type { Plugin, Rolldown } from 'vite'
+
+const brotli = promisify(brotliCompress)
+const gzipBest = promisify(gzip)
 
 const JSON_SCHEMA_MODULES = /[\\/]zod[\\/]v4[\\/]core[\\/](?:json-schema-processors|to-json-schema)\.js$/
 const EXPORTED_NAME = /^export (?:(?:const|function) (\w+)|\{ \w+ as (\w+) \})/gm
@@ -60,4 +67,34 @@ function filesOf(
     if (imported) filesOf(imported, all, found)
   }
   return found
+}
+
+/** Below this many bytes packing saves nothing that counts. */
+const PACK_FROM = 1024
+const PACKABLE = /\.(?:js|css|html|svg|json)$/
+
+/** Writes every text file a second and third time, packed as well as brotli and gzip can: the server only hands out. */
+export function packFiles(): Plugin {
+  return {
+    name: 'halyard-pack-files',
+    apply: 'build',
+    async closeBundle() {
+      const folder = resolve(this.environment.config.root, this.environment.config.build.outDir)
+      const names = await readdir(folder, { recursive: true, withFileTypes: true })
+      const files = names.filter((entry) => entry.isFile() && PACKABLE.test(entry.name))
+      await Promise.all(files.map((entry) => packFile(join(entry.parentPath, entry.name))))
+    },
+  }
+}
+
+async function packFile(path: string): Promise<void> {
+  const bytes = await readFile(path)
+  if (bytes.length < PACK_FROM) return
+  const quality = { params: { [constants.BROTLI_PARAM_QUALITY]: constants.BROTLI_MAX_QUALITY } }
+  await Promise.all([
+    brotli(bytes, quality).then((packed) => writeFile(`${path}.br`, packed)),
+    gzipBest(bytes, { level: constants.Z_BEST_COMPRESSION }).then((packed) =>
+      writeFile(`${path}.gz`, packed),
+    ),
+  ])
 }

@@ -72,9 +72,9 @@ export function sectionOf({ availability, verdict }: BoardRow): Section {
 
 /** Watts at the antenna over the bands that stand, as `71–85 W`; else the radio's output; else nothing. */
 export function wattsOf(row: Pick<BoardRow, 'bandCodes' | 'watts'>): { text: string; where: string } | null {
-  const watts = unpackBands(row.bandCodes)
-    .filter(({ state }) => state === 'proven' || state === 'limited')
-    .flatMap(({ wattsAtAntenna }) => (wattsAtAntenna === null ? [] : [wattsAtAntenna]))
+  const watts = standing(row.bandCodes).flatMap(({ wattsAtAntenna }) =>
+    wattsAtAntenna === null ? [] : [wattsAtAntenna],
+  )
   if (watts.length > 0)
     return { text: rangeText(Math.min(...watts), Math.max(...watts)), where: 'at the antenna' }
   return row.watts === null ? null : { text: quantityText(row.watts, 'W', 0), where: 'at the radio' }
@@ -86,11 +86,14 @@ function rangeText(low: number, high: number): string {
   return most.startsWith(`${least}\u00a0`) ? most : `${least}\u2013${most}`
 }
 
-/** Hours on the kit's own batteries; `mains` where none counts, nothing where nobody has worked it out. */
+const standing = (bandCodes: string) =>
+  unpackBands(bandCodes).filter(({ state }) => state === 'proven' || state === 'limited')
+
+/** Hours on the kit's own batteries; `mains` where a band stands and no battery counts. */
 export function hoursOf(row: Pick<BoardRow, 'bandCodes' | 'hours'>): { text: string; where: string } | null {
   if (row.hours !== null)
     return { text: quantityText(row.hours, 'h', row.hours < 20 ? 1 : 0), where: 'endurance' }
-  return row.bandCodes === '' ? null : { text: 'mains', where: 'or a vehicle' }
+  return standing(row.bandCodes).length === 0 ? null : { text: 'mains', where: 'or a vehicle' }
 }
 
 const JUST_NOW_MS = 60_000
