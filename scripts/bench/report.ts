@@ -1,0 +1,33 @@
+/** One budget: what was measured, its floor, and the ratio that the budget is about. */
+export interface BenchRow {
+  readonly id: string
+  readonly what: string
+  readonly measured: string
+  readonly floor: string
+  readonly ratio: number | null
+  readonly goal: string
+}
+
+export function printRows(rows: readonly BenchRow[]): void {
+  const cells = rows.map(({ id, what, measured, floor, ratio, goal }) => [
+    id,
+    what,
+    measured,
+    floor,
+    ratio === null ? '' : `${ratio.toFixed(2)}x`,
+    goal,
+  ])
+  const table = [['id', 'what', 'measured', 'floor', 'ratio', 'goal'], ...cells]
+  const widths = table[0]!.map((_, column) => Math.max(...table.map((row) => row[column]!.length)))
+  for (const row of table) console.log(row.map((cell, column) => cell.padEnd(widths[column]!)).join('  '))
+}
+
+export function median(values: readonly number[]): number {
+  const sorted = [...values].sort((a, b) => a - b)
+  return sorted[Math.floor(sorted.length / 2)] ?? NaN
+}
+
+export function percentile(values: readonly number[], share: number): number {
+  const sorted = [...values].sort((a, b) => a - b)
+  return sorted[Math.min(sorted.length - 1, Math.floor(sorted.length * share))] ?? NaN
+}
