@@ -10,6 +10,7 @@ const SOURCES = [
   'src',
   'shared',
   'vite.config.ts',
+  'scripts/lib/vite-chunks.ts',
   'scripts/lib/vite-plugins.ts',
   'tsconfig.base.json',
   'package-lock.json',

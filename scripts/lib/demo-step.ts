@@ -1,7 +1,10 @@
+import { join } from 'node:path'
 import pg from 'pg'
 import { UNFINISHED } from '../demo/unfinished.ts'
+import { startChild } from './child.ts'
 import type { Ending } from './ending.ts'
-import { startProgram, type ProductEnv } from './product-server.ts'
+import { root } from './paths.ts'
+import type { ProductEnv } from './product-server.ts'
 
 /**
  * Fills a database without any group, or with one whose loading was cut off, with the demo group. True when the demo
@@ -12,7 +15,12 @@ export async function loadDemo(env: ProductEnv, ending: Ending): Promise<boolean
   const before = await groupsIn(url)
   if (before !== 'none') return before === 'demo'
   console.log('Loading the demo group: fourteen months of records, this takes a moment')
-  const seeding = startProgram('scripts/seed-demo.ts', env)
+  const seeding = startChild('node', ['--import', 'tsx', join(root, 'scripts/seed-demo.ts')], {
+    cwd: root,
+    env: { ...process.env, ...env },
+    // Its list of sign-ins is ours to show, once everything runs.
+    stdio: ['ignore', 'ignore', 'inherit'],
+  })
   await ending.add(() => seeding.stop())
   if ((await seeding.ended) !== 0) throw new Error('The demo group could not be loaded: see above.')
   return (await groupsIn(url)) === 'demo'
