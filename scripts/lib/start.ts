@@ -37,7 +37,8 @@ async function start(): Promise<void> {
   await serve({ env, folder, address, ending })
   const signIns = hasDemo ? DEMO_SIGN_INS : []
   const folders = [...new Set([folder, clusterHome])]
-  console.log(banner({ url: address.url, mailUrl: mail.pageUrl, signIns, folders }))
+  const hasOwnData = !process.env.DATABASE_URL
+  console.log(banner({ url: address.url, mailUrl: mail.pageUrl, signIns, folders, hasOwnData }))
 }
 
 ending.onSignals(() => 0)

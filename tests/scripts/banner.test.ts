@@ -6,6 +6,7 @@ const facts = {
   mailUrl: 'http://127.0.0.1:8081',
   signIns: [{ address: 'river@example.org', password: 'a long enough secret', role: 'administrator' }],
   folders: ['/home/river/halyard/.halyard/start-1', '/var/tmp/halyard-1/start-1'],
+  hasOwnData: true,
 }
 
 it('says where everything is and how to get in', () => {
@@ -22,4 +23,8 @@ it('says where everything is and how to get in', () => {
 
 it('says nothing of mails that go out, nor of sign-ins that are not there', () => {
   expect(banner({ ...facts, mailUrl: null, signIns: [] })).not.toMatch(/Mail {3}|Sign in/)
+})
+
+it('does not tell to remove data that a named database holds', () => {
+  expect(banner({ ...facts, hasOwnData: false })).not.toMatch(/Data|remove/)
 })
