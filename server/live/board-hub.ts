@@ -49,7 +49,8 @@ export class BoardHub {
     stream.res.on('close', () => this.#remove(stream))
     this.#listener.open()
     this.#heartbeat ??= setInterval(() => void this.#beat(), HEARTBEAT_MS)
-    void this.#tellRevision(stream.groupId, [stream])
+    // A listener that is only now connecting tells every screen itself.
+    if (this.#listener.isConnected) void this.#tellRevision(stream.groupId, [stream])
   }
 
   /** Ends all streams; their clients come back to another process. */

@@ -24,6 +24,10 @@ export class Listener {
 
   constructor(private readonly hearing: Hearing) {}
 
+  get isConnected(): boolean {
+    return this.#client !== undefined
+  }
+
   open(): void {
     if (this.#open) return
     this.#open = true

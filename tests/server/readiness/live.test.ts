@@ -1,5 +1,6 @@
 import { request, type IncomingMessage } from 'node:http'
 import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest'
+import { raiseRevision } from '#server/services/board-rows.ts'
 import { boardHub } from '#server/live/board-hub.ts'
 import type { BoardEvent } from '#shared/contracts/live.ts'
 import { fullCount, givenStation, recorded, type Station } from '../../support/evidence.ts'
@@ -54,11 +55,15 @@ class Follower {
   }
 }
 
+const open: Follower[] = []
+
 function follow(by: TestMember): Promise<Follower> {
   return new Promise((resolve, reject) => {
-    const asked = request(`${app.url}/api/v1/live`, { headers: { cookie: by.cookie } }, (response) =>
-      resolve(new Follower(response, () => asked.destroy())),
-    )
+    const asked = request(`${app.url}/api/v1/live`, { headers: { cookie: by.cookie } }, (response) => {
+      const follower = new Follower(response, () => asked.destroy())
+      open.push(follower)
+      resolve(follower)
+    })
     asked.on('error', reject).end()
   })
 }
@@ -83,7 +88,10 @@ async function listeners(): Promise<number> {
 const listens = () => until(async () => (await listeners()) === 1, 'it listens')
 
 // Nobody follows any more: the next test begins with a connection of its own.
-afterEach(() => until(async () => (await listeners()) === 0, 'it no longer listens'))
+afterEach(async () => {
+  for (const follower of open.splice(0)) follower.stop()
+  await until(async () => (await listeners()) === 0, 'it no longer listens')
+})
 
 const count = (station: Station) => {
   app.clock.advance(1, 'seconds')
@@ -100,7 +108,6 @@ describe('live updates', () => {
     await until(() => follower.events.length > 0, 'the first event came')
     const { revision } = (await keeper.get('/api/v1/board')).body
     expect(follower.events[0]).toEqual({ revision, kitIds: [] })
-    follower.stop()
   })
 
   it('tell every screen of the group which kit changed, and no other group', async () => {
@@ -114,21 +121,20 @@ describe('live updates', () => {
       follower.events.some(({ kitIds }) => kitIds.includes(stations[0]!.kit.id))
     await until(() => named(followers[0]!) && named(followers[1]!), 'both were told')
     expect(followers[2]!.events.every(({ kitIds }) => kitIds.length === 0)).toBe(true)
-    for (const follower of followers) follower.stop()
   })
 
   it('tell changes that come close together as one', async () => {
     const follower = await follow(keeper)
     await listens()
     await until(() => follower.events.length > 0, 'it has begun')
-    const before = follower.events.length
-    await Promise.all([count(stations[0]!), count(stations[1]!)])
-    const ids = stations.map(({ kit }) => kit.id).sort()
-    const told = () => follower.events.slice(before).flatMap(({ kitIds }) => kitIds)
-    await until(() => ids.every((id) => told().includes(id)), 'both kits were told')
-    const named = follower.events.slice(before).filter(({ kitIds }) => kitIds.length > 0)
-    expect(named).toHaveLength(1)
-    follower.stop()
+    const ids = stations.map(({ kit }) => kit.id)
+    await app.inGroup(group, async (tx) => {
+      for (const id of ids) await raiseRevision(tx, [id])
+    })
+    const named = () => follower.events.filter(({ kitIds }) => kitIds.length > 0)
+    await until(() => named().length > 0, 'it was told')
+    const { revision } = (await keeper.get('/api/v1/board')).body
+    expect(named()).toEqual([{ revision, kitIds: ids }])
   })
 
   it('end when the session ends', async () => {
@@ -138,7 +144,6 @@ describe('live updates', () => {
     expect((await leaving.post('/api/v1/sign-out')).status).toBe(204)
     await until(() => own.ended, 'the stream has ended')
     expect(others.ended).toBe(false)
-    others.stop()
   })
 
   it('need a session', async () => {
@@ -157,7 +162,6 @@ describe('live updates', () => {
     await until(() => follower.events.length > before, 'it listens again')
     await count(stations[0]!)
     await until(() => follower.events.some(({ kitIds }) => kitIds.length > 0), 'the change was told')
-    follower.stop()
   })
 
   it('end in order when the process stops', async () => {
