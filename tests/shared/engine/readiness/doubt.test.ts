@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest'
+import { kitTimeline } from '#shared/engine/readiness/timeline.ts'
 import type { KitState, RaisedCheck } from '#shared/engine/readiness/types.ts'
 import { bandOf, lowering, periodAt, textsOf, verdictAt } from './support/answers.ts'
 import { efficiency, heatTest, radioCheck, sweep } from './support/evidence.ts'
@@ -37,6 +38,25 @@ describe('a lapsed calibration', () => {
     const low = radioCheck('RAD-92', { '2 m': 30, '70 cm': 30 }, '2026-03-01', 50)
     const period = periodAt(withTests(checked('2026-06-11'), low), later)
     expect(bandOf(period, '2 m')).toMatchObject({ state: 'limited', watts: 30 })
+  })
+
+  it('leaves a failure in doubt standing against an older pass', () => {
+    const swr = { '2 m': 4, '70 cm': 1.5 }
+    const failed = sweep('ANT-92', swr, { on: '2026-06-12', with: 'WTM-1' })
+    const kit = metered(withTests(VHF, failed, calibration('WTM-1', '2025-06-10')))
+    expect(bandOf(periodAt(kit, later), '2 m').state).toBe('not-proven')
+    expect(bandOf(periodAt(kit, later), '70 cm').state).toBe('proven')
+  })
+
+  it('counts a calibration from its very instant', () => {
+    const together = metered(
+      withTests(
+        retested(VHF, withMeter('2026-06-12 10:00')),
+        calibration('WTM-1', '2026-06-12 10:00'),
+        calibration('WTM-1', '2025-01-01'),
+      ),
+    )
+    expect(verdictAt(together, later)).toBe('proven')
   })
 
   it('is undone by a valid calibration that is recorded later with an earlier date', () => {
@@ -106,6 +126,11 @@ describe('a recall', () => {
     expect(stateOn10(recalled, recall.raisedAt - 1)).toBe('proven')
     expect(stateOn10(recalled, recall.raisedAt)).toBe('not-proven')
     expect(textsOf(lowering(periodAt(recalled, at(SOON)))).join()).toMatch(/XFM-90.*10 m.*XFM-91/)
+  })
+
+  it('begins a period of its own', () => {
+    const starts = kitTimeline(recalled, at('2026-06-02')).map(({ from }) => from)
+    expect(starts.slice(0, 2)).toEqual([at('2026-06-02'), recall.raisedAt])
   })
 
   it('leaves the other bands standing', () => {

@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest'
+import { kitTimeline } from '#shared/engine/readiness/timeline.ts'
 import type { Evidence, KitState } from '#shared/engine/readiness/types.ts'
 import { bandOf, lowering, periodAt, textsOf, verdictAt } from './support/answers.ts'
 import { capacity, efficiency, feedlineLoss, heatTest, radioCheck, sweep } from './support/evidence.ts'
@@ -172,6 +173,12 @@ describe('a computer', () => {
     const kit = booted('2026-03-15')
     expect(periodAt(kit, at('2026-06-16') - 1).capability.modes).toEqual(['digital', 'voice'])
     expect(periodAt(kit, at('2026-06-16')).capability.modes).toEqual(['voice'])
+  })
+
+  it('loses digital at a boundary of the timeline', () => {
+    const starts = kitTimeline(booted('2026-05-20'), WHEN).map(({ from }) => from)
+    expect(starts).toContain(at('2026-06-21'))
+    expect(starts).toContain(at('2026-08-21'))
   })
 
   it('booted too long ago leaves voice as a limit', () => {

@@ -116,6 +116,13 @@ describe('a radio measured on some bands', () => {
     expect(bandOf(period, '70 cm').state).toBe('proven')
   })
 
+  it('does not forget that failure when its year is over', () => {
+    const other = withTests(kept(failed, 'RAD-92'), radioCheck('RAD-92', { '70 cm': 50 }, '2027-01-10', 50))
+    const states = (when: number) => periodAt(other, when).capability.bands.map(({ state }) => state)
+    expect(states(LAST)).toEqual(['limited', 'proven'])
+    expect(states(OVER)).toEqual(['not-proven', 'proven'])
+  })
+
   it('that does not receive is out on every band', () => {
     const [test] = VHF.evidence.filter(({ procedure }) => procedure === 'radio-check')
     const deaf = {
