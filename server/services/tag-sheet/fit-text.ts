@@ -27,11 +27,12 @@ const DESCENT = 0.22
 /** A short name, broken between any two characters if that makes it larger; after a hyphen or space for choice. */
 export function fitName(text: string, room: Room, measure: Measure): Fitted {
   const single = { lines: [text], size: sizeOf([text], room, measure) }
-  if (single.size >= room.largest * 0.6) return single
-  const pieces = graphemes(text)
+  const byHeight = room.height / heightOf([text])
+  if (single.size >= Math.min(room.largest, byHeight) * 0.6) return single
+  const pieces = graphemes(text).map((piece) => ({ piece, width: measure(piece) }))
   const options: Fitted[] = [single]
   for (let count = 2; count <= Math.min(room.lines, pieces.length); count += 1) {
-    const lines = breakEvenly(pieces, count, measure)
+    const lines = breakEvenly(pieces, count)
     options.push({ lines, size: sizeOf(lines, room, measure) })
   }
   // A further line must be worth it.
@@ -66,24 +67,40 @@ function sizeOf(lines: readonly string[], room: Room, measure: Measure): number 
   return Math.min(room.largest, room.width / widest, room.height / heightOf(lines))
 }
 
-/** Splits into `count` lines of about the same width, moving a break to a hyphen or space that is near. */
-function breakEvenly(pieces: readonly string[], count: number, measure: Measure): string[] {
-  const lines: string[] = []
-  let rest = [...pieces]
-  for (let left = count; left > 1; left -= 1) {
-    const at = bestBreak(rest, measure(rest.join('')) / left, measure)
-    lines.push(rest.slice(0, at).join('').trim())
-    rest = rest.slice(at)
-  }
-  return [...lines, rest.join('').trim()]
+interface Piece {
+  readonly piece: string
+  readonly width: number
 }
 
-function bestBreak(pieces: readonly string[], target: number, measure: Measure): number {
-  const unnatural = measure(pieces.join('')) / 3
+const joined = (pieces: readonly Piece[]) =>
+  pieces
+    .map(({ piece }) => piece)
+    .join('')
+    .trim()
+const widthOf = (pieces: readonly Piece[]) => pieces.reduce((sum, { width }) => sum + width, 0)
+
+/** Splits into `count` lines of about the same width, moving a break to a hyphen or space that is near. */
+function breakEvenly(pieces: readonly Piece[], count: number): string[] {
+  const lines: string[] = []
+  let rest = pieces
+  for (let left = count; left > 1; left -= 1) {
+    const at = bestBreak(rest, left)
+    lines.push(joined(rest.slice(0, at)))
+    rest = rest.slice(at)
+  }
+  return [...lines, joined(rest)]
+}
+
+/** Where the first of `count` lines ends. A break inside a word costs as much as a third of the rest. */
+function bestBreak(pieces: readonly Piece[], count: number): number {
+  const total = widthOf(pieces)
   let best = { at: 1, cost: Infinity }
+  let width = 0
   for (let at = 1; at < pieces.length; at += 1) {
-    const off = Math.abs(measure(pieces.slice(0, at).join('')) - target)
-    const cost = /[\s\-/.]$/.test(pieces[at - 1]!) ? off : off + unnatural
+    const { piece, width: own } = pieces[at - 1]!
+    width += own
+    const off = Math.abs(width - total / count)
+    const cost = /[\s\-/.]$/.test(piece) ? off : off + total / 3
     if (cost < best.cost) best = { at, cost }
   }
   return best.at

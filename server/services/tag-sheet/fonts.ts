@@ -33,10 +33,13 @@ export function runsOf(text: string, weight: Weight): Run[] {
   return runs
 }
 
+/** Each of these is a character of its own: no need to ask the segmenter, which takes its time. */
+const PLAIN = /^[\u0020-\u007E]*$/
 const segmenter = new Intl.Segmenter('en', { granularity: 'grapheme' })
 
 /** The characters as people count them: a letter with its accents is one. */
 export function graphemes(text: string): string[] {
+  if (PLAIN.test(text)) return [...text]
   return Array.from(segmenter.segment(text), ({ segment }) => segment)
 }
 

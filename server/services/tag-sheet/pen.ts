@@ -23,18 +23,29 @@ interface Style {
   readonly stand: 'top' | 'middle' | 'bottom'
 }
 
+const EXACT = { lineBreak: false, baseline: 'alphabetic' } as const
+
 /** Draws text at exact places: no paragraphs, no page breaks. */
 export class Pen {
+  /** Widths at size 1: address and kinds stand on every label, and measuring costs more than drawing. */
+  readonly #widths: Readonly<Record<Weight, Map<string, number>>> = { regular: new Map(), bold: new Map() }
+
   constructor(readonly doc: Doc) {}
 
   /** Widths at size 1, for fitting. */
   measure(weight: Weight, spacing = 0): Measure {
-    return (text) => {
-      const widths = runsOf(text, weight).map(
-        (run) => this.doc.font(run.font).fontSize(1000).widthOfString(run.text) / 1000,
-      )
-      return widths.reduce((sum, width) => sum + width, 0) + spacing * text.length
-    }
+    return (text) => this.#width(text, weight) + spacing * text.length
+  }
+
+  #width(text: string, weight: Weight): number {
+    const known = this.#widths[weight].get(text)
+    if (known !== undefined) return known
+    const widths = runsOf(text, weight).map(
+      (run) => this.doc.font(run.font).fontSize(1000).widthOfString(run.text) / 1000,
+    )
+    const width = widths.reduce((sum, part) => sum + part, 0)
+    this.#widths[weight].set(text, width)
+    return width
   }
 
   /** Lines that were fitted into an area, the height of their capitals standing in it as asked. */
@@ -62,10 +73,12 @@ export class Pen {
     }: { x: number; baseline: number; size: number; weight: Weight; spacing: number },
   ): void {
     let left = x
-    const options = { lineBreak: false, baseline: 'alphabetic', characterSpacing: spacing * size } as const
-    for (const run of runsOf(text, weight)) {
+    const runs = runsOf(text, weight)
+    for (const [index, run] of runs.entries()) {
+      // With a width given, the library does not measure once more what was measured for fitting.
+      const options = { ...EXACT, characterSpacing: spacing * size, textWidth: 0 }
       this.doc.font(run.font).fontSize(size).text(run.text, left, baseline, options)
-      left += this.doc.widthOfString(run.text, options)
+      if (index < runs.length - 1) left += this.doc.widthOfString(run.text, options)
     }
   }
 }
