@@ -1,157 +1,14 @@
-import type { PlainDate } from '#shared/engine/plain-date.ts'
 import { later, onDay, type Local } from '../calendar.ts'
 import { SEAL_LOT, SEALS } from '../consumables.ts'
-import { PARTY } from '../dates.ts'
 import type { Step } from '../deeds.ts'
 import type { CountTest } from '../demo-test.ts'
-import type { PersonKey } from '../people.ts'
+import { COUNT_ROUNDS, type CountRound } from './count-rounds.ts'
 
 /** Counts of the kits and the numbered seals that close them, in the order in which the seals were taken. */
-
-interface Round {
-  readonly on: PlainDate
-  readonly from: string
-  /** One counts after the other, each at a table of their own. */
-  readonly crew: readonly PersonKey[]
-  readonly kits: readonly string[]
-  /** The lid was open, or the seal broken, when the count began. */
-  readonly open?: readonly string[]
-  /** Left without a seal although the kind has one. */
-  readonly leftOpen?: readonly string[]
-  readonly short?: Readonly<Record<string, Pick<CountTest['inputs'], 'short' | 'extra'>>>
-  readonly notes?: string
-  /** When the device reached the network again; at once unless given. */
-  readonly sentAt?: string
-}
 
 /** Power kits and test benches stand open on their shelves. */
 const NEVER_SEALED = new Set(['K-21', 'K-22', 'K-23', 'K-24'])
 const FIRST_SEAL = 401
-
-const kits = (...numbers: string[]) => numbers.map((number) => `K-${number}`)
-const EVERYBODY: readonly PersonKey[] = ['tobin', 'maren', 'june', 'beatriz', 'everett']
-
-const ROUNDS: readonly Round[] = [
-  {
-    on: PARTY.sep25,
-    from: '15:00',
-    crew: EVERYBODY,
-    kits: kits('01', '02', '03', '04', '06', '08', '09', '10', '13', '14', '16', '22'),
-  },
-  {
-    on: PARTY.oct25,
-    from: '15:00',
-    crew: EVERYBODY,
-    kits: kits('05', '07', '11', '12', '15', '17', '18', '19', '20', '21', '23', '24'),
-  },
-  {
-    on: PARTY.jan,
-    from: '14:00',
-    crew: ['tobin', 'june'],
-    kits: kits('01', '02', '06', '09', '19'),
-    open: kits('01', '02', '06', '09', '19'),
-    notes: 'Back from the ice storm.',
-  },
-  {
-    on: '2026-01-26',
-    from: '18:30',
-    crew: ['maren'],
-    kits: kits('07'),
-    open: kits('07'),
-    notes: 'Dried and restocked.',
-  },
-  {
-    on: PARTY.mar,
-    from: '15:00',
-    crew: EVERYBODY,
-    kits: kits(
-      ...[
-        '04',
-        '05',
-        '08',
-        '18',
-        '12',
-        '15',
-        '11',
-        '01',
-        '02',
-        '03',
-        '06',
-        '07',
-        '09',
-        '10',
-        '16',
-        '17',
-        '19',
-        '20',
-      ],
-      ...['21', '22', '23', '24'],
-    ),
-  },
-  { on: PARTY.apr, from: '15:30', crew: ['maren'], kits: kits('07') },
-  { on: PARTY.jun, from: '16:30', crew: ['tobin'], kits: kits('20') },
-  { on: PARTY.jun, from: '20:55', crew: ['lupe'], kits: kits('04'), sentAt: '23:43' },
-  { on: PARTY.jul, from: '21:00', crew: ['tobin', 'maren'], kits: kits('04', '05', '18', '07') },
-  {
-    on: PARTY.aug,
-    from: '15:00',
-    crew: ['tobin'],
-    kits: kits('09'),
-    open: kits('09'),
-    notes: 'Back from the flood.',
-  },
-  {
-    on: '2026-08-24',
-    from: '18:00',
-    crew: ['maren'],
-    kits: kits('05'),
-    open: kits('05'),
-    notes: 'Dry again.',
-  },
-  {
-    on: PARTY.sep,
-    from: '10:00',
-    crew: ['maren'],
-    kits: kits('11'),
-    open: kits('11'),
-    leftOpen: kits('11'),
-    short: {
-      'K-11': {
-        short: {
-          'DC lead': { found: 0, missing: ['DCL-11'] },
-          'adapter pouch': { found: 0, missing: ['ADP-11'] },
-        },
-        extra: [],
-      },
-    },
-    notes: 'Seal broken, nobody knows by whom. The lead and the adapter pouch are gone.',
-  },
-  {
-    on: PARTY.sep,
-    from: '11:30',
-    crew: ['tobin'],
-    kits: kits('03'),
-    notes: 'DCL-11 was in it, with a pencil note: "borrowed from 11 T."',
-  },
-  {
-    on: PARTY.sep,
-    from: '15:00',
-    crew: EVERYBODY,
-    kits: kits(
-      ...['01', '02', '04', '05', '06', '07', '09', '10', '12', '15', '16', '17', '18', '19', '20'],
-      ...['21', '22', '24'],
-    ),
-    open: kits('15', '18'),
-  },
-  { on: PARTY.oct17, from: '15:30', crew: ['maren'], kits: kits('07') },
-  {
-    on: PARTY.oct24,
-    from: '14:00',
-    crew: ['tobin'],
-    kits: kits('01', '02', '09', '16', '19', '21'),
-    notes: 'Counted together for the handover: Tobin Arkwell and Maren Oldstrand.',
-  },
-]
 
 const MINUTES_A_COUNT = 14
 
@@ -160,7 +17,7 @@ function allCounts(): Step[] {
   const onLid = new Map<string, string>()
   let taken = 0
   const seal = () => `0${FIRST_SEAL + taken++}`
-  return ROUNDS.flatMap((round) => {
+  return COUNT_ROUNDS.flatMap((round) => {
     const before = taken
     const steps = round.kits.map((kit, turn): Step => {
       const isSealed = !NEVER_SEALED.has(kit) && !round.leftOpen?.includes(kit)
@@ -169,13 +26,13 @@ function allCounts(): Step[] {
       if (sealApplied) onLid.set(kit, sealApplied)
       return countStep(round, kit, turn, { sealFound, sealApplied })
     })
-    return [...steps, ...sealsTaken(round, steps, taken - before)]
+    return [...steps, ...sealsTaken(steps, taken - before)]
   })
 }
 
 type Seals = Pick<CountTest['inputs'], 'sealFound' | 'sealApplied'>
 
-function countStep(round: Round, kit: string, turn: number, seals: Seals): Step {
+function countStep(round: CountRound, kit: string, turn: number, seals: Seals): Step {
   const by = round.crew[turn % round.crew.length]!
   const nth = Math.floor(turn / round.crew.length)
   const performed = later(onDay(round.on, round.from), nth * (MINUTES_A_COUNT + 1))
@@ -193,16 +50,10 @@ function countStep(round: Round, kit: string, turn: number, seals: Seals): Step 
 }
 
 /** The seals used come off the shelf when the last kit of the round is closed. */
-function sealsTaken({ on }: Round, steps: readonly Step[], count: number): Step[] {
+function sealsTaken(steps: readonly Step[], count: number): Step[] {
   const last = steps.at(-1)
   if (count === 0 || !last) return []
-  const at = later(
-    steps
-      .map((step) => step.at)
-      .sort()
-      .at(-1)!,
-    2,
-  )
+  const closedAt = steps.map(({ at }) => at).reduce((a, b) => (a > b ? a : b))
   const reason = `sealed ${count === 1 ? 'a kit' : `${count} kits`}`
   const deed = {
     do: 'change-stock',
@@ -211,7 +62,7 @@ function sealsTaken({ on }: Round, steps: readonly Step[], count: number): Step[
     difference: `-${count}`,
     reason,
   } as const
-  return [{ at: at.startsWith(on) ? at : last.at, by: last.by, deed }]
+  return [{ at: later(closedAt, 2), by: last.by, deed }]
 }
 
 export const COUNT_STEPS: readonly Step[] = allCounts()

@@ -76,7 +76,7 @@ const ROUNDS: readonly LineRound[] = [
   { on: PARTY.jun, kits: ['04', '20'] },
   { on: BLIND_ON, kits: ['15'] },
   { on: PARTY.jul, kits: ['07', '05', '18'] },
-  { on: PARTY.aug, kits: ['09'] },
+  { on: PARTY.aug, from: '14:00', kits: ['09'] },
   {
     on: PARTY.sep,
     kits: ['01', '02', '03', '04', '05', '06', '09', '10', '12', '16', '17', '18', '19', '20'],
@@ -131,6 +131,6 @@ const SPARE_BANDS: Readonly<Record<string, readonly Band[]>> = {
 export const SWEEP_JOBS: readonly Job[] = ROUNDS.flatMap((round) =>
   linesOf(round).map((number, turn) => {
     const bands = SPARE_BANDS[number] ?? bandsOf(kitOf(`K-${number}`).kind)
-    return job(`ANT-${number}`, bands, round.on, turn)
+    return { ...job(`ANT-${number}`, bands, round.on, turn), from: round.from }
   }),
 )
