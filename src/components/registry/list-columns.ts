@@ -12,6 +12,8 @@ export interface ListColumn<Row> {
   /** False: hidden until the member asks for it. */
   readonly shown?: boolean
   readonly numeric?: boolean
+  /** Holds whole sentences. */
+  readonly wide?: boolean
   /** Stands on the phone's card too. */
   readonly card?: boolean
 }
@@ -20,6 +22,8 @@ export interface ListColumn<Row> {
 export interface ListFilter {
   readonly name: string
   readonly label: string
+  /** Hidden at the desk until it is asked for or set. */
+  readonly rare?: boolean
   readonly options: readonly { readonly value: string; readonly label: string }[]
 }
 

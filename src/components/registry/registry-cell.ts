@@ -7,8 +7,8 @@ interface CellProps {
   text: string
 }
 
-/** What stands in one cell: the view's own drawing, else the text, else a dash that is not read out. */
+/** What stands in one cell: a dash where there is nothing, else the view's own drawing, else the text. */
 export const RegistryCell: FunctionalComponent<CellProps> = ({ draw, row, text }): VNode[] | string =>
-  draw ? draw({ row }) : text || '–'
+  text === '' ? '–' : draw ? draw({ row }) : text
 
 RegistryCell.props = ['draw', 'row', 'text']
