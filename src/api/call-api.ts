@@ -17,6 +17,8 @@ export type Call<E extends Endpoint> = Part<E, 'params', ParamsOf<E>> & {
 } & Part<E, 'body', BodyInputOf<E>> &
   (E extends { versioned: true } ? { readonly version: number } : { readonly version?: undefined }) & {
     readonly signal?: AbortSignal
+    /** Hears when the service answered, by its own clock, epoch ms: an answer kept by the browser says when it was made. */
+    readonly answered?: (atMs: number) => void
     /** An answer that was asked for before the application had loaded: read instead of asking again. */
     readonly early?: Promise<Response>
   }
@@ -46,6 +48,7 @@ export function callForFile<E extends Endpoint & { readonly media: string }>(
 ): Promise<Blob> {
   return reacting(async () => {
     const response = await send(endpoint, call)
+    call.answered?.(Date.parse(response.headers.get('Date') ?? ''))
     if (!response.ok) throw await problemOf(response)
     return response.blob()
   })
@@ -65,6 +68,7 @@ async function reacting<T>(work: (again: boolean) => Promise<T>): Promise<T> {
 
 async function callOnce<E extends Endpoint>(endpoint: E, call: Call<E>): Promise<ResponseOf<E>> {
   const response = await send(endpoint, call)
+  call.answered?.(Date.parse(response.headers.get('Date') ?? ''))
   if (!response.ok) throw await problemOf(response)
   if (!endpoint.response) return undefined as ResponseOf<E>
   const answer = endpoint.response.safeParse(await bodyOf(response))

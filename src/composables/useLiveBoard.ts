@@ -56,8 +56,20 @@ export function useLiveBoard(filters: () => BoardFilters) {
     }
   }
 
-  function readPage(signal: AbortSignal, after?: string, early?: Promise<Response>): Promise<BoardAnswer> {
-    return callApi(readBoard, { query: { ...boardQuery(filters()), after }, signal, early })
+  async function readPage(
+    signal: AbortSignal,
+    after?: string,
+    early?: Promise<Response>,
+  ): Promise<BoardAnswer> {
+    let atMs = NaN
+    const answered = (ms: number) => void (atMs = ms)
+    const board = await callApi(readBoard, {
+      query: { ...boardQuery(filters()), after },
+      signal,
+      early,
+      answered,
+    })
+    return board.computedFor === 'now' ? { ...board, asOf: latest(board.asOf, atMs) } : board
   }
 
   async function readRest(first: BoardAnswer, signal: AbortSignal): Promise<BoardAnswer> {
@@ -128,4 +140,9 @@ function withChanges(before: ShownBoard, board: BoardAnswer): ReadonlyMap<string
   const atMs = Date.now()
   const fresh = changedKits(before.board.rows, board.rows).map((kitId) => [kitId, atMs] as const)
   return new Map([...before.changed, ...fresh])
+}
+
+/** A board that has not changed comes out of the browser's cache: it holds as of this answer, not as of the first. */
+function latest(asOf: string, answeredAtMs: number): string {
+  return answeredAtMs > Date.parse(asOf) ? new Date(answeredAtMs).toISOString() : asOf
 }

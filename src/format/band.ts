@@ -46,9 +46,18 @@ export function stripSentence(cells: readonly BandCell[]): string {
   return cells.length === 0 ? 'No bands shown' : inBandOrder(cells).map(bandSentence).join('; ')
 }
 
-/** Height of a cell's filling: the share of transmit power that reaches the antenna, as a CSS percentage. */
-export function fillHeight(cell: BandCell): string {
+/** The transmit power that a strip is drawn against, W: the largest that any of its bands takes; null: nobody knows. */
+export function fullWatts(cells: readonly BandCell[]): number | null {
+  const watts = cells.flatMap(({ fraction, wattsAtAntenna }) =>
+    fraction && wattsAtAntenna ? wattsAtAntenna / fraction : [],
+  )
+  return watts.length > 0 ? Math.max(...watts) : null
+}
+
+/** Height of a cell's filling: the share of the full transmit power that reaches the antenna, as a CSS percentage. */
+export function fillHeight(cell: BandCell, full: number | null): string {
   if (cell.state === 'out' || cell.state === 'not-proven') return '0%'
-  if (cell.fraction == null) return '100%'
-  return `${numberText(Math.min(1, Math.max(0.06, cell.fraction)) * 100, 0)}%`
+  const share = full && cell.wattsAtAntenna != null ? cell.wattsAtAntenna / full : cell.fraction
+  if (share == null) return '100%'
+  return `${numberText(Math.min(1, Math.max(0.06, share)) * 100, 0)}%`
 }
