@@ -9,6 +9,8 @@ export interface BoardKit {
   readonly kitId: string
   readonly designation: string
   readonly station: boolean
+  /** Changes with whatever else the board shows of the kit: kind, places, day of return. */
+  readonly face: string
 }
 
 /** A row of the kept board: the period that holds now, and what comes after it in short. */
@@ -41,6 +43,7 @@ export function boardRowOf(kit: BoardKit, periods: readonly [Period, ...Period[]
     kitId: kit.kitId,
     designation: kit.designation,
     station: kit.station,
+    face: kit.face,
     verdict: current.verdict,
     availability: current.availability,
     reasonTop: current.reasons[0]?.text ?? '',
@@ -71,21 +74,21 @@ export interface KeptRow extends BoardKit {
 
 const KEPT: Statement = {
   name: 'kept-board-rows',
-  text: `SELECT kit_id AS "kitId", designation, station, availability, verdict,
+  text: `SELECT kit_id AS "kitId", designation, station, face, availability, verdict,
       (extract(epoch FROM valid_until) * 1000)::float8 AS "validUntil"
     FROM board_row WHERE kit_id = ANY($1::uuid[])`,
 }
 const UPSERT: Statement = {
   name: 'upsert-board-rows',
-  text: `INSERT INTO board_row (kit_id, group_id, designation, station, verdict, verdict_rank, availability, reason_top,
+  text: `INSERT INTO board_row (kit_id, group_id, designation, station, face, verdict, verdict_rank, availability, reason_top,
       reason_n, holds_until, valid_until, band_codes, watts, hours, horizon, oldest_vital_on)
-    SELECT r.kit, $2, r.designation, r.station, r.verdict, r.rank, r.availability, r.reason, r.reasons,
+    SELECT r.kit, $2, r.designation, r.station, r.face, r.verdict, r.rank, r.availability, r.reason, r.reasons,
       coalesce(r.holds, 'infinity'), coalesce(r.valid, 'infinity'), r.bands, r.watts, r.hours, r.horizon, r.oldest
-    FROM jsonb_to_recordset($1::jsonb) AS r (kit uuid, designation text, station boolean, verdict text, rank smallint,
+    FROM jsonb_to_recordset($1::jsonb) AS r (kit uuid, designation text, station boolean, face text, verdict text, rank smallint,
       availability text, reason text, reasons int, holds timestamptz, valid timestamptz, bands text, watts numeric,
       hours numeric, horizon text, oldest date)
     ON CONFLICT (kit_id) DO UPDATE SET designation = excluded.designation, station = excluded.station,
-      verdict = excluded.verdict, verdict_rank = excluded.verdict_rank, availability = excluded.availability,
+      face = excluded.face, verdict = excluded.verdict, verdict_rank = excluded.verdict_rank, availability = excluded.availability,
       reason_top = excluded.reason_top, reason_n = excluded.reason_n, holds_until = excluded.holds_until,
       valid_until = excluded.valid_until, band_codes = excluded.band_codes, watts = excluded.watts,
       hours = excluded.hours, horizon = excluded.horizon, oldest_vital_on = excluded.oldest_vital_on`,
@@ -167,6 +170,7 @@ function insertable(row: BoardRowColumns) {
     kit: row.kitId,
     designation: row.designation,
     station: row.station,
+    face: row.face,
     verdict: row.verdict,
     rank: VERDICTS.indexOf(row.verdict),
     availability: row.availability,

@@ -24,13 +24,19 @@ export interface KitRow {
   retired: boolean
   promise: KitPromise
   station: boolean
+  /** Changes with what the board shows of the kit besides its readiness. */
+  face: string
 }
 
 export const KITS: Statement = {
   name: 'state-kits',
   text: `SELECT k.id, k.designation, k.availability, k.availability_reason, k.seal_matches, k.place_id, k.kit_kind_id,
-      k.retired_at IS NOT NULL AS retired, kk.promise, kk.station
-    FROM kit k JOIN kit_kind kk ON kk.id = k.kit_kind_id WHERE k.id = ANY($1::uuid[]) ORDER BY k.id`,
+      k.retired_at IS NOT NULL AS retired, kk.promise, kk.station,
+      md5(jsonb_build_array(k.designation, kk.station, kk.code, kk.name, home.name, place.name, k.availability_reason,
+        k.expected_return_on)::text) AS face
+    FROM kit k JOIN kit_kind kk ON kk.id = k.kit_kind_id
+    LEFT JOIN place home ON home.id = k.home_place_id LEFT JOIN place ON place.id = k.place_id
+    WHERE k.id = ANY($1::uuid[]) ORDER BY k.id`,
 }
 
 export interface PositionRow {

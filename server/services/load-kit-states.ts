@@ -11,6 +11,7 @@ export interface LoadedKit {
   readonly station: boolean
   readonly placeId: string | null
   readonly retired: boolean
+  readonly face: string
 }
 
 /**
@@ -47,6 +48,7 @@ export async function loadKitStates(
     station: kit.station,
     placeId: kit.place_id,
     retired: kit.retired,
+    face: kit.face,
     state: {
       kit: {
         id: kit.id,

@@ -71,17 +71,17 @@ interface Rewriting extends OneKit {
 
 function rewriteOne(now: number, one: OneKit): Rewriting {
   const { kit, stored, kept } = one
-  const { state, station, placeId, retired } = kit
+  const { state, face, placeId, retired } = kit
   const future = retired ? [] : kitTimeline(state, now)
-  const { availabilityReason, designation } = state.kit
+  const { availabilityReason } = state.kit
   const toStore = future.map((period) => ({ ...period, availabilityReason, placeId }))
-  const faceDiffers = kept?.designation !== designation || kept.station !== station || kept.validUntil <= now
+  const isStale = kept?.face !== face || kept.validUntil <= now
   return {
     ...one,
     future,
     change: changeOf({ kitId: state.kit.id, stored, future: toStore, now }),
     before: stored.find((period) => period.from <= now) ?? null,
-    rowIsStale: retired ? kept !== undefined : faceDiffers,
+    rowIsStale: retired ? kept !== undefined : isStale,
   }
 }
 
@@ -90,7 +90,9 @@ async function writeResults(tx: GroupTx, results: readonly Rewriting[]): Promise
   if (changed.length === 0) return
   const rows = changed.flatMap(({ kit, future: [first, ...rest] }) => {
     const { id: kitId, designation } = kit.state.kit
-    return first ? [boardRowOf({ kitId, designation, station: kit.station }, [first, ...rest])] : []
+    return first
+      ? [boardRowOf({ kitId, designation, station: kit.station, face: kit.face }, [first, ...rest])]
+      : []
   })
   const removed = changed.filter(({ kit }) => kit.retired).map(({ kit }) => kit.state.kit.id)
   const before = changed.flatMap(({ kept }) => (kept ? [kept] : []))

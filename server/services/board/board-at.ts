@@ -74,7 +74,7 @@ function keyOf(row: RowAt | undefined): string | null {
 function rowAt(row: RowAt, [first, ...rest]: readonly StoredPeriod[], { computedFor }: Asked): BoardRow[] {
   if (!first) return []
   const { kit_id: kitId, designation, station } = row
-  const computed = boardRowOf({ kitId, designation, station }, [first, ...rest])
+  const computed = boardRowOf({ kitId, designation, station, face: '' }, [first, ...rest])
   return [
     {
       kitId,
@@ -106,7 +106,7 @@ async function nextChangeAt(tx: GroupTx, at: Date): Promise<BoardAnswer['nextCha
   const periods: readonly Period[] = (await periodsFrom(tx, [found.kit_id], at)).get(found.kit_id) ?? []
   const [first, ...rest] = periods
   if (!first) return null
-  const row = boardRowOf({ kitId: found.kit_id, designation: found.designation, station: false }, [
+  const row = boardRowOf({ kitId: found.kit_id, designation: found.designation, station: false, face: '' }, [
     first,
     ...rest,
   ])

@@ -1,8 +1,9 @@
 import type { z } from 'zod'
 import type { itemBody, itemRecord, newItemBody } from '#shared/contracts/items.ts'
-import { CATEGORIES } from '#shared/engine/vocabulary.ts'
+import { CATEGORIES, INSTRUMENT_CATEGORIES } from '#shared/engine/vocabulary.ts'
 import { Item } from '../../entities/Item.ts'
 import type { GroupTx } from '../../group-transaction.ts'
+import { affectedKits } from '../evidence/affected-kits.ts'
 import { checkItem } from './check-item.ts'
 import { claimDesignation } from './claim-designation.ts'
 import { lockItem } from './lock-item.ts'
@@ -31,6 +32,8 @@ async function retire(tx: GroupTx, row: Item): Promise<Partial<Item>> {
   return { kitId: null, positionId: null, placeId: null }
 }
 
+const isInstrument = ({ category }: Item) => INSTRUMENT_CATEGORIES.some((one) => one === category)
+
 export const item: Thing<Item, Body, Answer> = {
   entity: Item,
   subject: 'item',
@@ -47,5 +50,6 @@ export const item: Thing<Item, Body, Answer> = {
   retire,
   bringBack: (tx, row) => claimDesignation(tx, 'item', row.designation),
   kitOf: (row) => row.kitId ?? null,
-  dependingKits: async (_tx, row) => (row.kitId ? [row.kitId] : []),
+  // An instrument speaks in the reasons of every kit that was measured with it.
+  dependingKits: (tx, row) => affectedKits(tx, row, isInstrument(row) ? 'calibration' : 'inspection'),
 }

@@ -67,10 +67,18 @@ export const place: Thing<Place, Body, Answer> = {
     const [row] = await tx.sql<PlaceRow>(READ, [tx.groupId, id])
     return row && placeOf(row)
   },
+  // The board names it.
+  dependingKits: async (tx, row) =>
+    (await tx.sql<{ id: string }>(KITS, [tx.groupId, row.id])).map(({ id }) => id),
   retire: async (tx, row) => {
     refuseInUse(row.name, await usesOf(tx, row.id), 'Move them elsewhere first.')
     return {}
   },
+}
+
+const KITS: Statement = {
+  name: 'kits-of-place',
+  text: `SELECT id FROM kit WHERE group_id = $1 AND retired_at IS NULL AND $2 IN (place_id, home_place_id) ORDER BY id`,
 }
 
 const USES: Statement = {

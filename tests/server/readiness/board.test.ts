@@ -141,6 +141,42 @@ describe('the board now', () => {
   })
 })
 
+describe('what the board shows besides readiness', () => {
+  const shown = async () => (await board()).rows[0]!
+  const change = async (path: string, version: number, body: object) => {
+    const answer = await atVersion(version, keeper.post(path, body))
+    expect([answer.status, answer.body.detail]).toEqual([200, undefined])
+  }
+
+  const sets = async (body: object) => {
+    const path = `/api/v1/kits/${counted.kit.id}`
+    await change(`${path}/availability`, (await keeper.get(path)).body.version, body)
+  }
+
+  it('follows the names of places and kinds, and the day of return, under a new revision', async () => {
+    const etag = async () => (await observer.get('/api/v1/board')).headers.etag
+    const tags = [await etag()]
+    await change(`/api/v1/places/${cage.id}`, cage.version, { name: 'Station cage' })
+    tags.push(await etag())
+    expect(await shown()).toMatchObject({ place: 'Station cage', homePlace: 'Station cage' })
+    const { code, station, promise, positions } = counted.kind
+    await change(`/api/v1/kit-kinds/${counted.kind.id}`, counted.kind.version, {
+      ...{ code, station, promise, positions },
+      name: 'Pouch kit',
+    })
+    tags.push(await etag())
+    expect(await shown()).toMatchObject({ kindName: 'Pouch kit' })
+    const out = { availability: 'out-of-service', reason: 'repair' }
+    await sets({ ...out, expectedReturnOn: '2026-06-20' })
+    tags.push(await etag())
+    await sets({ ...out, expectedReturnOn: '2026-06-25' })
+    tags.push(await etag())
+    expect(await shown()).toMatchObject({ expectedReturnOn: '2026-06-25', availabilityReason: 'repair' })
+    await sets({ availability: 'available' })
+    expect(new Set(tags).size).toBe(tags.length)
+  })
+})
+
 describe('the board at another time', () => {
   it('is what was known then', async () => {
     const before = await board(`?asOf=2026-06-01T12:10:00Z`)
