@@ -111,7 +111,12 @@ export const DETAIL_FIELDS = {
   headset: { connector: name, impedanceOhms: ohms },
   computer: { operatingSystem: name, software: contents, supplyV: volts, supplyA: amps },
   interface: { design: name, connectorA: name, connectorB: name },
-  filter: { design: name, bands: bands.optional(), ratedWatts: watts, lossDb: amount(0, 60).optional() },
+  filter: {
+    design: name,
+    bands: bands.optional(),
+    ratedWatts: watts,
+    insertionLossDb: amount(0, 60).optional(),
+  },
   'solar-panel': { ratedWatts: watts, openCircuitV: volts, shortCircuitA: amps, connector: name },
   'solar-controller': { design: z.enum(['pwm', 'mppt']).optional(), ratedA: amps, maxInputV: volts },
   'distribution-box': {

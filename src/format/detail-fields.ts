@@ -72,6 +72,7 @@ const FIELDS: Readonly<Record<string, DetailField>> = {
     label: 'Loss by band',
     hint: 'Radio to antenna, the antenna’s SWR included.',
   },
+  insertionLossDb: number('Insertion loss', 'dB', 2),
   chemistry: { kind: 'choice', label: 'Chemistry', options: CHEMISTRY_OPTIONS },
   ratedAh: number('Rated capacity', 'Ah', 2),
   nominalV: number('Nominal voltage', 'V', 2),
@@ -115,7 +116,6 @@ const FIELDS: Readonly<Record<string, DetailField>> = {
 
 /** Where a category means something else by a name. */
 const OWN: Readonly<Partial<Record<Category, Readonly<Record<string, DetailField>>>>> = {
-  filter: { lossDb: number('Insertion loss', 'dB', 2) },
   'solar-controller': {
     design: {
       kind: 'choice',

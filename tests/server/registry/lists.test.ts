@@ -119,8 +119,9 @@ describe('the list of kits', () => {
       total: 1,
       rows: [{ designation: 'K-01', items: 1, itemsPlanned: 4 }],
     })
-    const none = await keeper.get('/api/v1/kits?verdict=proven')
-    expect(none.body.total).toBe(0)
+    expect((await keeper.get('/api/v1/kits?verdict=proven')).body.total).toBe(0)
+    const unfit = await keeper.get('/api/v1/kits?verdict=not-fit')
+    expect(unfit.body.rows).toMatchObject([{ designation: 'K-01', verdict: 'not-fit', holdsUntil: null }])
   })
 
   it.each(['designation', 'tag', 'kind', 'place', 'availability', 'verdict', 'holdsUntil'])(

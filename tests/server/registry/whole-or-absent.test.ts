@@ -36,7 +36,7 @@ afterAll(async () => {
 })
 
 const TABLES = ['place', 'kit_kind', 'position', 'kit', 'item', 'movement', 'consumable', 'consumable_lot']
-const ADDED = ['stock_change', 'tag_print', 'audit_event', 'readiness_period', 'board_row']
+const ADDED = ['stock_change', 'tag_print', 'audit_event', 'readiness_period', 'board_row', 'board_count']
 
 /** Every row of every table that the operations touch, as one text. */
 async function everything(): Promise<string> {
