@@ -26,6 +26,7 @@ export function createApp(ctx: AppContext): Express {
   app.disable('etag')
   app.set('query parser', false)
   app.set('case sensitive routing', true)
+  app.set('strict routing', true)
   app.set('trust proxy', ctx.config.trustProxy)
   app.use(requestId(ctx))
   app.use(securityHeaders())

@@ -2,6 +2,7 @@ import { createHash } from 'node:crypto'
 import { existsSync, readdirSync, readFileSync } from 'node:fs'
 import { join, relative, sep } from 'node:path'
 import type { Request, RequestHandler, Response } from 'express'
+import { AppError } from '../errors.ts'
 
 interface StaticFile {
   readonly path: string
@@ -14,6 +15,9 @@ type Encoding = 'br' | 'gzip'
 
 const PACKED: Record<Encoding, string> = { br: '.br', gzip: '.gz' }
 
+/** However it is written, an address of the API is none of a page. */
+const API = /^\/api(\/|$)/i
+
 /** Names that the build made from the content: they can be kept for ever. */
 const HASHED = /^\/assets\//
 
@@ -25,10 +29,19 @@ export function staticFiles(folder: string): RequestHandler {
   const files = readFiles(folder)
   return (req, res, next) => {
     if (req.method !== 'GET' && req.method !== 'HEAD') return next()
-    if (req.path === '/api' || req.path.startsWith('/api/')) return next()
+    if (API.test(req.path)) return next()
+    if (!isReadable(req.path)) throw new AppError('request-malformed', 'The address cannot be read.')
     const file = files.get(req.path) ?? (isPage(req) ? files.get('/index.html') : undefined)
     if (!file) return next()
     send(req, res, file)
+  }
+}
+
+function isReadable(path: string): boolean {
+  try {
+    return !decodeURIComponent(path).includes('\0')
+  } catch {
+    return false
   }
 }
 

@@ -4,7 +4,7 @@ import { AppError } from '../errors.ts'
 
 /** Answers 405 with `Allow` where the path exists and the method does not. */
 export function methodGuard(endpoints: readonly Endpoint[]): Router {
-  const router = Router({ caseSensitive: true })
+  const router = Router({ caseSensitive: true, strict: true })
   const methods = new Map<string, Set<string>>()
   for (const { path, method } of endpoints) {
     const known = methods.get(path) ?? new Set()

@@ -2,7 +2,7 @@ import { z } from 'zod'
 import { isPlainDate } from '#shared/engine/plain-date.ts'
 
 /** Control characters other than tab and newline, and halves of surrogate pairs. */
-const UNPRINTABLE =
+export const UNPRINTABLE =
   /[\u0000-\u0008\u000B-\u001F\u007F]|[\uD800-\uDBFF](?![\uDC00-\uDFFF])|(?<![\uD800-\uDBFF])[\uDC00-\uDFFF]/
 
 /** Text as people type it: NFC, trimmed, without control characters; `max` counts UTF-16 units. */

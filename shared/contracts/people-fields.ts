@@ -1,13 +1,10 @@
 /** Fields of a person, as the session, the profile and the people page share them. */
 import { z } from 'zod'
-import { line, plainDate } from './fields.ts'
+import { line, plainDate, UNPRINTABLE } from './fields.ts'
 import { ROLES } from './roles.ts'
 
 /** Longest password that is taken; it is taken whole. */
 export const PASSWORD_MAX = 128
-
-/** NUL and halves of surrogate pairs. */
-const UNTYPEABLE = /\u0000|[\uD800-\uDBFF](?![\uDC00-\uDFFF])|(?<![\uD800-\uDBFF])[\uDC00-\uDFFF]/
 
 /** Shortest password while it is the only factor. */
 export const PASSWORD_MIN = 15
@@ -19,7 +16,7 @@ export const PASSWORD_MIN = 15
 const anyPassword = z
   .string()
   .max(4 * PASSWORD_MAX, `At most ${PASSWORD_MAX} characters.`)
-  .refine((value) => !UNTYPEABLE.test(value), 'Contains characters that cannot be typed.')
+  .refine((value) => !UNPRINTABLE.test(value), 'Contains characters that cannot be typed.')
   .transform((value) => value.normalize('NFC'))
 
 const lengthOf = (value: string) => [...value].length

@@ -27,6 +27,7 @@ export async function asOwner<Row extends pg.QueryResultRow>(
   values: unknown[] = [],
 ): Promise<Row[]> {
   const client = new pg.Client({ connectionString: app.database?.ownerUrl })
+  client.on('error', () => undefined)
   await client.connect()
   try {
     return (await client.query<Row>(sql, values)).rows

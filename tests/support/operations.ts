@@ -13,6 +13,7 @@ export interface Operation {
   readonly params: readonly string[]
   /** Query parameters that it cannot do without. */
   readonly query: readonly Parameter[]
+  readonly optionalQuery: readonly string[]
   readonly body: JsonSchema | undefined
   readonly versioned: boolean
 }
@@ -42,6 +43,9 @@ export async function readOperations(app: TestApp): Promise<Operation[]> {
       access: operation['x-access'],
       params: operation.parameters.filter((each) => each.in === 'path').map((each) => each.name),
       query: operation.parameters.filter((each) => each.in === 'query' && each.required),
+      optionalQuery: operation.parameters
+        .filter((each) => each.in === 'query' && !each.required)
+        .map((each) => each.name),
       body: operation.requestBody?.content['application/json'].schema,
       versioned: operation.parameters.some((each) => each.name === 'If-Match'),
     })),

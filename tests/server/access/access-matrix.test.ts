@@ -6,7 +6,7 @@
  */
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { ROLES, type Role } from '#shared/contracts/roles.ts'
-import { asOwner } from '../../support/audit-entries.ts'
+import { allRows } from '../../support/all-rows.ts'
 import { givenRecords, idsOfNothing } from '../../support/group-records.ts'
 import {
   isCreation,
@@ -21,6 +21,7 @@ import { startTestApp, type TestApp, type TestGroup } from '../../support/test-a
 
 let app: TestApp
 let group: TestGroup
+let other: TestGroup
 let operations: Operation[]
 let own: Ids
 let foreign: Ids
@@ -30,7 +31,8 @@ beforeAll(async () => {
   operations = await readOperations(app)
   group = await app.givenGroup('Ridge Group')
   own = await recordsOf(group)
-  foreign = await recordsOf(await app.givenGroup('Valley Group'), 1)
+  other = await app.givenGroup('Valley Group')
+  foreign = await recordsOf(other, 1)
 }, 120_000)
 afterAll(() => app.close())
 
@@ -94,38 +96,19 @@ describe('access', () => {
 
 describe('a record of another group', () => {
   it('is answered for as one that does not exist, and stays as it is', { timeout: 300_000 }, async () => {
-    const before = await everyRow('Valley Group')
+    const before = await allRows(app, other.id)
     for (const operation of operations.filter(
       ({ params, access }) => params.length > 0 && access.scope !== 'public',
     )) {
       for (const role of ROLES.filter((each) => allows(operation, each))) {
         const nothing = await as(role, operation, idsOfNothing())
-        const other = await as(role, operation, foreign)
-        const answers = { operation: operation.name, role, ...other }
+        const answer = await as(role, operation, foreign)
+        const answers = { operation: operation.name, role, ...answer }
         // A creation under an id that is in use is refused, whoever uses it; under a free one it may be made.
         if (isCreation(operation)) expect(answers.status).toBeGreaterThanOrEqual(400)
         else expect(answers).toEqual({ operation: operation.name, role, ...nothing })
       }
     }
-    expect(await everyRow('Valley Group')).toEqual(before)
+    expect(await allRows(app, other.id)).toEqual(before)
   })
 })
-
-/** All rows that belong to a group, as text, by table. */
-async function everyRow(name: string): Promise<Record<string, string[]>> {
-  const [of] = await asOwner<{ id: string }>(app, 'SELECT id FROM groups WHERE name = $1', [name])
-  const tables = await asOwner<{ table_name: string }>(
-    app,
-    `SELECT table_name FROM information_schema.columns WHERE table_schema = 'public' AND column_name = 'group_id'`,
-  )
-  const rows: Record<string, string[]> = {}
-  for (const { table_name: table } of tables) {
-    const found = await asOwner<{ row: string }>(
-      app,
-      `SELECT t::text AS row FROM ${table} t WHERE t.group_id = $1 ORDER BY 1`,
-      [of?.id],
-    )
-    rows[table] = found.map(({ row }) => row)
-  }
-  return rows
-}
