@@ -62,7 +62,7 @@ export async function deliverMail(
 
 /** Retries what is waiting, in every group; also picks up what a crash left behind. */
 export async function sweepMail(ctx: AppContext, transport: MailTransport): Promise<void> {
-  const rows: { group_id: string }[] = await ctx.db.query(
+  const { rows } = await poolOf(ctx.db).query<{ group_id: string }>(
     'SELECT group_id FROM groups_with_mail_waiting($1)',
     [ctx.clock.now()],
   )
