@@ -151,7 +151,7 @@ export const preset = definePreset(
         bodyCell: { padding: '0.3rem 0.9rem' },
         paginatorBottom: { borderWidth: '0' },
       },
-      paginator: { padding: '0.5rem 0', navButton: { borderRadius: '3px' } },
+      paginator: { root: { padding: '0.5rem 0' }, navButton: { borderRadius: '3px' } },
     },
     semantic: {
       primary: shades('var(--solid)'),

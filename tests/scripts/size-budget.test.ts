@@ -10,7 +10,7 @@ const manifest: Manifest = {
     isEntry: true,
     imports: ['_vue.js'],
     css: ['assets/index.css'],
-    assets: ['assets/inter-latin-wght-normal-1.woff2', 'assets/inter-latin-ext-wght-normal-1.woff2'],
+    assets: ['assets/inter-interface-1.woff2', 'assets/inter-latin-wght-normal-1.woff2'],
   },
   '_vue.js': { file: 'assets/vue.js' },
   '_rows.js': { file: 'assets/rows.js', imports: ['_vue.js'] },
@@ -37,7 +37,7 @@ describe('firstLoad', () => {
   })
 
   it('counts the Latin subset of a font only', () => {
-    expect(load.fonts).toEqual(['assets/inter-latin-wght-normal-1.woff2'])
+    expect(load.fonts).toEqual(['assets/inter-interface-1.woff2'])
   })
 
   it('refuses a view that was not built', () => {
