@@ -1,6 +1,6 @@
 import type { Band, Procedure } from '../vocabulary.ts'
-import { capital, onBand, PROCEDURE_WORDS } from './sentences.ts'
 import type { Action } from './types.ts'
+import { capital, onBand, PROCEDURE_WORDS } from './words.ts'
 
 /** What would lift a reason, with attended minutes. */
 

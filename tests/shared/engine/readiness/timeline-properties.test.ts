@@ -5,7 +5,8 @@ import { fixList } from '#shared/engine/readiness/fix-list.ts'
 import { kitTimeline } from '#shared/engine/readiness/timeline.ts'
 import type { KitState, Period } from '#shared/engine/readiness/types.ts'
 import { RUNS, SLOW } from './support/runs.ts'
-import { arbitraryKit, decision, hoursFromNow, NOW } from './support/arbitrary-kits.ts'
+import { hoursFromNow, NOW } from './support/arbitrary-items.ts'
+import { arbitraryKit, decision } from './support/arbitrary-kits.ts'
 import { demoPolicy } from './support/policy.ts'
 
 /** Random kits with decisions and a second policy to come: whatever they say, the shape of the answer holds. */
