@@ -118,8 +118,9 @@ export const routes: RouteRecordRaw[] = [
     meta: { title: 'Forgot password', public: true, light: true },
   },
   {
-    // Mailed links lead here: /link#<secret>.
-    path: '/link',
+    // Mailed links lead here: /invitation#<secret> and /reset-password#<secret>.
+    path: '/invitation',
+    alias: '/reset-password',
     name: 'mailed-link',
     component: () => import('@/views/MailedLinkView.vue'),
     meta: { title: 'Your link', public: true, light: true },
