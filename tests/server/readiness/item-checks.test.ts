@@ -43,7 +43,8 @@ describe('the checks of one item', () => {
   })
 
   it('are known of a spare too, which is vital to nothing', async () => {
-    const spare = await givenItem(keeper, 'transformer')
+    const details = { category: 'transformer', bands: ['10 m'] }
+    const spare = await givenItem(keeper, 'transformer', { details })
     await givenItem(keeper, 'transformer')
     const before = await checksOf(spare.id)
     expect(before.find(({ procedure }) => procedure === 'heat-test')).toMatchObject({
