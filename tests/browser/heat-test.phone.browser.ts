@@ -99,13 +99,13 @@ test('a server killed while it saves stores the test once, after the phone tries
   page,
   product,
 }) => {
-  await begin(page, product, 'XFM-01')
+  await begin(page, product, 'XFM-07')
   await read(page, 22)
-  await page.clock.fastForward(60_000)
-  await read(page, 30)
+  await page.clock.fastForward(8 * 60_000)
+  await read(page, 86)
   await page.getByRole('button', { name: 'Key released' }).click()
   await page.getByRole('button', { name: 'Go on without the cooling reading' }).click()
-  const before = await countOf(product, 'XFM-01')
+  const before = await countOf(product, 'XFM-07')
 
   // The request arrives and the process dies: whether the transaction was through or not, the answer is lost.
   await page.route('**/api/v1/tests/*', async (route) => {
@@ -120,8 +120,8 @@ test('a server killed while it saves stores the test once, after the phone tries
   await page.unroute('**/api/v1/tests/*')
   await product.restart()
   await page.getByRole('button', { name: 'Record the test' }).click()
-  await expect(page.getByText('Recorded for XFM-01.')).toBeVisible()
-  expect(await countOf(product, 'XFM-01')).toBe(before + 1)
+  await expect(page.getByText('Recorded for XFM-07.')).toBeVisible()
+  expect(await countOf(product, 'XFM-07')).toBe(before + 1)
 })
 
 async function countOf(product: Product, designation: string): Promise<number> {
