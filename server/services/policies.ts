@@ -89,13 +89,8 @@ async function readPolicies(tx: GroupTx, zone: string): Promise<PolicyVersion[]>
     createdAt: row.created_at,
     effectiveFrom: localMidnight(row.effective_on, zone),
     settings: row.settings,
-    rules: (byPolicy.get(row.id) ?? []).map(ruleOf).sort(byConditions),
+    rules: (byPolicy.get(row.id) ?? []).map(ruleOf),
   }))
-}
-
-/** The first rule that fits is the one that holds: more conditions come before fewer. */
-function byConditions(a: Rule, b: Rule): number {
-  return Object.keys(b.applies).length - Object.keys(a.applies).length
 }
 
 function ruleOf(row: RuleRow): Rule {

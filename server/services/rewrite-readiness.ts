@@ -24,20 +24,26 @@ const STEP = 200
  * leaves the board. Call it last: whatever the verdict depends on must already be written.
  */
 export async function rewriteReadiness(tx: GroupTx, kitIds: readonly string[]): Promise<void> {
-  await rewriteAndCompare(tx, kitIds)
-}
-
-/** The same, and says for each kit that is in use what held before and what holds now. */
-export async function rewriteAndCompare(tx: GroupTx, kitIds: readonly string[]): Promise<KitChange[]> {
   const ids = [...new Set(kitIds)].sort()
-  const changes: KitChange[] = []
   for (let at = 0; at < ids.length; at += STEP) {
-    changes.push(...(await rewriteStep(tx, ids.slice(at, at + STEP))))
+    const rewriting = await prepareRewriting(tx, ids.slice(at, at + STEP))
+    await rewriting.write()
   }
-  return changes
 }
 
-async function rewriteStep(tx: GroupTx, kitIds: readonly string[]): Promise<KitChange[]> {
+/** A rewriting that is computed and not yet written. */
+export interface KitRewriting {
+  /** What it does to each kit that is in use. */
+  readonly changes: readonly KitChange[]
+  write(): Promise<void>
+}
+
+/**
+ * The two halves of the same, for a caller that has more to send: the first reads and computes, `write` writes. All
+ * statements of the first are sent before it is awaited, so they see what was sent before them.
+ */
+export async function prepareRewriting(tx: GroupTx, kitIds: readonly string[]): Promise<KitRewriting> {
+  if (kitIds.length === 0) return { changes: [], write: async () => undefined }
   const [, kits, stored, kept] = await Promise.all([
     lockKits(tx, kitIds),
     loadKitStates(tx, kitIds, policiesOrFirst),
@@ -49,10 +55,12 @@ async function rewriteStep(tx: GroupTx, kitIds: readonly string[]): Promise<KitC
     const id = kit.state.kit.id
     return rewriteOne(tx.now.getTime(), { kit, stored: stored.get(id) ?? [], kept: keptOf.get(id) })
   })
-  await writeResults(tx, results)
-  return results.flatMap(({ kit, before, future: [after] }) =>
-    after ? [{ kitId: kit.state.kit.id, designation: kit.state.kit.designation, before, after }] : [],
-  )
+  return { changes: results.flatMap(changeTo), write: () => writeResults(tx, results) }
+}
+
+function changeTo({ kit, before, future: [after] }: Rewriting): KitChange[] {
+  const { id: kitId, designation } = kit.state.kit
+  return after ? [{ kitId, designation, before, after }] : []
 }
 
 interface OneKit {

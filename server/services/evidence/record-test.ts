@@ -1,22 +1,25 @@
 import type { RecordTestBody } from '#shared/contracts/record-test.ts'
 import type { StoredTest } from '#shared/contracts/test-shapes.ts'
-import { isFailure } from '#shared/engine/outcome.ts'
-import { judgeTest } from '#shared/engine/procedures/judge-test.ts'
+import { isFailure, type Failure } from '#shared/engine/outcome.ts'
+import type { PlainDate } from '#shared/engine/plain-date.ts'
+import { judgeTest, type KnownForTest } from '#shared/engine/procedures/judge-test.ts'
 import type { Judgement } from '#shared/engine/procedures/judgement.ts'
 import { policyAt, ruleFor } from '#shared/engine/readiness/rules-in-force.ts'
+import type { Policy, Rule } from '#shared/engine/readiness/types.ts'
+import type { Band } from '#shared/engine/vocabulary.ts'
 import type { Caller } from '../../caller.ts'
 import type { AppContext } from '../../context.ts'
 import { AppError } from '../../errors.ts'
 import { inGroup, localDay, type GroupTx } from '../../group-transaction.ts'
 import { policiesOrFirst } from '../first-policy.ts'
 import { lockKits } from '../lock-kits.ts'
-import { rewriteAndCompare } from '../rewrite-readiness.ts'
+import { prepareRewriting } from '../rewrite-readiness.ts'
 import { affectedKits } from './affected-kits.ts'
 import { auditTest } from './audit-test.ts'
 import { contentHash, insertTest, type TestToInsert } from './insert-test.ts'
 import { accuracyOf, knownForTest } from './known-for-test.ts'
 import { readStoredTest, storedHash } from './stored-test.ts'
-import { applyConsequences } from './test-consequences.ts'
+import { applyConsequences, hasConsequences } from './test-consequences.ts'
 import { insertEffects } from './test-effects.ts'
 import {
   checkSuperseded,
@@ -48,20 +51,38 @@ interface Recording {
   readonly operatorId: string
 }
 
-/** The same inside a transaction at hand. */
+/**
+ * The same inside a transaction at hand. What does not wait for another answer is sent together: on a busy kit every
+ * round trip is one more that all others wait for.
+ */
 export async function recordTestIn(tx: GroupTx, recording: Recording): Promise<StoredTest> {
   const { testId, body, operatorId } = recording
-  const hash = contentHash(body, operatorId)
-  const known = await storedHash(tx, testId)
-  if (known) return sameAgain(tx, testId, { known, sent: hash })
-  const { subject, test } = await judge(tx, recording, hash)
+  const sent = contentHash(body, operatorId)
+  const [hash, judged] = await Promise.allSettled([storedHash(tx, testId), judge(tx, recording, sent)])
+  const known = valueOf(hash)
+  // A resend gets its answer also when what it names has changed meanwhile.
+  if (known) return sameAgain(tx, testId, { known, sent })
+  const { subject, test } = valueOf(judged)
   const kitIds = await affectedKits(tx, subject, body.procedure)
-  const [, isNew] = await Promise.all([lockKits(tx, kitIds), insertTest(tx, test)])
-  if (!isNew) return sameAgain(tx, testId, { known: await storedHash(tx, testId), sent: hash })
-  await applyConsequences(tx, test)
-  const changes = await rewriteAndCompare(tx, kitIds)
-  await Promise.all([insertEffects(tx, testId, changes), auditTest(tx, { subject, test })])
-  return readStoredTest(tx, testId)
+  const inserting = Promise.all([lockKits(tx, kitIds), insertTest(tx, test)])
+  if (hasConsequences(body)) {
+    const [, isNew] = await inserting
+    if (isNew) await applyConsequences(tx, test)
+  }
+  const [[, isNew], rewriting] = await Promise.all([inserting, prepareRewriting(tx, kitIds)])
+  if (!isNew) return sameAgain(tx, testId, { known: await storedHash(tx, testId), sent })
+  const [, , , stored] = await Promise.all([
+    insertEffects(tx, testId, rewriting.changes),
+    auditTest(tx, { subject, test }),
+    rewriting.write(),
+    readStoredTest(tx, testId),
+  ])
+  return stored
+}
+
+function valueOf<T>(settled: PromiseSettledResult<T>): T {
+  if (settled.status === 'rejected') throw settled.reason
+  return settled.value
 }
 
 async function sameAgain(
@@ -95,9 +116,9 @@ async function judge(
   const performedOn = localDay(performedAt, zone)
   const policy = policyAt({ policies }, performedAt.getTime())
   if (!policy) throw new Error('A group without a policy')
-  const rule = ruleFor(policy, subject, body.procedure, performedOn)
+  const rule = ruleOf(policy, { subject, body, performedOn })
   const accuracy = accuracyOf(instrument)
-  const judgement = judged(body, await knownForTest(tx, { body, performedAt, subject, rule, accuracy }))
+  const judgement = judgementOf(body, await knownForTest(tx, { body, performedAt, subject, rule, accuracy }))
   return {
     subject,
     test: {
@@ -115,14 +136,32 @@ async function judge(
   }
 }
 
-function judged(body: RecordTestBody, known: Awaited<ReturnType<typeof knownForTest>>): Judgement {
+/** A heat test is about one band; a band that no rule names is tested the way that the others are. */
+function ruleOf(
+  policy: Policy,
+  test: { subject: TestSubject; body: RecordTestBody; performedOn: PlainDate },
+): Rule | undefined {
+  const { subject, body, performedOn } = test
+  const on = (band: Band | null) => ruleFor(policy, subject, body.procedure, performedOn, band)
+  return (body.procedure === 'heat-test' ? on(body.inputs.band) : undefined) ?? on(null)
+}
+
+function judgementOf(body: RecordTestBody, known: KnownForTest): Judgement {
   const judgement = judgeTest(body, known)
   if (!isFailure(judgement)) return judgement
-  const { field, line, message } = judgement
-  const pointer = ['#/inputs', field, line === undefined ? undefined : line - 1].filter(
-    (part) => part !== undefined,
-  )
   throw new AppError('request-invalid', 'The test cannot be judged as it stands. Nothing was saved.', {
-    errors: [{ pointer: pointer.join('/'), detail: message }],
+    errors: [{ pointer: pointerTo(body.procedure, judgement), detail: judgement.message }],
   })
+}
+
+/** Where the rows of a procedure's inputs stand, for a failure that names one by its number. */
+const ROWS: Partial<Record<RecordTestBody['procedure'], string>> = {
+  'heat-test': 'readings',
+  'pair-loss': 'bands',
+}
+
+function pointerTo(procedure: RecordTestBody['procedure'], { field, line }: Failure): string {
+  const rows = ROWS[procedure]
+  const row = line === undefined || rows === undefined ? [] : [rows, line - 1]
+  return ['#/inputs', ...row, ...(field === undefined ? [] : [field])].join('/')
 }

@@ -12,12 +12,16 @@ export async function applyConsequences(
   tx: GroupTx,
   { id, body, performedAt, performedOn }: TestToInsert,
 ): Promise<void> {
-  if (body.procedure !== 'inspection' && body.procedure !== 'count') return
+  if (!hasConsequences(body)) return
   const subjectId = 'kitId' in body ? body.kitId : body.itemId
   const [newer] = await tx.sql(NEWER, [subjectId, body.procedure, performedAt, id])
   if (newer) return
   if (body.procedure === 'inspection') await applyInspection(tx, body)
   else await applyCount(tx, body, performedOn)
+}
+
+export function hasConsequences(body: RecordTestBody): body is Inspection | Count {
+  return body.procedure === 'inspection' || body.procedure === 'count'
 }
 
 const NEWER: Statement = {

@@ -84,6 +84,11 @@ describe('recording a heat test', () => {
     const answer = await put({ ...whole, inputs: { ...whole.inputs, readings, keyUpAtS: 120 } })
     expect(answer.status).toBe(422)
     expect(answer.body.errors).toMatchObject([{ pointer: '#/inputs/keyUpAtS' }])
+    const stood = whole.inputs.readings.map((reading, index) =>
+      index === 2 ? { ...reading, atS: 60 } : reading,
+    )
+    const backwards = await put({ ...whole, inputs: { ...whole.inputs, readings: stood } })
+    expect(backwards.body.errors).toMatchObject([{ pointer: '#/inputs/readings/2/atS' }])
   })
 })
 
