@@ -13,10 +13,10 @@ import { namedOf, RECORD_COLUMNS, recordFieldsOf, type RecordColumns } from './v
 type Body = z.output<typeof batchBody>
 type Answer = z.input<typeof batchRecord>
 
+const ITEMS = `(SELECT count(*)::int FROM item i
+    WHERE i.group_id = t.group_id AND i.batch_id = t.id AND i.retired_at IS NULL)`
 const COLUMNS = `t.id, t.name, t.core_lot, t.built_on::text, t.notes, t.build_sheet_id, s.name AS build_sheet_name,
-  t.builder_id, m.name AS builder_name, ${RECORD_COLUMNS},
-  (SELECT count(*)::int FROM item i
-    WHERE i.group_id = t.group_id AND i.batch_id = t.id AND i.retired_at IS NULL) AS items`
+  t.builder_id, m.name AS builder_name, ${RECORD_COLUMNS}, ${ITEMS} AS items`
 const FROM = 'batch t JOIN build_sheet s ON s.id = t.build_sheet_id LEFT JOIN member m ON m.id = t.builder_id'
 
 interface BatchRow extends RecordColumns {
@@ -41,7 +41,7 @@ const LIST: ListSource = {
     buildSheet: 'lower(s.name)',
     coreLot: 'lower(t.core_lot)',
     builtOn: 't.built_on',
-    items: 'items',
+    items: ITEMS,
   },
 }
 

@@ -16,12 +16,13 @@ import { RECORD_COLUMNS, recordFieldsOf, type RecordColumns } from './values.ts'
 type Body = z.output<typeof buildSheetBody>
 type Answer = z.input<typeof buildSheetRecord>
 
-const COLUMNS = `t.id, t.name, t.category, t.details, t.notes, ${RECORD_COLUMNS},
-  (SELECT count(*)::int FROM batch b
-    WHERE b.group_id = t.group_id AND b.build_sheet_id = t.id AND b.retired_at IS NULL) AS batches,
-  (SELECT count(*)::int FROM item i LEFT JOIN batch b ON b.id = i.batch_id
+const BATCHES = `(SELECT count(*)::int FROM batch b
+    WHERE b.group_id = t.group_id AND b.build_sheet_id = t.id AND b.retired_at IS NULL)`
+const ITEMS = `(SELECT count(*)::int FROM item i LEFT JOIN batch b ON b.id = i.batch_id
     WHERE i.group_id = t.group_id AND coalesce(i.build_sheet_id, b.build_sheet_id) = t.id
-      AND i.retired_at IS NULL) AS items`
+      AND i.retired_at IS NULL)`
+const COLUMNS = `t.id, t.name, t.category, t.details, t.notes, ${RECORD_COLUMNS},
+  ${BATCHES} AS batches, ${ITEMS} AS items`
 
 interface BuildSheetRow extends RecordColumns {
   id: string
@@ -37,7 +38,7 @@ const LIST: ListSource = {
   columns: COLUMNS,
   from: 'build_sheet t',
   search: ['t.name', 't.notes'],
-  sorts: { name: 'lower(t.name)', category: 't.category', batches: 'batches', items: 'items' },
+  sorts: { name: 'lower(t.name)', category: 't.category', batches: BATCHES, items: ITEMS },
 }
 
 const READ: Statement = {

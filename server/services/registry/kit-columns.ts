@@ -9,11 +9,13 @@ type Answer = Omit<z.input<typeof kitRow>, 'items' | 'itemsPlanned'>
 export const KIT_VERDICT = `CASE WHEN b.valid_until > $2 THEN b.verdict ELSE (
     SELECT p.verdict FROM readiness_period p WHERE p.kit_id = t.id AND p.during @> $2::timestamptz) END`
 
+export const KIT_HOLDS_UNTIL = `CASE WHEN b.valid_until > $2 AND b.holds_until < 'infinity' THEN b.holds_until END`
+
 export const KIT_COLUMNS = `t.id, t.tag, t.designation, t.availability, t.availability_reason,
   t.expected_return_on::text, t.kit_kind_id, kk.code AS kind_code, kk.name AS kind_name, kk.station,
   t.home_place_id, hp.name AS home_place_name, t.place_id, p.name AS place_name,
   t.holder_id, m.name AS holder_name, t.responsible_id, rm.name AS responsible_name, ${RECORD_COLUMNS}, ${KIT_VERDICT} AS verdict,
-  CASE WHEN b.valid_until > $2 AND b.holds_until < 'infinity' THEN b.holds_until END AS holds_until`
+  ${KIT_HOLDS_UNTIL} AS holds_until`
 
 export const KIT_TABLES = `kit t JOIN kit_kind kk ON kk.id = t.kit_kind_id
   LEFT JOIN place hp ON hp.id = t.home_place_id LEFT JOIN place p ON p.id = t.place_id

@@ -21,10 +21,11 @@ import { RECORD_COLUMNS, recordFieldsOf, type RecordColumns } from './values.ts'
 type Body = z.output<typeof kitKindBody>
 type Answer = z.input<typeof kitKindRecord>
 
-const COLUMNS = `t.id, t.code, t.name, t.station, t.promise, ${RECORD_COLUMNS},
-  (SELECT count(*)::int FROM kit k
-    WHERE k.group_id = t.group_id AND k.kit_kind_id = t.id AND k.retired_at IS NULL) AS kits,
-  (SELECT count(*)::int FROM position p WHERE p.kit_kind_id = t.id AND p.removed_at IS NULL) AS positions,
+const KITS = `(SELECT count(*)::int FROM kit k
+    WHERE k.group_id = t.group_id AND k.kit_kind_id = t.id AND k.retired_at IS NULL)`
+const POSITIONS = `(SELECT count(*)::int FROM position p WHERE p.kit_kind_id = t.id AND p.removed_at IS NULL)`
+const COLUMNS = `t.id, t.code, t.name, t.station, t.promise, ${RECORD_COLUMNS}, ${KITS} AS kits,
+  ${POSITIONS} AS positions,
   (SELECT coalesce(sum(p.quantity), 0)::int FROM position p
     WHERE p.kit_kind_id = t.id AND p.removed_at IS NULL) AS items`
 
@@ -43,7 +44,7 @@ const LIST: ListSource = {
   columns: COLUMNS,
   from: 'kit_kind t',
   search: ['t.code', 't.name'],
-  sorts: { code: 'lower(t.code)', name: 'lower(t.name)', kits: 'kits', positions: 'positions' },
+  sorts: { code: 'lower(t.code)', name: 'lower(t.name)', kits: KITS, positions: POSITIONS },
 }
 
 const READ: Statement = {

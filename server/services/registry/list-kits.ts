@@ -2,7 +2,14 @@ import type { QueryOf } from '#shared/contracts/endpoint.ts'
 import type { listKits as contract } from '#shared/contracts/kits.ts'
 import type { AppContext } from '../../context.ts'
 import { inGroup } from '../../group-transaction.ts'
-import { KIT_COLUMNS, KIT_TABLES, KIT_VERDICT, kitFieldsOf, type KitColumns } from './kit-columns.ts'
+import {
+  KIT_COLUMNS,
+  KIT_HOLDS_UNTIL,
+  KIT_TABLES,
+  KIT_VERDICT,
+  kitFieldsOf,
+  type KitColumns,
+} from './kit-columns.ts'
 import { listPage, optional, type ListSource } from './list-page.ts'
 import type { By } from './thing.ts'
 
@@ -21,7 +28,7 @@ const LIST: ListSource = {
     place: 'lower(p.name)',
     availability: 't.availability',
     verdict: 'b.verdict_rank',
-    holdsUntil: 'holds_until',
+    holdsUntil: KIT_HOLDS_UNTIL,
   },
 }
 

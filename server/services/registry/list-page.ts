@@ -43,17 +43,23 @@ export async function listPage<Row extends QueryResultRow>(
   { query, conditions }: { query: PageQuery; conditions: readonly Condition[] },
 ): Promise<{ rows: Row[]; total: number }> {
   const { where, values } = whereClause(tx, source, { query, conditions })
-  const direction = query.descending ? 'DESC' : 'ASC'
-  const order = `${source.sorts[query.sort]} ${direction} NULLS LAST, t.id ${direction}`
-  const limit = `LIMIT ${query.size} OFFSET ${(query.page - 1) * query.size}`
   const [rows, counts] = await Promise.all([
-    tx.sql<Row>(
-      unnamed(`SELECT ${source.columns} FROM ${source.from} ${where} ORDER BY ${order} ${limit}`),
-      values,
-    ),
+    tx.sql<Row>(unnamed(pageText(source, query, where)), values),
     tx.sql<{ total: number }>(unnamed(`SELECT count(*)::int AS total FROM ${source.from} ${where}`), values),
   ])
   return { rows, total: counts[0]?.total ?? 0 }
+}
+
+/** First the ids of the page, from the tables that its filters and its sort need; then the columns of these rows only. */
+function pageText({ from, columns, sorts }: ListSource, query: PageQuery, where: string): string {
+  const direction = query.descending ? 'DESC' : 'ASC'
+  const order = `${direction} NULLS LAST`
+  return `WITH page AS MATERIALIZED (
+      SELECT t.id, ${sorts[query.sort]} AS sort_key FROM ${from} ${where}
+      ORDER BY sort_key ${order}, t.id ${direction} LIMIT ${query.size} OFFSET ${(query.page - 1) * query.size})
+    SELECT ${columns} FROM ${from} JOIN page ON page.id = t.id
+    WHERE t.group_id = $1 AND $2::timestamptz IS NOT NULL
+    ORDER BY page.sort_key ${order}, t.id ${direction}`
 }
 
 /** Filters and sorts make too many texts to keep prepared: planned anew each time. */

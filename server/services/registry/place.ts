@@ -12,11 +12,12 @@ import { numeric, number, RECORD_COLUMNS, recordFieldsOf, type RecordColumns } f
 type Body = z.output<typeof placeBody>
 type Answer = z.input<typeof placeRecord>
 
+const KITS = `(SELECT count(*)::int FROM kit k
+    WHERE k.group_id = t.group_id AND k.place_id = t.id AND k.retired_at IS NULL)`
+const ITEMS = `(SELECT count(*)::int FROM item i
+    WHERE i.group_id = t.group_id AND i.place_id = t.id AND i.retired_at IS NULL)`
 const COLUMNS = `t.id, t.name, t.kind, t.min_c, t.max_c, t.access, t.key_holders, ${RECORD_COLUMNS},
-  (SELECT count(*)::int FROM kit k
-    WHERE k.group_id = t.group_id AND k.place_id = t.id AND k.retired_at IS NULL) AS kits,
-  (SELECT count(*)::int FROM item i
-    WHERE i.group_id = t.group_id AND i.place_id = t.id AND i.retired_at IS NULL) AS items`
+  ${KITS} AS kits, ${ITEMS} AS items`
 
 interface PlaceRow extends RecordColumns {
   id: string
@@ -34,7 +35,7 @@ const LIST: ListSource = {
   columns: COLUMNS,
   from: 'place t',
   search: ['t.name', 't.kind', 't.access', 't.key_holders'],
-  sorts: { name: 'lower(t.name)', kind: 'lower(t.kind)', kits: 'kits', items: 'items' },
+  sorts: { name: 'lower(t.name)', kind: 'lower(t.kind)', kits: KITS, items: ITEMS },
 }
 
 const READ: Statement = {
@@ -69,14 +70,14 @@ export const place: Thing<Place, Body, Answer> = {
   },
   // The board names it.
   dependingKits: async (tx, row) =>
-    (await tx.sql<{ id: string }>(KITS, [tx.groupId, row.id])).map(({ id }) => id),
+    (await tx.sql<{ id: string }>(KITS_OF_PLACE, [tx.groupId, row.id])).map(({ id }) => id),
   retire: async (tx, row) => {
     refuseInUse(row.name, await usesOf(tx, row.id), 'Move them elsewhere first.')
     return {}
   },
 }
 
-const KITS: Statement = {
+const KITS_OF_PLACE: Statement = {
   name: 'kits-of-place',
   text: `SELECT id FROM kit WHERE group_id = $1 AND retired_at IS NULL AND $2 IN (place_id, home_place_id) ORDER BY id`,
 }
