@@ -106,12 +106,14 @@ const COUNT: Statement = {
     ORDER BY d.station, d.availability, d.verdict
     ON CONFLICT (group_id, station, availability, verdict) DO UPDATE SET n = c.n + excluded.n`,
 }
+// Never below the clock: after a backup was restored no number comes again that a browser holds another board under.
 // One statement for both, so that the number need not come back before it is told.
 const REVISE: Statement = {
   name: 'raise-board-revision',
   text: `WITH next AS (
-      INSERT INTO board_revision AS r (group_id, revision) VALUES ($1, 1)
-      ON CONFLICT (group_id) DO UPDATE SET revision = r.revision + 1 RETURNING revision)
+      INSERT INTO board_revision AS r (group_id, revision) VALUES ($1, $3::bigint)
+      ON CONFLICT (group_id) DO UPDATE SET revision = greatest(r.revision + 1, excluded.revision)
+      RETURNING revision)
     SELECT pg_notify('halyard_board',
       json_build_object('groupId', $1::uuid, 'revision', revision, 'kitIds', $2::json)::text) FROM next`,
 }
@@ -149,7 +151,7 @@ const NAMED_KITS = 100
  */
 export async function raiseRevision(tx: GroupTx, kitIds: readonly string[]): Promise<void> {
   const named = kitIds.length <= NAMED_KITS ? kitIds : []
-  await tx.sql(REVISE, [tx.groupId, JSON.stringify(named)])
+  await tx.sql(REVISE, [tx.groupId, JSON.stringify(named), tx.now.getTime()])
 }
 
 type Counted = Pick<KeptRow, 'station' | 'availability' | 'verdict'>

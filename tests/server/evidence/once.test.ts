@@ -35,7 +35,7 @@ async function written(): Promise<Record<string, number>> {
       name: '',
       text: `SELECT (SELECT count(*)::int FROM test) AS tests, (SELECT count(*)::int FROM test_effect) AS effects,
         (SELECT count(*)::int FROM audit_event) AS entries, (SELECT count(*)::int FROM readiness_period) AS periods,
-        (SELECT revision::int FROM board_revision) AS revision, (SELECT sum(n)::int FROM board_count) AS counted`,
+        (SELECT revision::float8 FROM board_revision) AS revision, (SELECT sum(n)::int FROM board_count) AS counted`,
     }),
   )
   return row!

@@ -1,5 +1,6 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { boardAnswer, type BoardAnswer } from '#shared/contracts/board.ts'
+import { raiseRevision } from '#server/services/board-rows.ts'
 import { refreshBoard } from '#server/services/refresh-board.ts'
 import { fullCount, givenStation, recorded, type Station } from '../../support/evidence.ts'
 import {
@@ -174,6 +175,18 @@ describe('what the board shows besides readiness', () => {
     expect(await shown()).toMatchObject({ expectedReturnOn: '2026-06-25', availabilityReason: 'repair' })
     await sets({ availability: 'available' })
     expect(new Set(tags).size).toBe(tags.length)
+  })
+})
+
+describe('the revision', () => {
+  it('is never one that a browser can hold from before a backup was restored', async () => {
+    const { revision } = await board()
+    expect(revision).toBeGreaterThanOrEqual(app.clock.now().getTime())
+    await app.inGroup(group, async (tx) => {
+      await raiseRevision(tx, [])
+      await raiseRevision(tx, [])
+    })
+    expect((await board()).revision).toBe(revision + 2)
   })
 })
 
