@@ -1,6 +1,6 @@
 import type { PoolClient, QueryResult } from 'pg'
 import type { AppContext } from './context.ts'
-import type { Statement } from './group-transaction.ts'
+import { SET_GROUP, type Statement } from './group-transaction.ts'
 import { poolOf } from './pool.ts'
 
 export interface Question {
@@ -9,7 +9,6 @@ export interface Question {
 }
 
 const BEGIN = 'BEGIN ISOLATION LEVEL REPEATABLE READ READ ONLY'
-const SET_GROUP: Statement = { name: 'set-group', text: `SELECT set_config('halyard.group_id', $1, true)` }
 
 /**
  * Asks named statements of one group in one read-only transaction, all sent at once: a single round trip for the pages
