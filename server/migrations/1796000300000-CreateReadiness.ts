@@ -36,7 +36,7 @@ export class CreateReadiness1796000300000 implements MigrationInterface {
       group_id uuid NOT NULL REFERENCES groups (id),
       designation text NOT NULL,
       -- What the board shows of the kit and readiness does not depend on, as a digest: whether the row is stale.
-      face text NOT NULL,
+      face text NOT NULL DEFAULT '',
       station boolean NOT NULL,
       verdict text NOT NULL CHECK (${VERDICTS}),
       verdict_rank smallint NOT NULL,
