@@ -1,4 +1,4 @@
-import { DEFAULT_DEPTHS, MOST_CAPACITY_FRACTION, presentAh, type BatteryShare } from '../battery-energy.ts'
+import { DEFAULT_DEPTHS, presentAh, type BatteryShare } from '../battery-energy.ts'
 import { DEFAULT_PEUKERT, leadAcidRuntime } from '../battery-runtime.ts'
 import { isFailure } from '../outcome.ts'
 import type { Chemistry } from '../vocabulary.ts'
@@ -17,6 +17,8 @@ export interface CountedBattery {
 }
 
 const DEFAULT_ENDURANCE_C = 20
+/** A share above this is a slip of the meter; the sum counts less of it anyway. */
+const MOST_MEASURED = 1.3
 const LEAD_ACID: readonly Chemistry[] = ['agm', 'gel', 'flooded']
 
 /** Undefined where its rated capacity is not on record, or where no table says what is left in such cold. */
@@ -32,7 +34,7 @@ export function countBattery(
   const cold = coldFactor(chemistry, atC, settings)
   if (!ratedAh || cold === undefined) return undefined
   const depth = settings.usableFraction?.[chemistry] ?? DEFAULT_DEPTHS[chemistry] ?? DEFAULT_DEPTHS.agm
-  const measured = Math.min(capacityFraction, MOST_CAPACITY_FRACTION)
+  const measured = Math.min(capacityFraction, MOST_MEASURED)
   const share = { ratedAh, capacityFraction: measured, depth, temperatureFactor: cold }
   const k = LEAD_ACID.includes(chemistry) ? (settings.peukert ?? DEFAULT_PEUKERT) : 1
   return { share, k, usableAh: depth * presentAh(share), factor: batteryText(designation, share, atC) }

@@ -1,4 +1,4 @@
-import type { BatteryShare } from '../battery-energy.ts'
+import { MOST_CAPACITY_FRACTION, type BatteryShare } from '../battery-energy.ts'
 import type { PlainDate } from '../plain-date.ts'
 import type { Band, Procedure } from '../vocabulary.ts'
 import { amountText, dayText, onBand, PROCEDURE_WORDS, shortText } from './words.ts'
@@ -119,7 +119,9 @@ export function noRatingText(name: string): string {
 
 /** One battery's share of the hours, every factor in order. */
 export function batteryText(name: string, share: BatteryShare, atC: number): string {
-  const measured = `${Math.round(share.capacityFraction * 1000) / 10} % measured`
+  const tooGood = share.capacityFraction > MOST_CAPACITY_FRACTION
+  const counted = tooGood ? `, counted as ${Math.round(MOST_CAPACITY_FRACTION * 100)} %` : ''
+  const measured = `${Math.round(share.capacityFraction * 1000) / 10} % measured${counted}`
   const usable = `${Math.round(share.depth * 100)} % of it usable`
   const left = `${Math.round(share.temperatureFactor * 100)} % at ${atC} °C`
   return `${name}: ${amountText(share.ratedAh)} Ah, ${measured}, ${usable}, ${left}`

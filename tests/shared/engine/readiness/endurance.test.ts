@@ -35,7 +35,10 @@ describe('a lithium battery', () => {
   })
 
   it('counts no more than 110 % of its rating', () => {
-    expect(endurance({ facts: lithium, percent: 118, loadA: 2 }).usableAh).toBeCloseTo(20 * 1.1 * 0.8, 9)
+    const { usableAh, hoursFactors } = endurance({ facts: lithium, percent: 118, loadA: 2 })
+    expect(usableAh).toBeCloseTo(20 * 1.1 * 0.8, 9)
+    expect(hoursFactors[0]).toContain('118 % measured, counted as 110 %')
+    expect(endurance({ facts: lithium, percent: 110, loadA: 2 }).hoursFactors[0]).not.toContain('counted as')
   })
 
   it('loses in the cold', () => {
