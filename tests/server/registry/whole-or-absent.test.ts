@@ -107,4 +107,11 @@ describe('an operation is whole or absent, whichever statement fails (P9)', () =
     const change = { difference: '12', reason: 'Bought' }
     await failEach(async () => keeper.put(`${path}/lots/${lotId}/changes/${changeId}`, change))
   })
+
+  it('prints tags and remembers them', async () => {
+    const item = await givenItem(keeper, 'mast')
+    const format = { kind: 'sheet', paper: 'a4', size: 'item' }
+    const body = { selection: { kind: 'chosen', itemIds: [item.id] }, format }
+    expect(await failEach(async () => keeper.post('/api/v1/tag-sheets', body))).toBeGreaterThan(3)
+  })
 })
