@@ -8,6 +8,10 @@ import { useListAddress, type ListValues } from './useListAddress.ts'
 /** Rows of one page; performance C3 holds the grid to this. */
 export const PAGE_ROWS = 25
 
+/** What one print of tags takes, and what choosing all brings at most. */
+export const MOST_ROWS = 1000
+const STEP_ROWS = 200
+
 type ListEndpoint = Endpoint & {
   readonly query: z.ZodObject<z.ZodRawShape>
   readonly response: z.ZodType<{ rows: unknown[]; total: number }>
@@ -38,6 +42,8 @@ export interface RegistryList<Row> {
   turnTo(page: number): void
   clear(): void
   reload(): void
+  /** Every row that fits the search and the filters, `MOST_ROWS` at most. */
+  readAll(): Promise<Row[]>
 }
 
 const NOT_FILTERS = new Set(['page', 'sort', 'descending'])
@@ -67,6 +73,15 @@ export function useRegistryList<E extends ListEndpoint>(
   const narrow = (part: ListValues, typing = false) => change({ ...part, page: '' }, typing)
   const turnTo = (wanted: number, replace = false) =>
     change({ page: wanted === 1 ? '' : String(wanted) }, replace)
+  async function readAll(): Promise<RowOf<E>[]> {
+    const rows: unknown[] = []
+    for (let step = 1; (step - 1) * STEP_ROWS < Math.min(total.value, MOST_ROWS); step += 1) {
+      const query = { ...values.value, page: step, size: STEP_ROWS } as QueryInputOf<E>
+      const answer = (await callApi(endpoint, { query } as Call<E>)) as { rows: unknown[] }
+      rows.push(...answer.rows)
+    }
+    return rows as RowOf<E>[]
+  }
   const clear = () => {
     const filters = Object.keys(values.value).filter((name) => !NOT_FILTERS.has(name))
     narrow(Object.fromEntries(filters.map((name) => [name, ''])))
@@ -91,6 +106,7 @@ export function useRegistryList<E extends ListEndpoint>(
     turnTo: (wanted: number) => turnTo(wanted),
     clear,
     reload: () => void refetch(),
+    readAll,
   }) as RegistryList<RowOf<E>>
 }
 

@@ -12,6 +12,8 @@ export interface ListColumn<Row> {
   /** False: hidden until the member asks for it. */
   readonly shown?: boolean
   readonly numeric?: boolean
+  /** Never breaks: dates, verdicts. */
+  readonly whole?: boolean
   /** Holds whole sentences. */
   readonly wide?: boolean
   /** Stands on the phone's card too. */
