@@ -1,7 +1,6 @@
 import { PiniaColada } from '@pinia/colada'
 import PrimeVue from 'primevue/config'
 import type { App } from 'vue'
-import 'primeicons/primeicons.css'
 import { preset } from './theme.ts'
 
 /**

@@ -1,22 +1,7 @@
 import { definePreset } from '@primeuix/themes'
 import base from '@primeuix/themes/aura/base'
-import autocomplete from '@primeuix/themes/aura/autocomplete'
-import button from '@primeuix/themes/aura/button'
-import checkbox from '@primeuix/themes/aura/checkbox'
-import chip from '@primeuix/themes/aura/chip'
 import datatable from '@primeuix/themes/aura/datatable'
-import datepicker from '@primeuix/themes/aura/datepicker'
-import dialog from '@primeuix/themes/aura/dialog'
-import iconfield from '@primeuix/themes/aura/iconfield'
-import inputtext from '@primeuix/themes/aura/inputtext'
-import multiselect from '@primeuix/themes/aura/multiselect'
 import paginator from '@primeuix/themes/aura/paginator'
-import popover from '@primeuix/themes/aura/popover'
-import radiobutton from '@primeuix/themes/aura/radiobutton'
-import select from '@primeuix/themes/aura/select'
-import selectbutton from '@primeuix/themes/aura/selectbutton'
-import textarea from '@primeuix/themes/aura/textarea'
-import togglebutton from '@primeuix/themes/aura/togglebutton'
 
 /** Shades between the page and the ink; they follow `data-theme` because the custom properties do. */
 function shades(of: string) {
@@ -120,25 +105,7 @@ const scheme = {
 export const preset = definePreset(
   {
     ...base,
-    components: {
-      autocomplete,
-      button,
-      checkbox,
-      chip,
-      datatable,
-      datepicker,
-      dialog,
-      iconfield,
-      inputtext,
-      multiselect,
-      paginator,
-      popover,
-      radiobutton,
-      select,
-      selectbutton,
-      textarea,
-      togglebutton,
-    },
+    components: { datatable, paginator },
   },
   {
     primitive: {
