@@ -2,7 +2,7 @@ import { fileURLToPath, URL } from 'node:url'
 import vue from '@vitejs/plugin-vue'
 import { defineConfig } from 'vitest/config'
 import { chunkGroups } from './scripts/lib/vite-chunks.ts'
-import { nameEarlyChunks, packFiles, withoutJsonSchema } from './scripts/lib/vite-plugins.ts'
+import { nameEarlyChunks, packFiles, slimZod } from './scripts/lib/vite-plugins.ts'
 
 const local = (path: string) => fileURLToPath(new URL(path, import.meta.url))
 const view = (name: string) => local(`src/views/${name}View.vue`)
@@ -15,12 +15,7 @@ const FIELD_PAGES = ['Item', 'Kit', 'Test', 'RecordTest', 'RecordKitTest', 'Find
 
 export default defineConfig({
   publicDir: 'src/public',
-  plugins: [
-    vue(),
-    withoutJsonSchema(),
-    nameEarlyChunks('src/views/BoardView.vue', 'board-chunks'),
-    packFiles(),
-  ],
+  plugins: [vue(), slimZod(), nameEarlyChunks('src/views/BoardView.vue', 'board-chunks'), packFiles()],
   resolve: { alias },
   build: {
     outDir: 'dist',

@@ -3,7 +3,7 @@ import type { Rolldown } from 'vite'
 
 type Context = Parameters<Rolldown.CodeSplittingNameFunction>[1]
 
-const LIBRARIES = /[\\/]node_modules[\\/](?:@?vue|pinia|vue-router|zod)[\\/]|no-eval/
+const LIBRARIES = /[\\/]node_modules[\\/](?:@?vue|pinia|vue-router|zod)[\\/]/
 const OURS = /[\\/](?:src|shared)[\\/]/
 
 export interface Screens {

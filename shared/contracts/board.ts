@@ -1,9 +1,8 @@
 import { z } from 'zod'
 import { defineEndpoint } from './endpoint.ts'
 import { id, instant, line } from './fields.ts'
-import { computedFor } from './readiness-shapes.ts'
 import { ANY_MEMBER } from './roles.ts'
-import { answeredAt, availability, listOf, verdict } from './words.ts'
+import { answeredAt, availability, computedFor, listOf, verdict } from './words.ts'
 
 /** A stretch of the horizon bar: `verdict` holds until `until`, when `cause` changes it. The last has neither. */
 export const horizonStep = z.object({

@@ -66,8 +66,7 @@ export const rolesOfMember = z
   .refine((roles) => new Set(roles).size === roles.length, 'A role is named twice.')
   .transform((roles) => ROLES.filter((role) => roles.includes(role)))
 
-export const temperatureUnit = z.enum(['C', 'F'])
-export const lengthUnit = z.enum(['m', 'ft'])
+export { lengthUnit, temperatureUnit } from './unit-choice.ts'
 
 /** What a member says about themselves. */
 export const ownFields = {

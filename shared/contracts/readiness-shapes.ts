@@ -80,8 +80,7 @@ export const promise = z.object({
   hours: z.number().nullable(),
 })
 
-/** `now` follows the clock; the past is what was stored then; the future is what holds if nobody does anything. */
-export const computedFor = z.enum(['now', 'past', 'future'])
+export { computedFor } from './words.ts'
 
 /** A place, kind, member or instrument by id and name. */
 export const named = z.object({ id: z.string(), name: z.string() })

@@ -32,3 +32,6 @@ export const listOf = <T extends z.ZodType<unknown, string>>(word: T) =>
     .max(400)
     .transform((value) => value.split(',').filter((part) => part !== ''))
     .pipe(z.array(word).max(30))
+
+/** `now` follows the clock; the past is what was stored then; the future is what holds if nobody does anything. */
+export const computedFor = z.enum(['now', 'past', 'future'])

@@ -1,12 +1,7 @@
 import { defineStore } from 'pinia'
 import { shallowRef } from 'vue'
-import {
-  readSession,
-  signIn,
-  signOut,
-  signOutEverywhere,
-  type SessionView,
-} from '#shared/contracts/session.ts'
+import { readSession, type SessionView } from '#shared/contracts/read-session.ts'
+import type { signIn } from '#shared/contracts/session.ts'
 import type { BodyInputOf } from '#shared/contracts/endpoint.ts'
 import { callApi } from '@/api/call-api.ts'
 import { takeEarly } from '@/api/early-answers.ts'
@@ -38,11 +33,13 @@ export const useSessionStore = defineStore('session', () => {
   }
 
   async function enter(body: BodyInputOf<typeof signIn>): Promise<void> {
+    const { signIn } = await import('#shared/contracts/session.ts')
     take(await callApi(signIn, { body }))
   }
 
   /** The whole page is loaded anew, so that nothing of this member stays in memory. */
   async function leave(everywhere = false): Promise<void> {
+    const { signOut, signOutEverywhere } = await import('#shared/contracts/session.ts')
     await (everywhere ? callApi(signOutEverywhere, {}) : callApi(signOut, {}))
     remember(false)
     window.location.assign('/sign-in')
