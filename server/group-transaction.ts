@@ -34,7 +34,10 @@ interface Scope {
   readonly actor: Actor
 }
 
-export const SET_GROUP: Statement = { name: 'set-group', text: `SELECT set_config('halyard.group_id', $1, true)` }
+export const SET_GROUP: Statement = {
+  name: 'set-group',
+  text: `SELECT set_config('halyard.group_id', $1, true)`,
+}
 const GROUP_ZONE: Statement = { name: 'group-zone', text: 'SELECT time_zone FROM groups WHERE id = $1' }
 const TRIES = 3
 

@@ -15,6 +15,7 @@ export interface Stream {
 
 /** Changes of a group within this time are told as one: a sweep of all kits is a handful of events. */
 const GROUPING_MS = 150
+const ARRIVAL_MS = 20
 const HEARTBEAT_MS = 20_000
 /** A reader that lags by this many bytes is cut; it comes back and fetches the board anew. */
 const LONGEST_BACKLOG = 64 * 1024
@@ -29,6 +30,7 @@ const STILL_SIGNED_IN = `SELECT sid FROM unnest($1::text[]) AS asked (sid)
 export class BoardHub {
   readonly #streams = new Map<string, Set<Stream>>()
   readonly #waiting = new Map<string, BoardEvent>()
+  readonly #arrived = new Map<string, Stream[]>()
   readonly #listener: Listener
   #heartbeat: NodeJS.Timeout | undefined
 
@@ -50,7 +52,19 @@ export class BoardHub {
     this.#listener.open()
     this.#heartbeat ??= setInterval(() => void this.#beat(), HEARTBEAT_MS)
     // A listener that is only now connecting tells every screen itself.
-    if (this.#listener.isConnected) void this.#tellRevision(stream.groupId, [stream])
+    if (this.#listener.isConnected) this.#greet(stream)
+  }
+
+  /** A crowd that arrives at once is told with one look-up a group. */
+  #greet(stream: Stream): void {
+    const arrived = this.#arrived.get(stream.groupId)
+    if (arrived) return void arrived.push(stream)
+    const streams = [stream]
+    this.#arrived.set(stream.groupId, streams)
+    setTimeout(() => {
+      this.#arrived.delete(stream.groupId)
+      void this.#tellRevision(stream.groupId, streams)
+    }, ARRIVAL_MS)
   }
 
   /** Ends all streams; their clients come back to another process. */
