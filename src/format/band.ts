@@ -30,7 +30,8 @@ export function bandColumns(strips: readonly (readonly BandCell[])[]): Band[] {
 
 /** `40 m: 74 W at the antenna, loss 1.3 dB, tested 12 Sep 2026`. */
 export function bandSentence(cell: BandCell): string {
-  if (cell.state === 'out') return `${cell.band}: ${cell.limit ? `out, ${cell.limit}` : 'out'}`
+  if (cell.state === 'out')
+    return `${cell.band}: ${cell.limit && cell.limit !== 'out' ? `out, ${cell.limit}` : 'out'}`
   const parts = [
     cell.state === 'proven' ? '' : BAND_STATE_WORDS[cell.state],
     cell.wattsAtAntenna == null ? '' : `${quantityText(cell.wattsAtAntenna, 'W', 0)} at the antenna`,

@@ -51,7 +51,7 @@ export function numberText(value: number, digits = 1, fixed = false): string {
   return (Number(short) === 0 ? short.replace('-', '') : short).replace('-', '\u2212')
 }
 
-/** `85 W`, `12.1 h`, `185 °F`: number, unbreakable space, unit. No space before `%`. */
+/** `85 W`, `12.1 h`, `185 °F`: number, unbreakable space, unit. */
 export function quantityText(value: number, unit: string, digits = 1): string {
-  return `${numberText(value, digits)}${unit === '%' ? '' : '\u00a0'}${unit}`
+  return `${numberText(value, digits)}\u00a0${unit}`
 }
