@@ -32,7 +32,10 @@ async function serve(config: Config): Promise<void> {
   await Promise.race([ready, away])
   log.info({ port: await listen(server, config) }, 'listening')
   await ready
-  await startParts(ctx, shutdown)
+  await startParts(ctx, shutdown).catch((error: unknown) => {
+    // Told to end while it began: the database is closed already.
+    if (!shutdown.isBegun) throw error
+  })
 }
 
 function beginPreparing(ctx: AppContext): { ready: Promise<void>; away: Promise<void> } {

@@ -18,6 +18,10 @@ export class Shutdown {
     private readonly server: Server,
   ) {}
 
+  get isBegun(): boolean {
+    return this.#begun
+  }
+
   /** Stopped while requests drain; a part that is added after the end has begun is stopped at once. */
   async add(part: Part): Promise<void> {
     if (this.#begun) await part.stop()

@@ -14,12 +14,9 @@ const PUBLIC_URL = 'https://kits.example.org'
 const ADDRESS = 'If found: Alder Reach Auxiliary Radio Group, Station 4, Pell Harbor'
 
 export interface TagSheetRound {
+  readonly labels: number
   readonly floorMs: number
   readonly ms: number
-  /** Processor time, which other work on the machine disturbs less. */
-  readonly floorCpuMs: number
-  readonly cpuMs: number
-  readonly floorBytes: number
   readonly bytes: number
   /** Longest time in which nothing else got its turn, ms. */
   readonly blockMs: number
@@ -33,11 +30,9 @@ export async function measureTagSheet(round: number): Promise<TagSheetRound> {
   const second = await steps[(round + 1) % 2]!()
   const [bare, own] = round % 2 === 0 ? [first, second] : [second, first]
   return {
+    labels: LABELS,
     floorMs: bare.ms,
     ms: own.ms,
-    floorCpuMs: bare.cpuMs,
-    cpuMs: own.cpuMs,
-    floorBytes: bare.bytes,
     bytes: own.bytes,
     blockMs: own.blockMs,
   }
@@ -87,7 +82,6 @@ function runs(text: string): string {
 
 interface Timing {
   readonly ms: number
-  readonly cpuMs: number
   readonly bytes: number
   readonly blockMs: number
 }
@@ -96,12 +90,10 @@ async function timed(work: () => Promise<Buffer>): Promise<Timing> {
   const delay = monitorEventLoopDelay({ resolution: 1 })
   delay.enable()
   const startedAt = performance.now()
-  const before = process.cpuUsage()
   const pdf = await work()
   const ms = performance.now() - startedAt
-  const { user, system } = process.cpuUsage(before)
   delay.disable()
-  return { ms, cpuMs: (user + system) / 1000, bytes: pdf.length, blockMs: delay.max / 1e6 }
+  return { ms, bytes: pdf.length, blockMs: delay.max / 1e6 }
 }
 
 function labelsOf(count: number): Label[] {

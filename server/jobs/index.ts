@@ -1,5 +1,6 @@
 import PgBoss from 'pg-boss'
 import type { AppContext } from '../context.ts'
+import { Listener } from '../listener.ts'
 import { poolOf } from '../pool.ts'
 import { deliverMail, sweepMail } from '../services/deliver-mail.ts'
 import type { MailTransport } from '../services/mail-transport.ts'
@@ -7,13 +8,8 @@ import { remindAllGroups } from '../services/reminders/morning-reminders.ts'
 import { refreshAllBoards } from '../services/refresh-boards.ts'
 import { QUEUES, SCHEDULES, type QueueName } from './queues.ts'
 
-/** Slow polling keeps an idle server quiet; a queue's throughput is batchSize / pollingIntervalSeconds. */
-const POLL_SECONDS: Record<QueueName, number> = {
-  'send-mail': 1,
-  'sweep-mail': 5,
-  'morning-reminders': 5,
-  'refresh-boards': 5,
-}
+/** Polling is a safety net only, for what was told while nobody listened: `enqueue` wakes the worker of its queue. */
+const PACE = { batchSize: 50, pollingIntervalSeconds: 5 } as const
 
 export interface Jobs {
   stop(): Promise<void>
@@ -25,29 +21,53 @@ export async function startJobs(ctx: AppContext, transport: MailTransport): Prom
   const boss = new PgBoss({ db: { executeSql }, migrate: false, maintenanceIntervalSeconds: 10 })
   boss.on('error', (error) => ctx.log.warn({ err: error }, 'job queue'))
   await boss.start()
+  const listener = wakeWhenQueued(ctx, boss, await startWorkers(ctx, boss, transport))
+  return {
+    stop: async () => {
+      listener.close()
+      await boss.stop({ graceful: true, wait: true, timeout: 8000 })
+      transport.close()
+    },
+  }
+}
+
+/** One worker a queue; the answer is its id. */
+async function startWorkers(
+  ctx: AppContext,
+  boss: PgBoss,
+  transport: MailTransport,
+): Promise<Map<string, string>> {
   const handlers: Record<QueueName, (data: object) => Promise<void>> = {
     'send-mail': (data) => deliverMail(ctx, transport, data as { groupId: string; mailId: string }),
     'sweep-mail': () => sweepMail(ctx, transport),
     'morning-reminders': () => remindAllGroups(ctx),
     'refresh-boards': () => refreshAllBoards(ctx),
   }
+  const workers = new Map<string, string>()
   for (const queue of Object.keys(QUEUES) as QueueName[]) {
-    await boss.work<object>(
-      queue,
-      { batchSize: 50, pollingIntervalSeconds: POLL_SECONDS[queue] },
-      async (jobs) => {
-        for (const data of distinct(jobs.map((job) => job.data))) await handlers[queue](data)
-      },
-    )
+    const worker = await boss.work<object>(queue, PACE, async (jobs) => {
+      for (const data of distinct(jobs.map((job) => job.data))) await handlers[queue](data)
+    })
+    workers.set(queue, worker)
     const cron = SCHEDULES[queue]
     if (cron) await boss.schedule(queue, cron)
   }
-  return {
-    stop: async () => {
-      await boss.stop({ graceful: true, wait: true, timeout: 8000 })
-      transport.close()
-    },
-  }
+  return workers
+}
+
+/** A job is taken up when its transaction ends, not when the next poll comes. */
+function wakeWhenQueued(ctx: AppContext, boss: PgBoss, workers: ReadonlyMap<string, string>): Listener {
+  const wake = (ids: Iterable<string>) => [...ids].forEach((id) => boss.notifyWorker(id))
+  const listener = new Listener({
+    url: ctx.config.databaseUrl,
+    name: 'jobs',
+    channels: ['halyard_job'],
+    log: ctx.log,
+    onMessage: (_channel, queue) => wake([workers.get(queue)].filter((id) => id !== undefined)),
+    onConnected: () => wake(workers.values()),
+  })
+  listener.open()
+  return listener
 }
 
 /** Scheduled jobs carry no data: one run serves all that piled up. */

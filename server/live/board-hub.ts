@@ -3,7 +3,7 @@ import type { BoardEvent } from '#shared/contracts/live.ts'
 import type { AppContext } from '../context.ts'
 import { readInGroup } from '../group-read.ts'
 import { REVISION } from '../services/board/board-statements.ts'
-import { Listener } from './listener.ts'
+import { Listener } from '../listener.ts'
 
 /** An open stream with the session that it was opened by. */
 export interface Stream {
@@ -37,6 +37,7 @@ export class BoardHub {
   constructor(private readonly ctx: AppContext) {
     this.#listener = new Listener({
       url: ctx.config.databaseUrl,
+      name: 'live',
       channels: ['halyard_board', 'halyard_session_ended'],
       log: ctx.log,
       onMessage: (channel, payload) => this.#hear(channel, payload),

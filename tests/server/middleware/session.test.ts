@@ -1,3 +1,4 @@
+/** How long a session holds and what it gives (promises P15 and P20). */
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest'
 import { Member } from '#server/entities/Member.ts'
 import { renewSession } from '#server/services/sessions.ts'

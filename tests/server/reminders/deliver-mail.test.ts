@@ -1,3 +1,4 @@
+/** Mail goes out once, is never lost, and slows nobody down (promises P10 and P30). */
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest'
 import { startJobs } from '#server/jobs/index.ts'
 import { deliverMail, sweepMail } from '#server/services/deliver-mail.ts'

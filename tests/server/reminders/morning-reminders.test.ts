@@ -1,3 +1,4 @@
+/** Reminders come once, also after an outage, and stop by one click (promises P10, P11 and P22). */
 import pg from 'pg'
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest'
 import { remindAllGroups } from '#server/services/reminders/morning-reminders.ts'

@@ -1,3 +1,4 @@
+/** Links in mail (promise P22). */
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest'
 import { Member } from '#server/entities/Member.ts'
 import { asOwner, auditEntries } from '../../support/audit-entries.ts'

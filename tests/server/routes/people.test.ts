@@ -1,3 +1,4 @@
+/** Members, their rights and their end, each with the next request (promises P15 and P22). */
 import { v7 as uuidv7 } from 'uuid'
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest'
 import { auditEntries } from '../../support/audit-entries.ts'

@@ -1,3 +1,4 @@
+/** Sessions listed, ended and renewed (promise P20). */
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest'
 import { auditEntries } from '../../support/audit-entries.ts'
 import { givenCheapPassword, PASSWORD } from '../../support/given-password.ts'

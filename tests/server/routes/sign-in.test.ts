@@ -1,3 +1,4 @@
+/** Signing in by password (promises P17, P18, P20). */
 import argon2 from 'argon2'
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest'
 import { Credential } from '#server/entities/Credential.ts'

@@ -1,3 +1,4 @@
+/** Hashing one at a time (promise P17). */
 import { setTimeout as pause } from 'node:timers/promises'
 import { describe, expect, it } from 'vitest'
 import { HashGate } from '#server/services/sign-in/hash-gate.ts'

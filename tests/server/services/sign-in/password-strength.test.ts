@@ -1,3 +1,4 @@
+/** Which passwords are taken (promise P17). */
 import { describe, expect, it } from 'vitest'
 import { PASSWORD_MAX, PASSWORD_MIN } from '#shared/contracts/people-fields.ts'
 import { COMMON_PARTS } from '#server/services/sign-in/common-passwords.ts'

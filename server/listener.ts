@@ -3,6 +3,8 @@ import type { Logger } from 'pino'
 
 interface Hearing {
   readonly url: string
+  /** What the connection is for, as PostgreSQL and the log name it. */
+  readonly name: string
   readonly channels: readonly string[]
   readonly log: Logger
   onMessage(channel: string, payload: string): void
@@ -61,7 +63,7 @@ export class Listener {
     const { hearing } = this
     const client = new pg.Client({
       connectionString: hearing.url,
-      application_name: 'halyard-live',
+      application_name: `halyard-${hearing.name}`,
       options: '-c role=halyard_app',
       connectionTimeoutMillis: 3000,
       query_timeout: 5000,
@@ -88,7 +90,8 @@ export class Listener {
     this.#client = undefined
     if (!this.#open) return
     const wait = RETRY_MS[Math.min(this.#failures, RETRY_MS.length - 1)]
-    if (this.#failures === 0) this.hearing.log.warn({ err: error }, 'live updates: listening again soon')
+    if (this.#failures === 0)
+      this.hearing.log.warn({ err: error }, `${this.hearing.name}: listening again soon`)
     this.#failures += 1
     clearTimeout(this.#retry)
     this.#retry = setTimeout(() => void this.#connect(), wait)
