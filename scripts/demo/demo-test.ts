@@ -4,6 +4,9 @@ import type { PersonKey } from './people.ts'
 
 type Body<P extends RecordTestInput['procedure']> = Extract<RecordTestInput, { procedure: P }>
 
+/** The demo's readings were all taken by hand. */
+type ByHand<Inputs> = Exclude<Inputs, { source: 'file' }>
+
 interface Common {
   /** Designation of what was tested. */
   readonly subject: string
@@ -39,7 +42,7 @@ export interface CountTest extends Common {
 export interface PairTest extends Common {
   readonly procedure: 'pair-loss'
   readonly partner: string
-  readonly inputs: Omit<Body<'pair-loss'>['inputs'], 'partnerId'>
+  readonly inputs: Omit<ByHand<Body<'pair-loss'>['inputs']>, 'partnerId'>
 }
 
 export type DemoTest =

@@ -31,6 +31,8 @@ export interface Endpoint<
   /** Absent: 204 without a body. */
   readonly response?: Response
   readonly status?: 200 | 201 | 202 | 204
+  /** The request is `multipart/form-data` with one file in the field `file`; then there is no `body`. */
+  readonly upload?: true
   /** The answer is a file of this type instead of JSON; then there is no `response`. */
   readonly media?: string
   /** The change needs the version it was read at, in `If-Match`: 428 when missing, 412 when stale. */

@@ -55,6 +55,8 @@ export const DETAIL_FIELDS = {
     core: name,
     cores: z.int().min(1).max(20).optional(),
     mix: line(20, 1).optional(),
+    /** All cores together, weighed without wire: what warms in a heat test. */
+    coreMassG: amount(0.1, 10_000).optional(),
     turnsPrimary: amount(0.5, 200).optional(),
     turnsSecondary: amount(0.5, 500).optional(),
     wire: name,
@@ -125,7 +127,13 @@ export const DETAIL_FIELDS = {
     outputs: z.int().min(1).max(50).optional(),
     connector: name,
   },
-  analyzer: { ...accuracy, ...frequencyRange, connector: name },
+  analyzer: {
+    ...accuracy,
+    ...frequencyRange,
+    /** Standard error of the real and of the imaginary part of a reflection; absent: 0.01. */
+    reflectionError: amount(0.0001, 0.5).optional(),
+    connector: name,
+  },
   wattmeter: { ...accuracy, ...frequencyRange, connector: name },
   'dummy-load': { ...accuracy, ratedWatts: watts, loadOhms: ohms, connector: name },
   thermometer: { ...accuracy, sensor: z.enum(['contact', 'infrared']).optional() },

@@ -1,4 +1,5 @@
 import { z } from 'zod'
+import { BAND_REGIONS } from '#shared/engine/band-edges.ts'
 import { defineEndpoint } from './endpoint.ts'
 import { amount, id, line, newId, page, pageQuery, plainDate, text } from './fields.ts'
 import { CREW, POLICY_MAKERS } from './roles.ts'
@@ -14,6 +15,8 @@ export const policySettings = z.strictObject({
   peukert: amount(1, 1.5).optional(),
   /** Capacity at `enduranceC` as a fraction of the tested one; absent: by chemistry. */
   temperatureFactor: amount(0.1, 1).optional(),
+  /** Where the group transmits, for the edges of the bands; absent: ITU Region 2. */
+  bandRegion: z.enum(BAND_REGIONS).optional(),
 })
 
 export const policySummary = z.object({

@@ -1,4 +1,5 @@
 import { z } from 'zod'
+import { MAX_ATTACHMENTS } from './attachments.ts'
 import { defineEndpoint } from './endpoint.ts'
 import { id, instant, line, newId, text } from './fields.ts'
 import { CREW } from './roles.ts'
@@ -11,9 +12,11 @@ import {
   feedlineLossInputs,
   heatTestInputs,
   inspectionInputs,
+  onAirCheckInputs,
   pairLossInputs,
   radioCheckInputs,
 } from './test-inputs.ts'
+import { openShortLoadInputs } from './test-inputs-by-file.ts'
 import { storedTest } from './test-shapes.ts'
 
 /** What every test says. Who recorded it comes from the session; the operator may be another member. */
@@ -27,6 +30,12 @@ const common = {
   notes: text(2000).default(''),
   /** Corrects an earlier test of the same procedure and subject. */
   supersedes: z.strictObject({ testId: id, reason: text(500, 1) }).optional(),
+  /** Photos, certificates and raw logs that belong to the test; files that it is read from stand in its inputs. */
+  attachmentIds: z
+    .array(id)
+    .max(MAX_ATTACHMENTS)
+    .refine((ids) => new Set(ids).size === ids.length, 'Name each file once.')
+    .optional(),
 }
 
 const measured = { ...common, instrumentId: id }
@@ -35,6 +44,12 @@ const judged = { ...common, instrumentId: id.optional() }
 export const recordTestBody = z.discriminatedUnion('procedure', [
   z.strictObject({ procedure: z.literal('heat-test'), itemId: id, ...measured, inputs: heatTestInputs }),
   z.strictObject({ procedure: z.literal('pair-loss'), itemId: id, ...measured, inputs: pairLossInputs }),
+  z.strictObject({
+    procedure: z.literal('open-short-load'),
+    itemId: id,
+    ...measured,
+    inputs: openShortLoadInputs,
+  }),
   z.strictObject({
     procedure: z.literal('antenna-sweep'),
     itemId: id,
@@ -63,6 +78,7 @@ export const recordTestBody = z.discriminatedUnion('procedure', [
     ...judged,
     inputs: bootAndUpdateInputs,
   }),
+  z.strictObject({ procedure: z.literal('on-air-check'), kitId: id, ...judged, inputs: onAirCheckInputs }),
 ])
 
 /**

@@ -1,6 +1,7 @@
 import { z } from 'zod'
 import { defineEndpoint } from './endpoint.ts'
 import { id } from './fields.ts'
+import { accuracyShape, knownShape } from './known-for-test.ts'
 import { itemNamed } from './readiness-shapes.ts'
 import { CREW } from './roles.ts'
 import { judgedBy, testSummary } from './test-shapes.ts'
@@ -31,7 +32,11 @@ export const testForm = z.object({
   lastMethod: z.string().nullable(),
   lastInstrument: itemNamed.nullable(),
   /** Serviceable instruments that fit the procedure. */
-  instruments: z.array(itemNamed.extend({ calibratedUntilOn: z.string().nullable() })),
+  instruments: z.array(
+    itemNamed.extend({ calibratedUntilOn: z.string().nullable(), accuracy: accuracyShape }),
+  ),
+  /** For `knownFromForm`: with it the engine says on the phone what the server will say. */
+  known: knownShape,
   /** Heat test only, else null. */
   heat: z
     .object({

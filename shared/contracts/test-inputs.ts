@@ -1,5 +1,6 @@
 import { z } from 'zod'
 import { amount, id, line, text } from './fields.ts'
+import { antennaSweepByFile, feedlineLossByFile, pairLossByFile } from './test-inputs-by-file.ts'
 import { band } from './words.ts'
 
 /** What is read off the instruments, by procedure. The engine turns it into results (`shared/engine/procedures`). */
@@ -32,7 +33,8 @@ export const heatTestInputs = z.strictObject({
 })
 
 /** Two like devices back to back, net forward power before and after them. */
-export const pairLossInputs = z.strictObject({
+const pairLossByHand = z.strictObject({
+  source: z.literal('readings').optional(),
   /** The other device of the pair. */
   partnerId: id.optional(),
   /** One meter moved from place to place shares its scale error between both readings; two meters do not. */
@@ -50,7 +52,10 @@ export const pairLossInputs = z.strictObject({
     .max(14),
 })
 
-export const antennaSweepInputs = z.strictObject({
+export const pairLossInputs = z.discriminatedUnion('source', [pairLossByHand, pairLossByFile])
+
+const antennaSweepByHand = z.strictObject({
+  source: z.literal('readings').optional(),
   /** SWR read at the working points; several a band are allowed, the worst counts. */
   points: z
     .array(z.strictObject({ band, frequencyMHz: amount(0.1, 3000), swr: amount(1, 100) }))
@@ -61,10 +66,15 @@ export const antennaSweepInputs = z.strictObject({
     .array(z.strictObject({ band, frequencyMHz: amount(0.1, 3000), swr: amount(1, 100).optional() }))
     .max(14)
     .default([]),
+  /** Later sweeps are compared with this one. */
+  setsBaseline: z.boolean().optional(),
   conditions: text(400).default(''),
 })
 
-export const feedlineLossInputs = z.strictObject({
+export const antennaSweepInputs = z.discriminatedUnion('source', [antennaSweepByHand, antennaSweepByFile])
+
+const feedlineLossByHand = z.strictObject({
+  source: z.literal('readings').optional(),
   readings: z
     .array(
       z.strictObject({
@@ -80,6 +90,8 @@ export const feedlineLossInputs = z.strictObject({
   /** This is a new line's baseline: later tests are compared with it. */
   setsBaseline: z.boolean().default(false),
 })
+
+export const feedlineLossInputs = z.discriminatedUnion('source', [feedlineLossByHand, feedlineLossByFile])
 
 export const VOLTAGE_IS_NOT_CAPACITY =
   'A voltage says nothing about capacity: a worn battery rests at the same voltage as a new one. ' +
@@ -118,6 +130,8 @@ export const radioCheckInputs = z.strictObject({
     .min(1)
     .max(60),
   supplyV: amount(1, 60).optional(),
+  /** Supply current while receiving, A. */
+  receiveA: amount(0, 200).optional(),
   receives: z.boolean(),
   memoryVersion: line(40).optional(),
 })
@@ -169,4 +183,28 @@ export const bootAndUpdateInputs = z.strictObject({
   updatesDone: z.boolean(),
   clockRight: z.boolean().optional(),
   softwareVersion: line(80).default(''),
+})
+
+/** One contact on each band: shows that the whole chain works, and says nothing about its losses. */
+export const onAirCheckInputs = z.strictObject({
+  contacts: z
+    .array(
+      z.strictObject({
+        band,
+        /** Power setting of the radio, W. */
+        powerW: amount(0.1, 2000),
+        answered: z.boolean(),
+        /** Who answered, in words: "the net's relief station". */
+        answeredBy: line(80).default(''),
+        /** Reports as exchanged. */
+        reportReceived: line(40).default(''),
+        reportSent: line(40).default(''),
+      }),
+    )
+    .min(1)
+    .max(14)
+    .refine((contacts) => new Set(contacts.map((contact) => contact.band)).size === contacts.length, {
+      message: 'Name each band once.',
+    }),
+  conditions: text(400).default(''),
 })

@@ -1,4 +1,5 @@
 import { z } from 'zod'
+import { testAttachment } from './attachments.ts'
 import { itemNamed, named } from './readiness-shapes.ts'
 import { answeredAt, band, category, findingWord, procedure, verdict } from './words.ts'
 
@@ -90,6 +91,8 @@ export const storedTest = testSummary.omit({ operatorName: true }).extend({
   notes: z.string(),
   supersedes: z.object({ testId: z.string(), reason: z.string() }).nullable(),
   supersededBy: z.object({ testId: z.string(), reason: z.string() }).nullable(),
+  /** Files that the test is read from, then those beside it. */
+  attachments: z.array(testAttachment),
   effects: z.array(testEffect),
   /** A failed unit of a batch: its siblings may have the same fault, and nothing asks for their test yet. */
   proposedRecall: z

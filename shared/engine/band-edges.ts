@@ -7,7 +7,8 @@
 import type { PlainDate } from './plain-date.ts'
 import { BANDS, type Band } from './vocabulary.ts'
 
-export type BandRegion = 'itu-1' | 'itu-2' | 'itu-3' | 'us-extra'
+export const BAND_REGIONS = ['itu-1', 'itu-2', 'itu-3', 'us-extra'] as const
+export type BandRegion = (typeof BAND_REGIONS)[number]
 
 export interface BandEdges {
   readonly lowHz: number

@@ -126,7 +126,9 @@ function change(before: number, now: number): number | null {
 }
 
 /** From two bands on: with one there is no top band to have fallen most. */
-function lineLossWarnings(drifts: readonly BandDrift<DriftBand>[]): Warning[] {
+export function lineLossWarnings(
+  drifts: readonly Pick<BandDrift<DriftBand>, 'band' | 'worstSwrChange'>[],
+): Warning[] {
   const rising = drifts.toSorted((a, b) => a.band.lowHz - b.band.lowHz)
   const changes = rising.map((drift) => drift.worstSwrChange ?? 0)
   const top = changes.at(-1) ?? 0

@@ -5,18 +5,20 @@ import { ruleFor } from '#shared/engine/readiness/rules-in-force.ts'
 import type { Policy } from '#shared/engine/readiness/types.ts'
 import type { Category, Procedure } from '#shared/engine/vocabulary.ts'
 import type { GroupTx, Statement } from '../../group-transaction.ts'
+import { accuracyOf } from './known-for-test.ts'
 
 interface InstrumentRow {
   [column: string]: unknown
   id: string
   designation: string
   category: Category
+  details: Record<string, unknown>
   calibrated_on: string | null
 }
 
 const FITTING: Statement = {
   name: 'fitting-instruments',
-  text: `SELECT i.id, i.designation, i.category, (
+  text: `SELECT i.id, i.designation, i.category, i.details, (
       SELECT max(t.performed_on)::text FROM test t WHERE t.item_id = i.id AND t.procedure = 'calibration'
         AND t.finding <> 'fail' AND NOT EXISTS (SELECT FROM test s WHERE s.supersedes_id = t.id)
     ) AS calibrated_on
@@ -35,10 +37,11 @@ export async function fittingInstruments(
     tx.sql<InstrumentRow>(FITTING, [tx.groupId, INSTRUMENTS[procedure]]),
     tx.today(),
   ])
-  return rows.map(({ id, designation, category, calibrated_on: calibratedOn }) => {
+  return rows.map(({ id, designation, category, details, calibrated_on: calibratedOn }) => {
     const months = ruleFor(policy, { category, facts: {} }, 'calibration', today)?.intervalMonths
     const until = calibratedOn !== null && months ? addMonths(calibratedOn, months) : null
-    return { id, designation, category, calibratedUntilOn: until }
+    const accuracy = accuracyOf({ details }) ?? {}
+    return { id, designation, category, calibratedUntilOn: until, accuracy }
   })
 }
 

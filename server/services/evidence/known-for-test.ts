@@ -1,95 +1,82 @@
-import type { RecordTestBody } from '#shared/contracts/record-test.ts'
+import { cableKeyOf } from '#shared/engine/feedline-cable-name.ts'
 import type { Accuracy } from '#shared/engine/procedures/accuracy.ts'
-import type { FeedlineReading } from '#shared/engine/procedures/feedline-loss.ts'
-import type { KnownForTest } from '#shared/engine/procedures/judge-test.ts'
-import type { Position, Rule } from '#shared/engine/readiness/types.ts'
-import type { Chemistry } from '#shared/engine/vocabulary.ts'
-import type { GroupTx, Statement } from '../../group-transaction.ts'
+import { DEFAULT_REGION } from '#shared/engine/procedures/judged-bands.ts'
+import type { FeedlineHistory, LineFacts } from '#shared/engine/procedures/line-history.ts'
+import type { KnownForTest, TransformerFacts } from '#shared/engine/procedures/performance.ts'
+import type { SweepBaseline } from '#shared/engine/procedures/sweep-baseline.ts'
+import type { Policy, Rule } from '#shared/engine/readiness/types.ts'
+import { BANDS, type Band, type Chemistry } from '#shared/engine/vocabulary.ts'
+import type { BaselineRow, EfficiencyRow, FeedlineRow, TestHistory } from './test-history.ts'
 import type { TestSubject } from './test-subject.ts'
 
 interface Parts {
-  readonly body: RecordTestBody
-  readonly performedAt: Date
   readonly subject: TestSubject
+  readonly history: TestHistory
+  readonly policy: Policy
   readonly rule: Rule | undefined
   readonly accuracy: Accuracy | null
 }
 
-/** What the finding of a test depends on besides its inputs; reads only what the procedure asks for. */
-export async function knownForTest(tx: GroupTx, { body, subject, ...parts }: Parts): Promise<KnownForTest> {
-  const { ratedAh, chemistry } = subject.facts
-  const { rule, accuracy, performedAt } = parts
+type Details = Readonly<Record<string, unknown>>
+
+/** What the finding of a test depends on besides its inputs, out of the records of its day. */
+export function knownForTest({ subject, history, policy, rule, accuracy }: Parts): KnownForTest {
+  const { details, facts } = subject
   return {
     rule,
     instrument: accuracy,
     battery: {
-      ...(ratedAh !== undefined && { ratedAh }),
-      ...(chemistry !== undefined && { chemistry: chemistry as Chemistry }),
+      ...(facts.ratedAh !== undefined && { ratedAh: facts.ratedAh }),
+      ...(facts.chemistry !== undefined && { chemistry: facts.chemistry as Chemistry }),
     },
-    feedline:
-      body.procedure === 'feedline-loss'
-        ? await feedlineHistory(tx, subject, { ...body, performedAt })
-        : { baselineDb: {}, last: [] },
-    plan: body.procedure === 'count' ? await loadPlan(tx, body.kitId) : { positions: [], sealNumber: null },
+    feedline: feedlineHistory(history.feedline, details),
+    line: lineFacts(details),
+    transformer: transformerFacts(details, history.efficiency),
+    sweep: { baseline: history.baseline && sweepBaseline(history.baseline) },
+    region: policy.settings.bandRegion ?? DEFAULT_REGION,
+    plan: history.plan,
   }
 }
 
-interface FeedlineRow {
-  [column: string]: unknown
-  inputs: { readings: FeedlineReading[]; setsBaseline: boolean }
-}
-
-// Corrected tests count no more, and a test that this one corrects is among them.
-const FEEDLINE: Statement = {
-  name: 'feedline-history',
-  text: `SELECT t.inputs FROM test t
-    WHERE t.item_id = $1 AND t.procedure = 'feedline-loss' AND t.performed_at < $2 AND t.id IS DISTINCT FROM $3
-      AND NOT EXISTS (SELECT FROM test s WHERE s.supersedes_id = t.id)
-    ORDER BY t.performed_at, t.id`,
-}
-
-type FeedlineTest = Extract<RecordTestBody, { procedure: 'feedline-loss' }>
-
 /** The baseline of a band: of the newest test that set one, else as entered for the item, else the first test. */
-async function feedlineHistory(
-  tx: GroupTx,
-  subject: TestSubject,
-  {
-    performedAt,
-    supersedes,
-    inputs: { readings },
-  }: Omit<FeedlineTest, 'performedAt'> & { performedAt: Date },
-): Promise<KnownForTest['feedline']> {
-  const values = [subject.id, performedAt, supersedes?.testId ?? null]
-  const rows = await tx.sql<FeedlineRow>(FEEDLINE, values)
-  const entered = typeof subject.details.baselineDb === 'number' ? subject.details.baselineDb : undefined
-  const known = readings.flatMap(({ band }) => {
-    const lossesOf = (tests: readonly FeedlineRow[]) =>
-      tests.flatMap(({ inputs }) => inputs.readings.filter((reading) => reading.band === band))
-    const set = lossesOf(rows.filter(({ inputs }) => inputs.setsBaseline)).at(-1)?.lossDb
-    const baselineDb = set ?? entered ?? lossesOf(rows)[0]?.lossDb
-    return baselineDb === undefined ? [] : [[band, baselineDb] as const]
+function feedlineHistory(rows: readonly FeedlineRow[], details: Details): FeedlineHistory {
+  const setting = rows.filter((row) => row.sets_baseline)
+  const entered = numberIn(details, 'baselineDb')
+  const found = BANDS.map((band) => {
+    const set = readingsOf(setting, band).at(-1)
+    const first = readingsOf(rows, band)[0]
+    const swr = set?.swrAtRadio ?? (entered === undefined ? first?.swrAtRadio : undefined)
+    return { band, lossDb: set?.lossDb ?? entered ?? first?.lossDb, swr }
   })
-  return { baselineDb: Object.fromEntries(known), last: rows.at(-1)?.inputs.readings ?? [] }
+  return {
+    baselineDb: Object.fromEntries(
+      found.flatMap(({ band, lossDb }) => (lossDb === undefined ? [] : [[band, lossDb]])),
+    ),
+    baselineSwr: Object.fromEntries(
+      found.flatMap(({ band, swr }) => (swr === undefined ? [] : [[band, swr]])),
+    ),
+    last: rows.at(-1)?.readings ?? [],
+  }
 }
 
-interface PlanRow extends Position {
-  [column: string]: unknown
+const readingsOf = (rows: readonly FeedlineRow[], band: Band) =>
+  rows.flatMap(({ readings }) => readings.filter((reading) => reading.band === band))
+
+function lineFacts(details: Details): LineFacts {
+  const cable = typeof details.cable === 'string' ? cableKeyOf(details.cable) : undefined
+  return { ...(cable !== undefined && { cable }), ...numbersIn(details, ['lengthM']) }
 }
 
-const PLAN: Statement = {
-  name: 'count-plan',
-  text: `SELECT p.id, p.name, p.category, p.quantity, p.vital FROM position p JOIN kit k ON k.kit_kind_id = p.kit_kind_id
-    WHERE k.id = $1 AND p.removed_at IS NULL ORDER BY p.ordinal, p.id`,
+function transformerFacts(details: Details, rows: readonly EfficiencyRow[]): TransformerFacts {
+  const efficiency = rows.map(({ id, band, efficiency: value }) => [band, { efficiency: value, testId: id }])
+  return {
+    ...numbersIn(details, ['turnsPrimary', 'turnsSecondary', 'coreMassG', 'ratedWatts']),
+    ...(rows.length > 0 && { efficiency: Object.fromEntries(efficiency) }),
+  }
 }
-const SEAL: Statement = { name: 'count-seal', text: 'SELECT seal_number FROM kit WHERE id = $1' }
 
-async function loadPlan(tx: GroupTx, kitId: string): Promise<KnownForTest['plan']> {
-  const [positions, [kit]] = await Promise.all([
-    tx.sql<PlanRow>(PLAN, [kitId]),
-    tx.sql<{ seal_number: string | null }>(SEAL, [kitId]),
-  ])
-  return { positions, sealNumber: kit?.seal_number ?? null }
+function sweepBaseline({ id, performed_on: performedOn, file, worst }: BaselineRow): SweepBaseline {
+  return { testId: id, performedOn, file, worst }
 }
 
 const ACCURACY = [
@@ -98,11 +85,26 @@ const ACCURACY = [
   'accuracyAbsolute',
   'fullScale',
   'resolution',
+  'reflectionError',
 ] as const
 
 /** An instrument's accuracy from its details; null without an instrument. */
-export function accuracyOf(instrument: { details: Record<string, unknown> } | null): Accuracy | null {
-  if (!instrument) return null
-  const known = ACCURACY.filter((name) => typeof instrument.details[name] === 'number')
-  return Object.fromEntries(known.map((name) => [name, instrument.details[name]]))
+export function accuracyOf(instrument: { details: Details } | null): Accuracy | null {
+  return instrument && numbersIn(instrument.details, ACCURACY)
+}
+
+function numberIn(details: Details, name: string): number | undefined {
+  const value = details[name]
+  return typeof value === 'number' ? value : undefined
+}
+
+function numbersIn<Name extends string>(
+  details: Details,
+  names: readonly Name[],
+): Partial<Record<Name, number>> {
+  const known = names.flatMap((name) => {
+    const value = numberIn(details, name)
+    return value === undefined ? [] : [[name, value] as const]
+  })
+  return Object.fromEntries(known) as Partial<Record<Name, number>>
 }

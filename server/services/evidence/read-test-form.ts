@@ -1,3 +1,4 @@
+import { knownShape } from '#shared/contracts/known-for-test.ts'
 import type { TestForm } from '#shared/contracts/test-form.ts'
 import { limitsOf } from '#shared/engine/policy/limits.ts'
 import {
@@ -12,7 +13,9 @@ import { BANDS, type Band, type Procedure } from '#shared/engine/vocabulary.ts'
 import { AppError } from '../../errors.ts'
 import type { GroupTx, Statement } from '../../group-transaction.ts'
 import { policiesOrFirst } from '../first-policy.ts'
+import { knownForTest } from './known-for-test.ts'
 import { fittingInstruments, lastUsed } from './form-instruments.ts'
+import { testHistory } from './test-history.ts'
 import { summariesOf } from './test-summaries.ts'
 import { readItemSubject, type TestSubject } from './test-subject.ts'
 
@@ -42,10 +45,12 @@ interface Asked {
 
 /** What a phone needs to run and judge one test, also after its signal is gone. */
 export async function readTestForm(tx: GroupTx, { itemId, procedure }: Asked): Promise<TestForm> {
-  const [subject, [face], recent, policies, today] = await Promise.all([
+  const asked = { procedure, subjectId: itemId, performedAt: tx.now, corrects: null }
+  const [subject, [face], recent, history, policies, today] = await Promise.all([
     readItemSubject(tx, itemId),
     tx.sql<FaceRow>(FACE, [itemId]),
     tx.sql<{ id: string }>(RECENT, [itemId, procedure]),
+    testHistory(tx, asked),
     policiesOrFirst(tx),
     tx.today(),
   ])
@@ -90,6 +95,7 @@ export async function readTestForm(tx: GroupTx, { itemId, procedure }: Asked): P
     lastMethod: last?.method ?? null,
     lastInstrument: instruments.find(({ id }) => id === last?.instrumentId) ?? null,
     instruments,
+    known: knownShape.parse(knownForTest({ subject, history, policy, rule, accuracy: null })),
     heat: procedure === 'heat-test' ? heatOf(rule) : null,
     recent: tests,
   }

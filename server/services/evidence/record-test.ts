@@ -19,6 +19,7 @@ import { auditTest } from './audit-test.ts'
 import { contentHash, insertTest, type TestToInsert } from './insert-test.ts'
 import { accuracyOf, knownForTest } from './known-for-test.ts'
 import { readStoredTest, storedHash } from './stored-test.ts'
+import { testHistory } from './test-history.ts'
 import { applyConsequences, hasConsequences } from './test-consequences.ts'
 import { insertEffects } from './test-effects.ts'
 import {
@@ -102,23 +103,24 @@ async function judge(
   { testId, body, operatorId }: Recording,
   hash: Buffer,
 ): Promise<{ subject: TestSubject; test: TestToInsert }> {
-  const [subject, instrument, , , policies, zone] = await Promise.all([
+  const claimedAt = new Date(body.performedAt)
+  // A test cannot count before it was received, whatever the device's clock said (promise P7).
+  const performedAt = claimedAt < tx.now ? claimedAt : tx.now
+  const [subject, instrument, history, , , policies, zone] = await Promise.all([
     readSubject(tx, body),
     readInstrument(tx, body),
+    testHistory(tx, historyOf(body, performedAt)),
     readOperator(tx, operatorId),
     checkSuperseded(tx, testId, body),
     policiesOrFirst(tx),
     tx.zone(),
   ])
-  const claimedAt = new Date(body.performedAt)
-  // A test cannot count before it was received, whatever the device's clock said (promise P7).
-  const performedAt = claimedAt < tx.now ? claimedAt : tx.now
   const performedOn = localDay(performedAt, zone)
   const policy = policyAt({ policies }, performedAt.getTime())
   if (!policy) throw new Error('A group without a policy')
   const rule = ruleOf(policy, { subject, body, performedOn })
   const accuracy = accuracyOf(instrument)
-  const judgement = judgementOf(body, await knownForTest(tx, { body, performedAt, subject, rule, accuracy }))
+  const judgement = judgementOf(body, knownForTest({ subject, history, policy, rule, accuracy }))
   return {
     subject,
     test: {
@@ -133,6 +135,15 @@ async function judge(
       judgement,
       contentHash: hash,
     },
+  }
+}
+
+function historyOf(body: RecordTestBody, performedAt: Date): Parameters<typeof testHistory>[1] {
+  return {
+    procedure: body.procedure,
+    subjectId: 'kitId' in body ? body.kitId : body.itemId,
+    performedAt,
+    corrects: body.supersedes?.testId ?? null,
   }
 }
 

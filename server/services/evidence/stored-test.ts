@@ -74,6 +74,7 @@ export async function readStoredTest(tx: GroupTx, testId: string): Promise<Store
     notes: row.notes,
     supersedes: linkOf(row.supersedes_id, row.supersedes_reason),
     supersededBy: linkOf(row.superseded_by_id, row.superseded_reason),
+    attachments: [],
     effects,
     proposedRecall: recall,
   }

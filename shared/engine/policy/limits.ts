@@ -11,6 +11,7 @@ import { DEFAULT_POLICY } from './default-policy.ts'
 export interface LimitsByProcedure {
   readonly 'heat-test': HeatTestLimits
   readonly 'pair-loss': PairLossLimits
+  readonly 'open-short-load': PairLossLimits
   readonly 'antenna-sweep': AntennaSweepLimits
   readonly 'feedline-loss': FeedlineLossLimits
   readonly 'battery-capacity': BatteryCapacityLimits
@@ -33,7 +34,9 @@ export function limitsOf<P extends Limited>(
 }
 
 function defaultLimits(procedure: Procedure): Readonly<Record<string, unknown>> {
-  const rule = DEFAULT_POLICY.rules.find((candidate) => candidate.procedure === procedure)
+  // Both ways of measuring an efficiency are held to one limit.
+  const named = procedure === 'open-short-load' ? 'pair-loss' : procedure
+  const rule = DEFAULT_POLICY.rules.find((candidate) => candidate.procedure === named)
   if (!rule) throw new Error(`The first policy has no rule for ${procedure}.`)
   return rule.limits
 }

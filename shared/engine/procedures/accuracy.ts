@@ -3,6 +3,7 @@
  * a/sqrt(3), and the parts add as squares; expanded uncertainty is k = 2. Source: calculation sheet, section 3;
  * JCGM 100:2008 (GUM), 4.3.7 and 5.1.
  */
+import { DEFAULT_READING_ERROR } from '../reading-error.ts'
 
 export interface Accuracy {
   readonly accuracyPercentOfReading?: number
@@ -12,9 +13,16 @@ export interface Accuracy {
   readonly fullScale?: number
   /** The smallest step the instrument shows, in the unit of the reading. */
   readonly resolution?: number
+  /** Analyzers: standard error of the real and of the imaginary part of a reflection or transmission. */
+  readonly reflectionError?: number
 }
 
 export const COVERAGE_FACTOR = 2
+
+/** What a sweep is uncertain by: the analyzer's own figure, else that of a small one with a user calibration. */
+export function reflectionErrorOf(analyzer: Accuracy | null): number {
+  return analyzer?.reflectionError ?? DEFAULT_READING_ERROR
+}
 
 /** Standard uncertainty of a reading in its unit; null where the data sheet's figure is not known. */
 export function standardUncertainty(accuracy: Accuracy | null, reading: number): number | null {

@@ -4,11 +4,12 @@
  * rule's watts that passes shows what the device can do at that power, which is what caps a band whose test failed.
  * Source: calculation sheet, section 6; the limits are the policy's.
  */
-import { measureHeatTest } from '../heat-test.ts'
+import { measureHeatTest, type HeatTestInput } from '../heat-test.ts'
 import { failure, isFailure, type Outcome } from '../outcome.ts'
 import type { TestFinding } from '../readiness/types.ts'
 import type { Band } from '../vocabulary.ts'
 import { expandedUncertainty, type Accuracy } from './accuracy.ts'
+import { heatModel, type HeatFacts } from './heat-model.ts'
 import { figure, findingOf, judgementOf, type Judgement } from './judgement.ts'
 
 export interface HeatTestInputs {
@@ -30,6 +31,11 @@ export interface HeatTestLimits {
   readonly maxSwrChange?: number
 }
 
+interface Known {
+  readonly thermometer: Accuracy | null
+  readonly facts: HeatFacts
+}
+
 /** A hand on the key and an eye on the clock: this much short of the required time still counts. Our choice. */
 const SHORT_BY_S = 5
 
@@ -40,10 +46,11 @@ const SHORT_BY_S = 5
 export function judgeHeatTest(
   inputs: HeatTestInputs,
   limits: HeatTestLimits,
-  thermometer: Accuracy | null,
+  { thermometer, facts }: Known,
 ): Outcome<Judgement> {
-  const { ambientC, readings, keyUpAtS, powerW } = inputs
-  const measured = measureHeatTest({ readings, ambientC, keyUpAtS, inputW: powerW })
+  const { ambientC, powerW } = inputs
+  const inForce = facts.efficiency?.[inputs.band]
+  const measured = measureHeatTest(heatLogOf(inputs, { thermometer, facts }))
   if (isFailure(measured)) return measured
   const keyed = keyedFigures(inputs, limits)
   const uncertainty = expandedUncertainty(thermometer, keyed.peakC)
@@ -64,8 +71,29 @@ export function judgeHeatTest(
     keyedMinutes: keyed.minutes,
     stoppedAtMinute: keyed.stoppedAtMinute,
     swrChange: keyed.swrChange,
+    ...heatModel({
+      measured,
+      inForce,
+      ambientC,
+      maxC: limits.maxC,
+      fullW: facts.ratedWatts ?? powerW,
+    }),
   }
   return judgementOf(results, [finding], measured.warnings)
+}
+
+function heatLogOf(inputs: HeatTestInputs, { thermometer, facts }: Known): HeatTestInput {
+  const { readings, ambientC, keyUpAtS, powerW } = inputs
+  const efficiency = facts.efficiency?.[inputs.band]?.efficiency
+  return {
+    readings,
+    ambientC,
+    keyUpAtS,
+    inputW: powerW,
+    ...(efficiency !== undefined && { efficiency }),
+    ...(facts.coreMassG !== undefined && { massKg: facts.coreMassG / 1000 }),
+    ...(thermometer?.resolution !== undefined && { thermometerStepK: thermometer.resolution }),
+  }
 }
 
 interface KeyedFigures {

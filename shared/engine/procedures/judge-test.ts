@@ -1,66 +1,52 @@
 /** One door to all procedures: inputs and what is known about the subject in, results and findings out. */
 import type { Outcome } from '../outcome.ts'
 import { limitsOf } from '../policy/limits.ts'
-import type { Position, Rule } from '../readiness/types.ts'
-import type { Accuracy } from './accuracy.ts'
-import { judgeAntennaSweep, type AntennaSweepInputs } from './antenna-sweep.ts'
-import { judgeBatteryCapacity, type BatteryCapacityInputs, type BatteryFacts } from './battery-capacity.ts'
-import { judgeCount, type CountInputs } from './count.ts'
-import { judgeFeedlineLoss, type FeedlineHistory, type FeedlineLossInputs } from './feedline-loss.ts'
-import { judgeHeatTest, type HeatTestInputs } from './heat-test.ts'
+import { judgeAntennaByFile } from './antenna-sweep-by-file.ts'
+import { judgeAntennaSweep } from './antenna-sweep.ts'
+import { judgeBatteryCapacity } from './battery-capacity.ts'
+import { judgeCount } from './count.ts'
+import { judgeFeedlineByFile } from './feedline-loss-by-file.ts'
+import { judgeFeedlineLoss } from './feedline-loss.ts'
+import { judgeHeatTest } from './heat-test.ts'
 import type { Judgement } from './judgement.ts'
-import { judgePairLoss, type PairLossInputs } from './pair-loss.ts'
-import {
-  judgeBootAndUpdate,
-  judgeCalibration,
-  judgeInspection,
-  type BootAndUpdateInputs,
-  type CalibrationInputs,
-  type InspectionInputs,
-} from './plain-checks.ts'
-import { judgeRadioCheck, type RadioCheckInputs } from './radio-check.ts'
+import { judgeOnAirCheck } from './on-air-check.ts'
+import { judgeOpenShortLoad } from './open-short-load.ts'
+import { judgePairLossByFile } from './pair-loss-by-file.ts'
+import { judgePairLoss } from './pair-loss.ts'
+import type { KnownForTest, Performance } from './performance.ts'
+import { judgeBootAndUpdate, judgeCalibration, judgeInspection } from './plain-checks.ts'
+import { judgeRadioCheck } from './radio-check.ts'
+import type { TestFiles } from './test-files.ts'
 
-export type Performance =
-  | { readonly procedure: 'heat-test'; readonly inputs: HeatTestInputs }
-  | { readonly procedure: 'pair-loss'; readonly inputs: PairLossInputs }
-  | { readonly procedure: 'antenna-sweep'; readonly inputs: AntennaSweepInputs }
-  | { readonly procedure: 'feedline-loss'; readonly inputs: FeedlineLossInputs }
-  | { readonly procedure: 'battery-capacity'; readonly inputs: BatteryCapacityInputs }
-  | { readonly procedure: 'radio-check'; readonly inputs: RadioCheckInputs }
-  | { readonly procedure: 'inspection'; readonly inputs: InspectionInputs }
-  | { readonly procedure: 'count'; readonly inputs: CountInputs }
-  | { readonly procedure: 'calibration'; readonly inputs: CalibrationInputs }
-  | { readonly procedure: 'boot-and-update'; readonly inputs: BootAndUpdateInputs }
-
-/** What a finding depends on besides the inputs. */
-export interface KnownForTest {
-  /** The rule in force on the day of the test; without one, the limits that every group begins with. */
-  readonly rule: Pick<Rule, 'limits'> | undefined
-  readonly instrument: Accuracy | null
-  readonly battery: BatteryFacts
-  readonly feedline: FeedlineHistory
-  /** Counts: the load plan, and the number of the seal on record. */
-  readonly plan: { readonly positions: readonly Position[]; readonly sealNumber: string | null }
-}
+export type { KnownForTest, Performance } from './performance.ts'
 
 /** Raised with every change that can change a result or a finding; stored with each test. */
-export const ENGINE_VERSION = '1'
+export const ENGINE_VERSION = '2'
 
-export function judgeTest(performance: Performance, known: KnownForTest): Outcome<Judgement> {
+/**
+ * `files` holds the parsed files that the inputs name, by their attachment's id, and the baseline's; see
+ * `judgePerformance`, which reads them.
+ */
+export function judgeTest(
+  performance: Performance,
+  known: KnownForTest,
+  files: TestFiles = {},
+): Outcome<Judgement> {
   const { rule, instrument } = known
   switch (performance.procedure) {
     case 'heat-test':
-      return judgeHeatTest(performance.inputs, limitsOf('heat-test', rule), instrument)
-    case 'pair-loss':
-      return judgePairLoss(performance.inputs, limitsOf('pair-loss', rule), instrument)
-    case 'antenna-sweep':
-      return judgeAntennaSweep(performance.inputs, limitsOf('antenna-sweep', rule), instrument)
-    case 'feedline-loss':
-      return judgeFeedlineLoss(performance.inputs, {
-        limits: limitsOf('feedline-loss', rule),
-        history: known.feedline,
-        instrument,
+      return judgeHeatTest(performance.inputs, limitsOf('heat-test', rule), {
+        thermometer: instrument,
+        facts: known.transformer,
       })
+    case 'pair-loss':
+      return judgePair(performance.inputs, known, files)
+    case 'open-short-load':
+      return judgeOpenShortLoad(performance.inputs, limitsOf('open-short-load', rule), { ...known, files })
+    case 'antenna-sweep':
+      return judgeAntenna(performance.inputs, known, files)
+    case 'feedline-loss':
+      return judgeFeedline(performance.inputs, known, files)
     case 'battery-capacity':
       return judgeBatteryCapacity(performance.inputs, {
         limits: limitsOf('battery-capacity', rule),
@@ -69,13 +55,54 @@ export function judgeTest(performance: Performance, known: KnownForTest): Outcom
       })
     case 'radio-check':
       return judgeRadioCheck(performance.inputs, limitsOf('radio-check', rule), instrument)
-    case 'inspection':
-      return judgeInspection(performance.inputs)
     case 'count':
       return judgeCount(performance.inputs, known.plan)
+    default:
+      return judgeStated(performance)
+  }
+}
+
+type Stated = 'inspection' | 'calibration' | 'boot-and-update' | 'on-air-check'
+
+/** Procedures whose result a person states: nothing else decides. */
+function judgeStated(performance: Extract<Performance, { procedure: Stated }>): Outcome<Judgement> {
+  switch (performance.procedure) {
+    case 'inspection':
+      return judgeInspection(performance.inputs)
     case 'calibration':
       return judgeCalibration(performance.inputs)
     case 'boot-and-update':
       return judgeBootAndUpdate(performance.inputs)
+    case 'on-air-check':
+      return judgeOnAirCheck(performance.inputs)
   }
+}
+
+type InputsOf<P> = Extract<Performance, { procedure: P }>['inputs']
+
+function judgePair(inputs: InputsOf<'pair-loss'>, known: KnownForTest, files: TestFiles): Outcome<Judgement> {
+  const limits = limitsOf('pair-loss', known.rule)
+  if (inputs.source === 'file') return judgePairLossByFile(inputs, limits, { ...known, files })
+  return judgePairLoss(inputs, limits, known.instrument)
+}
+
+function judgeAntenna(
+  inputs: InputsOf<'antenna-sweep'>,
+  known: KnownForTest,
+  files: TestFiles,
+): Outcome<Judgement> {
+  const limits = limitsOf('antenna-sweep', known.rule)
+  const { baseline } = known.sweep
+  if (inputs.source === 'file') return judgeAntennaByFile(inputs, limits, { ...known, files, baseline })
+  return judgeAntennaSweep(inputs, limits, { analyzer: known.instrument, baseline })
+}
+
+function judgeFeedline(
+  inputs: InputsOf<'feedline-loss'>,
+  known: KnownForTest,
+  files: TestFiles,
+): Outcome<Judgement> {
+  const line = { ...known, limits: limitsOf('feedline-loss', known.rule), history: known.feedline }
+  if (inputs.source === 'file') return judgeFeedlineByFile(inputs, { ...line, files })
+  return judgeFeedlineLoss(inputs, line)
 }

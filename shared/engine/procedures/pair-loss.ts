@@ -17,6 +17,7 @@ export interface PairReading {
 }
 
 export interface PairLossInputs {
+  readonly source?: 'readings' | undefined
   readonly meters: 'one-moved' | 'two'
   readonly bands: readonly PairReading[]
 }

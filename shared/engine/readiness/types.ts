@@ -1,3 +1,4 @@
+import type { BandRegion } from '../band-edges.ts'
 import type { PlainDate } from '../plain-date.ts'
 import type {
   Availability,
@@ -125,6 +126,8 @@ export interface PolicySettings {
   readonly peukert?: number
   /** Capacity at `enduranceC` as a fraction of the tested one; absent: by chemistry (calculation sheet, section 10). */
   readonly temperatureFactor?: number
+  /** Whose band edges count; absent: see `DEFAULT_REGION`. */
+  readonly bandRegion?: BandRegion
 }
 
 /** A check asked for by an event. */

@@ -4,6 +4,7 @@ import { judgeHeatTest, type HeatTestInputs } from '#shared/engine/procedures/he
 import { valueOf } from '../../../support/value-of.ts'
 
 const LIMITS = { powerW: 50, minutes: 10, maxC: 85, maxSwrChange: 0.2 }
+const NOTHING_KNOWN = { thermometer: null, facts: {} }
 
 function run(endC: number, fields: Partial<HeatTestInputs> = {}): HeatTestInputs {
   const minutes = [0, 1, 2, 3, 5, 8, 10]
@@ -19,7 +20,7 @@ function run(endC: number, fields: Partial<HeatTestInputs> = {}): HeatTestInputs
 }
 
 const judge = (inputs: HeatTestInputs, thermometer = {}) =>
-  valueOf(judgeHeatTest(inputs, LIMITS, thermometer))
+  valueOf(judgeHeatTest(inputs, LIMITS, { thermometer, facts: {} }))
 
 describe('a heat test', () => {
   it('passes below the stop temperature for the whole time', () => {
@@ -88,13 +89,13 @@ describe('a heat test', () => {
   it('counts a failure before its time, and refuses a run that shows nothing', () => {
     const short = run(40, { keyUpAtS: 300, readings: run(40).readings.filter(({ atS }) => atS <= 300) })
     expect(judge({ ...short, swr: { start: 1.2, lowest: 1.2, highest: 2 } }).finding).toBe('fail')
-    const refused = judgeHeatTest(short, LIMITS, null)
+    const refused = judgeHeatTest(short, LIMITS, NOTHING_KNOWN)
     expect(isFailure(refused) && refused).toMatchObject({ code: 'E_TOO_SHORT', field: 'keyUpAtS' })
   })
 
   it('forgives five seconds of a hand on the key', () => {
     expect(judge(run(40, { keyUpAtS: 595, readings: run(40).readings.slice(0, -1) })).finding).toBe('pass')
-    expect(isFailure(judgeHeatTest(run(40, { keyUpAtS: 594 }), LIMITS, null))).toBe(true)
+    expect(isFailure(judgeHeatTest(run(40, { keyUpAtS: 594 }), LIMITS, NOTHING_KNOWN))).toBe(true)
   })
 
   it('shows at a lower power what the device can do there', () => {
@@ -113,6 +114,6 @@ describe('a heat test', () => {
         { atS: 60, temperatureC: 23 },
       ],
     })
-    expect(judgeHeatTest(backwards, LIMITS, null)).toMatchObject({ code: 'E_TIME_ORDER', line: 2 })
+    expect(judgeHeatTest(backwards, LIMITS, NOTHING_KNOWN)).toMatchObject({ code: 'E_TIME_ORDER', line: 2 })
   })
 })

@@ -4,6 +4,8 @@ import { judgeFeedlineLoss } from '#shared/engine/procedures/feedline-loss.ts'
 import { judgeRadioCheck } from '#shared/engine/procedures/radio-check.ts'
 import { valueOf } from '../../../support/value-of.ts'
 
+const NOTHING_KNOWN = { analyzer: null, baseline: null }
+
 describe('an antenna sweep', () => {
   const points = [
     { band: '20 m', frequencyMHz: 14.2, swr: 1.8 },
@@ -12,7 +14,7 @@ describe('an antenna sweep', () => {
   ] as const
 
   it('judges each band by its worst working point, in the order of the bands', () => {
-    const judged = valueOf(judgeAntennaSweep({ points }, { maxSwr: 2.5 }, null))
+    const judged = valueOf(judgeAntennaSweep({ points }, { maxSwr: 2.5 }, NOTHING_KNOWN))
     expect(judged.findings).toMatchObject([
       { band: '40 m', finding: 'fail', value: 2.7, text: 'SWR 2.7 at 7.2 MHz' },
       { band: '20 m', finding: 'pass', value: 1.8 },
@@ -21,7 +23,7 @@ describe('an antenna sweep', () => {
   })
 
   it('passes exactly at the limit', () => {
-    expect(valueOf(judgeAntennaSweep({ points }, { maxSwr: 2.7 }, null)).finding).toBe('pass')
+    expect(valueOf(judgeAntennaSweep({ points }, { maxSwr: 2.7 }, NOTHING_KNOWN)).finding).toBe('pass')
   })
 })
 
@@ -32,7 +34,7 @@ describe('a feedline test', () => {
     valueOf(
       judgeFeedlineLoss(
         { readings: [reading(lossDb, swr)], setsBaseline: false },
-        { limits, history: { last: [], ...history } as never, instrument: null },
+        { limits, history: { last: [], ...history } as never, line: {}, instrument: null },
       ),
     )
 
@@ -51,7 +53,9 @@ describe('a feedline test', () => {
   it('sets the baseline anew where the test says so', () => {
     const inputs = { readings: [reading(3)], setsBaseline: true }
     const history = { baselineDb: { '2 m': 1.4 }, last: [] }
-    expect(valueOf(judgeFeedlineLoss(inputs, { limits, history, instrument: null })).finding).toBe('pass')
+    expect(valueOf(judgeFeedlineLoss(inputs, { limits, history, line: {}, instrument: null })).finding).toBe(
+      'pass',
+    )
   })
 
   it('warns of an SWR that improves while the loss rises', () => {
