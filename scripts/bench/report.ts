@@ -8,6 +8,9 @@ export interface BenchRow {
   readonly goal: string
 }
 
+/** Of the columns: the rows of each bench are printed as soon as they are there. */
+const WIDTHS = [4, 38, 12, 12, 8, 0]
+
 export function printRows(rows: readonly BenchRow[]): void {
   const cells = rows.map(({ id, what, measured, floor, ratio, goal }) => [
     id,
@@ -17,9 +20,7 @@ export function printRows(rows: readonly BenchRow[]): void {
     ratio === null ? '' : `${ratio.toFixed(2)}x`,
     goal,
   ])
-  const table = [['id', 'what', 'measured', 'floor', 'ratio', 'goal'], ...cells]
-  const widths = table[0]!.map((_, column) => Math.max(...table.map((row) => row[column]!.length)))
-  for (const row of table) console.log(row.map((cell, column) => cell.padEnd(widths[column]!)).join('  '))
+  for (const row of cells) console.log(row.map((cell, column) => cell.padEnd(WIDTHS[column]!)).join('  '))
 }
 
 export function median(values: readonly number[]): number {

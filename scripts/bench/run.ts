@@ -7,20 +7,19 @@ import { startBenchProduct } from './bench-product.ts'
 import { benchJobs } from './jobs.ts'
 import { benchLive } from './live.ts'
 import { benchRecording } from './recording.ts'
-import { printRows, type BenchRow } from './report.ts'
+import { printRows } from './report.ts'
 import { benchSignIn } from './sign-in.ts'
 import { benchTags } from './tags.ts'
 import { givenThousandKits } from './thousand-kits.ts'
 
 const cluster = await openTestCluster()
-const rows: BenchRow[] = []
 try {
   const database = await cloneDatabase(cluster, await ensureDemoTemplate(cluster))
   await givenThousandKits(database.ownerUrl)
   const product = await startBenchProduct(database)
   try {
     for (const bench of [benchBoard, benchRecording, benchSignIn, benchLive, benchJobs, benchTags]) {
-      rows.push(...(await bench(product)))
+      printRows(await bench(product))
     }
   } finally {
     await product.stop()
@@ -29,4 +28,3 @@ try {
 } finally {
   await cluster.stop()
 }
-printRows(rows)
