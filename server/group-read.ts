@@ -1,6 +1,7 @@
 import type { PoolClient, QueryResult } from 'pg'
 import type { AppContext } from './context.ts'
 import { SET_GROUP, type Statement } from './group-transaction.ts'
+import { inOneWrite } from './one-write.ts'
 import { poolOf } from './pool.ts'
 
 export interface Question {
@@ -38,6 +39,7 @@ export async function readInGroup(
 }
 
 function send(client: PoolClient, groupId: string, questions: readonly Question[]): Promise<QueryResult>[] {
+  inOneWrite(client)
   return [
     client.query(BEGIN),
     client.query({ ...SET_GROUP, values: [groupId] }),

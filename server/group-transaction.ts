@@ -5,6 +5,7 @@ import type { PlainDate } from '#shared/engine/plain-date.ts'
 import type { Actor } from './caller.ts'
 import type { AppContext } from './context.ts'
 import { GroupRepository } from './group-repository.ts'
+import { inOneWrite } from './one-write.ts'
 
 /** A statement that PostgreSQL plans once per connection, for the paths that are called often. */
 export interface Statement {
@@ -64,6 +65,7 @@ async function once<T>(ctx: AppContext, scope: Scope, work: (tx: GroupTx) => Pro
   const runner = ctx.db.createQueryRunner()
   const client = (await runner.connect()) as PoolClient
   try {
+    inOneWrite(client)
     const begun = client.query('BEGIN')
     const set = client.query({ ...SET_GROUP, values: [scope.groupId] })
     // Sent together with the first statement of `work`; a failure of either surfaces there or at the commit.
@@ -92,6 +94,7 @@ function markTransaction(runner: { isTransactionActive: boolean }, active: boole
 
 function groupTx(runner: QueryRunner, client: PoolClient, scope: Scope, now: Date): GroupTx {
   const sql = <Row extends QueryResultRow>(statement: Statement, values: readonly unknown[] = []) => {
+    inOneWrite(client)
     const rows = client.query<Row>({ ...statement, values: [...values] }).then((result) => result.rows)
     // When several are under way and the first fails, nobody waits for the others: they must not count as unhandled.
     rows.catch(() => undefined)
