@@ -20,11 +20,21 @@ export function profileCurves(data: RiseData, fit: RiseFit): RiseCurve[] {
 
 /** 95 % profile interval of the end temperature T0 + A, deg C. */
 export function endRange(curves: readonly RiseCurve[], fit: RiseFit): { lowC: number; highC: number } {
+  return rangeAt(curves, fit, Infinity)
+}
+
+/** 95 % profile interval of the temperature at a time since key-down, s, deg C; Infinity is the end temperature. */
+export function rangeAt(
+  curves: readonly RiseCurve[],
+  fit: RiseFit,
+  atS: number,
+): { lowC: number; highC: number } {
   let [lowC, highC] = [Infinity, -Infinity]
   for (const curve of curves) {
-    const reach = reachAt(curve, fit, 1)
-    lowC = Math.min(lowC, curve.startC + curve.riseK - reach)
-    highC = Math.max(highC, curve.startC + curve.riseK + reach)
+    const shape = -Math.expm1(-atS / curve.tauS)
+    const [middle, reach] = [curve.startC + curve.riseK * shape, reachAt(curve, fit, shape)]
+    lowC = Math.min(lowC, middle - reach)
+    highC = Math.max(highC, middle + reach)
   }
   return { lowC, highC }
 }
