@@ -1,0 +1,26 @@
+import { numberText } from '@/format/quantity.ts'
+
+/** Decimals that an uncertainty supports: two of its digits, never more than `most`. Source: JCGM 100:2008, 7.2.6. */
+export function digitsBeside(uncertainty: number | null, most: number): number {
+  if (uncertainty === null || !(uncertainty > 0)) return most
+  return Math.min(Math.max(1 - Math.floor(Math.log10(uncertainty)), 0), most)
+}
+
+/** `92.1 % ± 2.4 %` with one unit: `92.1 ± 2.4 %`; without a known uncertainty the value alone. */
+export function withUncertainty(
+  value: number,
+  uncertainty: number | null,
+  unit: string,
+  most: number,
+): string {
+  const ending = unit === '' ? '' : `\u00a0${unit}`
+  if (uncertainty === null) return `${numberText(value, most)}${ending}`
+  const digits = digitsBeside(uncertainty, most)
+  return `${numberText(value, digits, true)} ± ${numberText(uncertainty, digits, true)}${ending}`
+}
+
+/** `40 m`, `40 m and 20 m`, `40 m, 20 m and 10 m`. */
+export function listText(words: readonly string[]): string {
+  if (words.length < 2) return words.join('')
+  return `${words.slice(0, -1).join(', ')} and ${words.at(-1)}`
+}

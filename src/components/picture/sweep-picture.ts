@@ -1,0 +1,82 @@
+import type { ItemResult } from '#shared/contracts/item-results.ts'
+import type { StoredTest } from '#shared/contracts/test-shapes.ts'
+import { BAND_TABLE } from '#shared/engine/band-edges.ts'
+import { byBand } from '#shared/engine/procedures/by-band.ts'
+import type { AntennaSweepInputs } from '#shared/engine/procedures/antenna-sweep.ts'
+import type { PlainDate } from '#shared/engine/plain-date.ts'
+import type { Band } from '#shared/engine/vocabulary.ts'
+import { bandFigures, type BandFigure } from './band-picture.ts'
+
+export interface SweepPoint {
+  readonly frequencyMHz: number
+  readonly swr: number
+}
+
+/** One band of an antenna sweep, with what its first sweep showed there. */
+export interface SweepPanel {
+  readonly band: Band
+  /** Edges of the amateur band, the widest anywhere; null: no such band in the table. */
+  readonly edges: { readonly lowMHz: number; readonly highMHz: number } | null
+  readonly worst: BandFigure & { readonly frequencyMHz: number | null }
+  readonly points: readonly SweepPoint[]
+  readonly resonanceMHz: number | null
+  readonly before: { readonly points: readonly SweepPoint[]; readonly resonanceMHz: number | null }
+}
+
+export interface SweepPicture {
+  readonly panels: readonly SweepPanel[]
+  readonly limit: number | null
+  /** The day of the sweep that is drawn behind; null: this is the first. */
+  readonly baselineOn: PlainDate | null
+}
+
+/** `history`: the sweeps of this antenna, oldest first; the first that still counts is the baseline. */
+export function sweepPicture(test: StoredTest, history: readonly ItemResult[]): SweepPicture {
+  const { points, resonances = [] } = test.inputs as unknown as AntennaSweepInputs
+  const baseline = history.find(
+    (one) => one.supersededBy === null && one.testId !== test.id && one.performedAt < test.performedAt,
+  )
+  const figures = bandFigures(test, 'swr')
+  const panels = byBand(points).flatMap(([band, here]) => {
+    const worst = figures.find((figure) => figure.band === band)
+    if (!worst) return []
+    const frequencyMHz = here.find(({ swr }) => swr === worst.value)?.frequencyMHz ?? null
+    const resonanceMHz = resonances.find((one) => one.band === band)?.frequencyMHz ?? null
+    const before = baselineOf(baseline, band)
+    return [
+      {
+        band,
+        edges: widestEdges(band),
+        worst: { ...worst, frequencyMHz },
+        points: here,
+        resonanceMHz,
+        before,
+      },
+    ]
+  })
+  return {
+    panels,
+    limit: figures.find(({ limit }) => limit !== null)?.limit ?? null,
+    baselineOn: baseline?.performedOn ?? null,
+  }
+}
+
+function baselineOf(baseline: ItemResult | undefined, band: Band): SweepPanel['before'] {
+  const figures = (baseline?.figures ?? []).filter((one) => one.band === band)
+  return {
+    points: figures.flatMap(({ measure, frequencyMHz, value }) =>
+      measure === 'swr' && frequencyMHz !== null ? [{ frequencyMHz, swr: value }] : [],
+    ),
+    resonanceMHz: figures.find(({ measure }) => measure === 'resonanceMHz')?.value ?? null,
+  }
+}
+
+/** National rules and licence classes narrow them further. */
+function widestEdges(band: Band): SweepPanel['edges'] {
+  const regions = Object.values(BAND_TABLE.regions).flatMap((region) => region[band] ?? [])
+  if (regions.length === 0) return null
+  return {
+    lowMHz: Math.min(...regions.map(({ lowHz }) => lowHz)) / 1e6,
+    highMHz: Math.max(...regions.map(({ highHz }) => highHz)) / 1e6,
+  }
+}

@@ -1,0 +1,114 @@
+import { describe, expect, it } from 'vitest'
+import type { ItemResult } from '#shared/contracts/item-results.ts'
+import type { AntennaSweepInputs } from '#shared/engine/procedures/antenna-sweep.ts'
+import {
+  capacityAnswer,
+  capacityNotes,
+  capacityPicture,
+  capacityTable,
+} from '@/components/picture/capacity-picture.ts'
+import { sweepHeight, sweepLayout } from '@/components/picture/sweep-layout.ts'
+import { sweepPicture } from '@/components/picture/sweep-picture.ts'
+import { sweepAnswer, sweepDrift, sweepTable } from '@/components/picture/sweep-words.ts'
+import { quantityText } from '@/format/quantity.ts'
+import { storedTest } from '../../../support/stored-test.ts'
+
+const text = (value: number, unit: string, digits = 1) => quantityText(value, unit, digits)
+const plain = (words: string) => words.replaceAll('\u00a0', ' ')
+
+const INPUTS: AntennaSweepInputs = {
+  points: [
+    { band: '40 m', frequencyMHz: 7.2, swr: 3 },
+    { band: '20 m', frequencyMHz: 14.2, swr: 1.5 },
+  ],
+  resonances: [{ band: '40 m', frequencyMHz: 6.968 }],
+}
+
+const before = (fields: Partial<ItemResult> = {}): ItemResult => ({
+  testId: '019a0000-0000-7000-8000-00000000000a',
+  procedure: 'antenna-sweep',
+  performedAt: '2025-10-11T17:00:00.000Z',
+  performedOn: '2025-10-11',
+  finding: 'pass',
+  findings: [],
+  figures: [
+    { band: '40 m', measure: 'swr', value: 1.3, frequencyMHz: 7.2 },
+    { band: '40 m', measure: 'resonanceMHz', value: 7.15, frequencyMHz: 7.15 },
+  ],
+  instrument: null,
+  limits: null,
+  intervalMonths: null,
+  supersededBy: null,
+  ...fields,
+})
+
+const sweep = (history: ItemResult[]) =>
+  sweepPicture(storedTest({ procedure: 'antenna-sweep', inputs: INPUTS }), history)
+
+describe('the picture of an antenna sweep', () => {
+  it('names the band that fails, and how far it has drifted since the first sweep', () => {
+    const picture = sweep([before()])
+    expect(plain(sweepAnswer(picture))).toBe(
+      '40 m fails: SWR 3 at 7.2 MHz where at most 2.5 is allowed. 20 m passes.',
+    )
+    expect(plain(sweepDrift(picture).join())).toBe(
+      'Since the first sweep on 11 Oct 2025 the resonance on 40 m went down by 182 kHz, from 7.15 MHz to 6.968 MHz.',
+    )
+    expect(plain(sweepTable(picture).rows[0]!.cells.join(' | '))).toBe(
+      '40 m | 7.2 MHz | 3 | 2.5 at most | Fail | 1.3',
+    )
+  })
+
+  it('takes neither a corrected sweep nor a later one as its baseline', () => {
+    const corrected = before({ supersededBy: { testId: 'x', reason: 'y' } })
+    const later = before({ performedAt: '2027-01-01T00:00:00.000Z' })
+    expect(sweep([corrected, later]).baselineOn).toBeNull()
+    expect(sweepDrift(sweep([corrected, later])).join()).toContain('first sweep on record')
+  })
+
+  it('compares the SWR where no resonance was noted', () => {
+    const noted = before({ figures: [{ band: '40 m', measure: 'swr', value: 1.3, frequencyMHz: 7.2 }] })
+    expect(sweepDrift(sweep([noted])).join()).toContain('changed by 1.7 at most')
+  })
+
+  it('holds what was read outside the amateur band', () => {
+    const [forty] = sweepLayout(sweep([before()]), { width: 358, narrow: true })
+    expect(forty!.resonance!.now).toBeGreaterThanOrEqual(forty!.left)
+    expect(forty!.resonance!.now).toBeLessThan(forty!.zone!.left)
+    expect(forty!.points[0]!.x).toBeLessThan(forty!.right)
+  })
+
+  it('sets its panels in rows of two on a phone', () => {
+    expect(sweepHeight(4, true)).toBe(2 * sweepHeight(4, false))
+    const panels = sweepLayout(sweep([]), { width: 358, narrow: true })
+    expect(panels.every(({ right }) => right <= 358)).toBe(true)
+  })
+})
+
+describe('the picture of a capacity test', () => {
+  const battery = (temperatureC: number) =>
+    capacityPicture(
+      storedTest(
+        {
+          procedure: 'battery-capacity',
+          inputs: { measuredAh: 20.54, currentA: 1.3, cutOffV: 10.5, temperatureC },
+        },
+        { battery: { ratedAh: 26, chemistry: 'agm' }, instrument: { accuracyPercentOfReading: 2 } },
+      ),
+    )!
+
+  it('says what is left of the rating and what is asked', () => {
+    const picture = battery(25)
+    expect(plain(capacityAnswer(picture))).toBe(
+      '79.0 ± 1.8 % of its rating: 20.5 Ah of 26 Ah at 25 °C; at least 80 % is asked.',
+    )
+    expect(capacityNotes(picture, text).join()).toContain('inside the uncertainty')
+  })
+
+  it('says at what temperature it was read where that was not 25 °C', () => {
+    const picture = battery(10)
+    expect(plain(capacityNotes(picture, text).join(' '))).toContain('Read as 20.5 Ah at 10 °C')
+    expect(picture.percent).toBeGreaterThan(picture.measuredPercent)
+    expect(capacityTable(picture, text).rows).toHaveLength(4)
+  })
+})
