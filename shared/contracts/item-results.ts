@@ -26,6 +26,8 @@ export const itemResult = z.object({
       frequencyMHz: z.number().nullable(),
     }),
   ),
+  /** Later tests are compared with this one. */
+  setsBaseline: z.boolean(),
   instrument: itemNamed.nullable(),
   /** Limits of the rule that it was judged by; null: no rule asked for it. */
   limits: z.record(z.string(), z.unknown()).nullable(),

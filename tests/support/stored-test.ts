@@ -8,6 +8,10 @@ const NOTHING_KNOWN: KnownForTest = {
   instrument: null,
   battery: {},
   feedline: { baselineDb: {}, last: [] },
+  line: {},
+  transformer: {},
+  sweep: { baseline: null },
+  region: 'itu-2',
   plan: { positions: [], sealNumber: null },
 }
 
@@ -48,6 +52,7 @@ export function storedTest(
     notes: '',
     supersedes: null,
     supersededBy: null,
+    attachments: [],
     effects: [],
     proposedRecall: null,
     ...more,

@@ -56,6 +56,7 @@ function resultOf(row: ResultRow): ItemResult {
     finding: row.finding,
     findings: row.findings,
     figures: sideFigures(row),
+    setsBaseline: (row.inputs as { setsBaseline?: boolean }).setsBaseline === true,
     instrument: instrumentOf(row),
     limits: row.limits,
     intervalMonths: row.interval_months,

@@ -2,11 +2,12 @@
  * What a test shows besides what it was judged by: figures that make sense of a trend. SWR at the radio beside the
  * loss of a line, the frequency of resonance beside an antenna's SWR, the ambient beside a temperature.
  */
-import type { Band } from '../vocabulary.ts'
+import type { Band, Procedure } from '../vocabulary.ts'
 import type { AntennaSweepInputs } from './antenna-sweep.ts'
-import type { FeedlineLossInputs } from './feedline-loss.ts'
+import type { BatteryCapacityInputs } from './battery-capacity.ts'
 import type { HeatTestInputs } from './heat-test.ts'
-import type { Performance } from './judge-test.ts'
+import type { FeedlineReading } from './line-history.ts'
+import type { WorstSwr } from './sweep-baseline.ts'
 
 /** Measures carry their unit in their name. */
 export interface SideFigure {
@@ -18,7 +19,7 @@ export interface SideFigure {
 }
 
 interface Stored {
-  readonly procedure: Performance['procedure'] | (string & {})
+  readonly procedure: Procedure
   readonly inputs: unknown
   readonly results: unknown
 }
@@ -27,16 +28,13 @@ interface Stored {
 export function sideFigures({ procedure, inputs, results }: Stored): SideFigure[] {
   switch (procedure) {
     case 'antenna-sweep':
-      return sweepFigures(inputs as AntennaSweepInputs)
+      return sweepFigures(inputs as Partial<AntennaSweepInputs>, results as SweepResults)
     case 'feedline-loss':
-      return lineFigures(
-        inputs as FeedlineLossInputs,
-        results as { baselineDb?: Partial<Record<Band, number>> },
-      )
+      return lineFigures(results as LineResults)
     case 'heat-test':
       return heatFigures(inputs as HeatTestInputs)
     case 'battery-capacity':
-      return batteryFigures(inputs as { temperatureC: number }, results as { measuredAh?: number })
+      return batteryFigures(inputs as BatteryCapacityInputs, results as { measuredAh?: number })
     default:
       return []
   }
@@ -44,13 +42,23 @@ export function sideFigures({ procedure, inputs, results }: Stored): SideFigure[
 
 function figure(
   measure: SideFigure['measure'],
-  value: number | undefined,
+  value: number | null | undefined,
   more: Partial<SideFigure> = {},
 ): SideFigure[] {
-  return value === undefined ? [] : [{ band: null, measure, value, frequencyMHz: null, ...more }]
+  return typeof value === 'number' ? [{ band: null, measure, value, frequencyMHz: null, ...more }] : []
 }
 
-function sweepFigures({ points = [], resonances = [] }: Partial<AntennaSweepInputs>): SideFigure[] {
+interface SweepResults {
+  readonly worst?: readonly WorstSwr[]
+  readonly resonances?: readonly { readonly band: Band; readonly frequencyMHz: number }[]
+}
+
+/** Every working point that was read by hand; of a file the point of each band that was judged. */
+function sweepFigures(
+  inputs: Partial<AntennaSweepInputs>,
+  { worst = [], resonances = [] }: SweepResults,
+): SideFigure[] {
+  const points: readonly WorstSwr[] = inputs.points ?? worst
   return [
     ...points.flatMap(({ band, frequencyMHz, swr }) => figure('swr', swr, { band, frequencyMHz })),
     ...resonances.flatMap(({ band, frequencyMHz }) =>
@@ -59,10 +67,12 @@ function sweepFigures({ points = [], resonances = [] }: Partial<AntennaSweepInpu
   ]
 }
 
-function lineFigures(
-  { readings = [] }: Partial<FeedlineLossInputs>,
-  { baselineDb = {} }: { baselineDb?: Partial<Record<Band, number>> },
-): SideFigure[] {
+interface LineResults {
+  readonly readings?: readonly FeedlineReading[]
+  readonly baselineDb?: Readonly<Partial<Record<Band, number>>>
+}
+
+function lineFigures({ readings = [], baselineDb = {} }: LineResults): SideFigure[] {
   return readings.flatMap(({ band, swrAtRadio }) => [
     ...figure('swrAtRadio', swrAtRadio, { band }),
     ...figure('baselineDb', baselineDb[band], { band }),
@@ -71,7 +81,7 @@ function lineFigures(
 
 const heatFigures = ({ band, ambientC }: HeatTestInputs) => figure('ambientC', ambientC, { band })
 
-const batteryFigures = (
-  { temperatureC }: { temperatureC: number },
-  { measuredAh }: { measuredAh?: number },
-) => [...figure('measuredAh', measuredAh), ...figure('temperatureC', temperatureC)]
+const batteryFigures = ({ temperatureC }: BatteryCapacityInputs, { measuredAh }: { measuredAh?: number }) => [
+  ...figure('measuredAh', measuredAh),
+  ...figure('temperatureC', temperatureC),
+]

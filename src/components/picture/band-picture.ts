@@ -53,10 +53,7 @@ export function bandFigures(test: StoredTest, measure: string, factor = 1): Band
   const baselineDb = test.results.baselineDb as Partial<Record<Band, number>> | undefined
   const judged = { procedure, limits: test.judgedBy.rule?.limits ?? null, ...(baselineDb && { baselineDb }) }
   return test.findings
-    .filter(
-      (one): one is Finding & { band: Band; value: number } =>
-        one.measure === measure && one.band !== null && one.value !== null,
-    )
+    .flatMap((one) => figureOf(one, measure) ?? [])
     .sort((a, b) => BANDS.indexOf(a.band) - BANDS.indexOf(b.band))
     .map((one) => {
       const limit = figureLimit(one, judged)
@@ -68,6 +65,14 @@ export function bandFigures(test: StoredTest, measure: string, factor = 1): Band
         limit: limit && limit.value * factor,
       }
     })
+}
+
+/** An SWR without a number is a total reflection. */
+function figureOf(one: Finding, measure: string): (Finding & { band: Band; value: number }) | null {
+  const value = one.value ?? (one.measure === 'swr' ? Infinity : null)
+  return one.measure === measure && one.band !== null && value !== null
+    ? { ...one, band: one.band, value }
+    : null
 }
 
 /** `40 m and 20 m pass`; `10 m passes`; empty for none. */

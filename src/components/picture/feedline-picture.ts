@@ -15,7 +15,7 @@ export function feedlinePicture(test: StoredTest): BandPicture | null {
   const figures = bandFigures(test, 'lossDb')
   if (figures.length === 0) return null
   const baseline = (test.results.baselineDb ?? {}) as Partial<Record<Band, number>>
-  const readings = (test.inputs.readings ?? []) as readonly Reading[]
+  const readings = (test.results.readings ?? []) as readonly Reading[]
   const swrOf = (band: Band) => readings.find((one) => one.band === band)?.swrAtRadio
   const worst = figures.reduce((a, b) => (riseOf(b, baseline) > riseOf(a, baseline) ? b : a))
   const isBaseline = figures.every(({ band }) => baseline[band] === undefined)

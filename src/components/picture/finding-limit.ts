@@ -23,7 +23,8 @@ interface Figure {
 }
 
 const LIMITS: Readonly<Record<string, (figure: Figure, judged: Judged) => FigureLimit | null>> = {
-  efficiency: (_, judged) => least(of('pair-loss', judged).minEfficiency),
+  efficiency: (_, judged) =>
+    least(of(judged.procedure === 'open-short-load' ? 'open-short-load' : 'pair-loss', judged).minEfficiency),
   peakC: (_, judged) => most(of('heat-test', judged).maxC),
   swrChange: (_, judged) => most(of('heat-test', judged).maxSwrChange),
   swr: (_, judged) => most(of('antenna-sweep', judged).maxSwr),

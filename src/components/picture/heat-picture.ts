@@ -10,8 +10,6 @@ import type { HeatTestInputs, HeatTestLimits } from '#shared/engine/procedures/h
 export interface HeatPicture {
   readonly inputs: HeatTestInputs
   readonly limits: HeatTestLimits
-  /** The text of what was found and judged. */
-  readonly found: string
   readonly fit: Outcome<HeatFit>
   readonly projection: HeatProjection | null
   /** Null where the log carries no curve. */
@@ -19,6 +17,8 @@ export interface HeatPicture {
   /** Where the time axis ends. */
   readonly untilS: number
   readonly peakC: number
+  /** The power that each mode allows, as the engine said it then; null where it could not. */
+  readonly allowed: string | null
 }
 
 /** How far beyond the log a curve is drawn at most, in lengths of the log: farther it is no more than a direction. */
@@ -37,11 +37,11 @@ export function heatPicture(test: StoredTest): HeatPicture {
   return {
     inputs,
     limits,
-    found: test.findings[0]?.text ?? '',
     fit,
     projection,
     curve: isFailure(curve) ? null : curve,
     untilS,
+    allowed: (test.results as { allowance?: { sentence?: string } }).allowance?.sentence ?? null,
     peakC: readings.reduce((peak, { temperatureC }) => Math.max(peak, temperatureC), -Infinity),
   }
 }

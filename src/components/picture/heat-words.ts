@@ -29,6 +29,7 @@ export function heatOutlook(picture: HeatPicture, text: UnitText): string[] {
   const { fit, projection, limits } = picture
   if (isFailure(fit)) return [fit.message]
   if (!fit.identifiable) return [tooShort(picture, fit.because, text)]
+  const allowed = picture.allowed === null ? [] : [picture.allowed]
   const end = (riseK: number) => text(picture.inputs.ambientC + riseK, '°C', 0)
   const range = `95\u00a0%: ${end(fit.steadyRiseLowK)} to ${end(fit.steadyRiseHighK)}`
   const settles = `settle near ${end(fit.steadyRiseK)} (${range})`
@@ -39,7 +40,7 @@ export function heatOutlook(picture: HeatPicture, text: UnitText): string[] {
       : ''
   const sentences = [`Keyed on without a break it would ${meets}${settles}; ${tau}.`]
   if (fit.warnings.some(({ code }) => code === 'W_EXTRAPOLATED')) sentences.push(BEYOND)
-  return sentences
+  return [...sentences, ...allowed]
 }
 
 const BEYOND =

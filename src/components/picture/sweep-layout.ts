@@ -3,6 +3,7 @@ import { extentOf, linearScale, padded, type Scale } from '@/components/chart/sc
 import { highestSwr, swrScale, swrTicks } from '@/components/chart/swr-scale.ts'
 import { numberText } from '@/format/quantity.ts'
 import type { FindingWord } from '#shared/engine/vocabulary.ts'
+import { swrText } from './sweep-words.ts'
 import type { SweepPanel, SweepPicture, SweepPoint } from './sweep-picture.ts'
 
 interface Mark {
@@ -76,7 +77,7 @@ function placed(panel: SweepPanel, { left, right, y, highest, limit }: Box) {
   const mark = ({ frequencyMHz, swr }: SweepPoint): Mark => ({
     x: x(frequencyMHz),
     y: y(swr),
-    said: `SWR ${numberText(swr, 2)} at ${numberText(frequencyMHz, 3)} MHz`,
+    said: `SWR ${swrText(swr)} at ${numberText(frequencyMHz, 3)} MHz`,
   })
   return {
     band,
@@ -97,7 +98,7 @@ function placed(panel: SweepPanel, { left, right, y, highest, limit }: Box) {
         kind: isWorst ? worst.finding : ('reading' as const),
         low: y(Math.max(1, point.swr - spread)),
         high: y(point.swr + spread),
-        label: isWorst ? numberText(point.swr, 2) : '',
+        label: isWorst && point.swr < Infinity ? swrText(point.swr) : '',
       }
     }),
     before: before.points.map(mark),

@@ -2,7 +2,7 @@ import type { ItemResult } from '#shared/contracts/item-results.ts'
 import type { StoredTest } from '#shared/contracts/test-shapes.ts'
 import { BAND_TABLE } from '#shared/engine/band-edges.ts'
 import { byBand } from '#shared/engine/procedures/by-band.ts'
-import type { AntennaSweepInputs } from '#shared/engine/procedures/antenna-sweep.ts'
+import type { WorstSwr } from '#shared/engine/procedures/sweep-baseline.ts'
 import type { PlainDate } from '#shared/engine/plain-date.ts'
 import type { Band } from '#shared/engine/vocabulary.ts'
 import { bandFigures, type BandFigure } from './band-picture.ts'
@@ -30,14 +30,13 @@ export interface SweepPicture {
   readonly baselineOn: PlainDate | null
 }
 
-/** `history`: the sweeps of this antenna, oldest first; the first that still counts is the baseline. */
+/** `history`: the sweeps of this antenna, oldest first, as `read-item-results` answers them. */
 export function sweepPicture(test: StoredTest, history: readonly ItemResult[]): SweepPicture {
-  const { points, resonances = [] } = test.inputs as unknown as AntennaSweepInputs
-  const baseline = history.find(
-    (one) => one.supersededBy === null && one.testId !== test.id && one.performedAt < test.performedAt,
-  )
+  const { worst: judged = [], resonances = [] } = test.results as SweepResults
+  const points = (test.inputs as { points?: readonly WorstSwr[] }).points ?? judged
+  const baseline = baselineFor(test, history)
   const figures = bandFigures(test, 'swr')
-  const panels = byBand(points).flatMap(([band, here]) => {
+  const panels = byBand(points.map(withoutNull)).flatMap(([band, here]) => {
     const worst = figures.find((figure) => figure.band === band)
     if (!worst) return []
     const frequencyMHz = here.find(({ swr }) => swr === worst.value)?.frequencyMHz ?? null
@@ -59,6 +58,22 @@ export function sweepPicture(test: StoredTest, history: readonly ItemResult[]): 
     limit: figures.find(({ limit }) => limit !== null)?.limit ?? null,
     baselineOn: baseline?.performedOn ?? null,
   }
+}
+
+interface SweepResults {
+  readonly worst?: readonly WorstSwr[]
+  readonly resonances?: readonly { readonly band: Band; readonly frequencyMHz: number }[]
+}
+
+/** A total reflection is stored without a number. */
+const withoutNull = ({ band, frequencyMHz, swr }: WorstSwr) => ({ band, frequencyMHz, swr: swr ?? Infinity })
+
+/** What the engine compares with: the newest earlier sweep that set a baseline, else the first of all. */
+function baselineFor(test: StoredTest, history: readonly ItemResult[]): ItemResult | undefined {
+  const earlier = history.filter(
+    (one) => one.supersededBy === null && one.testId !== test.id && one.performedAt < test.performedAt,
+  )
+  return earlier.findLast(({ setsBaseline }) => setsBaseline) ?? earlier[0]
 }
 
 function baselineOf(baseline: ItemResult | undefined, band: Band): SweepPanel['before'] {

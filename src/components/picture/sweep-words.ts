@@ -6,7 +6,7 @@ import { worstFirst } from './band-picture.ts'
 import { withUncertainty } from './figure-text.ts'
 import type { SweepPanel, SweepPicture } from './sweep-picture.ts'
 
-const swrText = (swr: number) => numberText(swr, 2)
+export const swrText = (swr: number) => (swr === Infinity ? 'beyond all measure' : numberText(swr, 2))
 const mhz = (frequencyMHz: number) => quantityText(frequencyMHz, 'MHz', 3)
 
 /** Moves smaller than this lie in the reading. Our choice. */
@@ -19,15 +19,16 @@ export function sweepAnswer({ panels, limit }: SweepPicture): string {
   const worst = figures.reduce((a, b) => (b.value > a.value ? b : a), first)
   const asked = limit === null ? '' : ` where at most ${swrText(limit)} is allowed`
   const where = worst.frequencyMHz === null ? '' : ` at ${mhz(worst.frequencyMHz)}`
-  const value = withUncertainty(worst.value, worst.uncertainty, '', 2)
+  const value =
+    worst.value === Infinity ? swrText(Infinity) : withUncertainty(worst.value, worst.uncertainty, '', 2)
   return worstFirst(figures, worst.band, `SWR ${value}${where}${asked}`)
 }
 
-/** How far it has wandered since the first sweep: the resonances, or the SWR where no resonance was noted. */
+/** How far it has wandered since the baseline: the resonances, or the SWR where no resonance was noted. */
 export function sweepDrift(picture: SweepPicture): string[] {
   const { panels, baselineOn } = picture
-  if (baselineOn === null) return ['This is the first sweep on record: later ones are compared with it.']
-  const since = `Since the first sweep on ${dayText(baselineOn)}`
+  if (baselineOn === null) return ['No earlier sweep is on record to compare it with.']
+  const since = `Since the baseline of ${dayText(baselineOn)}`
   const moved = panels.flatMap(movedText)
   if (moved.length > 0) return [`${since} ${moved.join('; ')}.`]
   const change = largestChange(panels)
@@ -55,7 +56,7 @@ function movedText({ band, resonanceMHz, before }: SweepPanel): string[] {
 }
 
 export function sweepTable({ panels, limit, baselineOn }: SweepPicture): ChartTable {
-  const first = baselineOn === null ? [] : [`First sweep, ${dayText(baselineOn)}`]
+  const first = baselineOn === null ? [] : [`Baseline, ${dayText(baselineOn)}`]
   return {
     columns: ['Band', 'Frequency', 'SWR', 'Limit', 'Finding', ...first],
     rows: panels.flatMap((panel) => [

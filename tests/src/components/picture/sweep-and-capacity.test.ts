@@ -35,6 +35,7 @@ const before = (fields: Partial<ItemResult> = {}): ItemResult => ({
     { band: '40 m', measure: 'swr', value: 1.3, frequencyMHz: 7.2 },
     { band: '40 m', measure: 'resonanceMHz', value: 7.15, frequencyMHz: 7.15 },
   ],
+  setsBaseline: false,
   instrument: null,
   limits: null,
   intervalMonths: null,
@@ -52,7 +53,7 @@ describe('the picture of an antenna sweep', () => {
       '40 m fails: SWR 3 at 7.2 MHz where at most 2.5 is allowed. 20 m passes.',
     )
     expect(plain(sweepDrift(picture).join())).toBe(
-      'Since the first sweep on 11 Oct 2025 the resonance on 40 m went down by 182 kHz, from 7.15 MHz to 6.968 MHz.',
+      'Since the baseline of 11 Oct 2025 the resonance on 40 m went down by 182 kHz, from 7.15 MHz to 6.968 MHz.',
     )
     expect(plain(sweepTable(picture).rows[0]!.cells.join(' | '))).toBe(
       '40 m | 7.2 MHz | 3 | 2.5 at most | Fail | 1.3',
@@ -63,7 +64,28 @@ describe('the picture of an antenna sweep', () => {
     const corrected = before({ supersededBy: { testId: 'x', reason: 'y' } })
     const later = before({ performedAt: '2027-01-01T00:00:00.000Z' })
     expect(sweep([corrected, later]).baselineOn).toBeNull()
-    expect(sweepDrift(sweep([corrected, later])).join()).toContain('first sweep on record')
+    expect(sweepDrift(sweep([corrected, later])).join()).toContain('No earlier sweep')
+  })
+
+  it('takes the newest sweep that set a baseline before the first of all', () => {
+    const set = before({
+      testId: 'set',
+      performedAt: '2026-01-01T00:00:00.000Z',
+      performedOn: '2026-01-01',
+      setsBaseline: true,
+    })
+    expect(sweep([before(), set]).baselineOn).toBe('2026-01-01')
+  })
+
+  it('draws a total reflection at the end of the axis and says so', () => {
+    const total = storedTest({ procedure: 'antenna-sweep', inputs: INPUTS })
+    const findings = total.findings.map((one) => (one.band === '40 m' ? { ...one, value: null } : one))
+    const points = INPUTS.points.map((one) => (one.band === '40 m' ? { ...one, swr: null } : one))
+    const picture = sweepPicture({ ...total, findings, inputs: { points } }, [])
+    expect(plain(sweepAnswer(picture))).toMatch(/^40 m fails: SWR beyond all measure at 7.2 MHz/)
+    const [forty] = sweepLayout(picture, { width: 358, narrow: true })
+    expect(forty!.points[0]!.y).toBeCloseTo(forty!.top)
+    expect(forty!.yTicks.at(-1)!.label).toBe('all')
   })
 
   it('compares the SWR where no resonance was noted', () => {
