@@ -13,7 +13,11 @@ export class CreateGroupsAndPeople1796000000000 implements MigrationInterface {
   async up(runner: QueryRunner): Promise<void> {
     await runner.query(`
     DO $$ BEGIN
-      IF NOT EXISTS (SELECT FROM pg_roles WHERE rolname = 'halyard_app') THEN CREATE ROLE halyard_app NOLOGIN; END IF;
+      IF NOT EXISTS (SELECT FROM pg_roles WHERE rolname = 'halyard_app') THEN
+        CREATE ROLE halyard_app NOLOGIN;
+        -- Where one address does both, the connection drops its rights to this role.
+        EXECUTE format('GRANT halyard_app TO %I', current_user);
+      END IF;
     END $$;
     GRANT USAGE ON SCHEMA public TO halyard_app;
     CREATE EXTENSION IF NOT EXISTS btree_gist;
