@@ -6,6 +6,8 @@ const APPROVED = new Set([
   'BSD-2-Clause',
   'BSD-3-Clause',
   'ISC',
+  // libvips, which sharp loads as a library of its own and unchanged.
+  'LGPL-3.0-or-later',
   'MIT',
   'MIT-0',
   'MPL-2.0',

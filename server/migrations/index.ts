@@ -2,10 +2,12 @@ import { CreateGroupsAndPeople1796000000000 } from './1796000000000-CreateGroups
 import { CreateRegistry1796000100000 } from './1796000100000-CreateRegistry.ts'
 import { CreateEvidence1796000200000 } from './1796000200000-CreateEvidence.ts'
 import { CreateReadiness1796000300000 } from './1796000300000-CreateReadiness.ts'
+import { CreateAttachments1796000400000 } from './1796000400000-CreateAttachments.ts'
 
 export const migrations = [
   CreateGroupsAndPeople1796000000000,
   CreateRegistry1796000100000,
   CreateEvidence1796000200000,
   CreateReadiness1796000300000,
+  CreateAttachments1796000400000,
 ]

@@ -1,4 +1,5 @@
 import type { AppContext } from '../context.ts'
+import { attachmentRoutes } from './attachments.ts'
 import { batchRoutes } from './batches.ts'
 import { boardRoutes } from './board.ts'
 import { buildSheetRoutes } from './build-sheets.ts'
@@ -42,6 +43,7 @@ const routes: readonly ((endpoints: EndpointRouter, ctx: AppContext) => void)[] 
   registryRoutes,
   tagSheetRoutes,
   testRoutes,
+  attachmentRoutes,
   boardRoutes,
   readinessRoutes,
   policyRoutes,

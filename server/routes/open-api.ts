@@ -30,6 +30,7 @@ function operation(endpoint: Endpoint): object {
     ...(endpoint.body && {
       requestBody: { required: true, content: json(schemaOf(endpoint.body, 'input')) },
     }),
+    ...(endpoint.upload && { requestBody: { required: true, content: UPLOAD } }),
     responses: {
       [endpoint.status ?? (endpoint.response ? 200 : 204)]: {
         description: 'Done',
@@ -44,6 +45,17 @@ function operation(endpoint: Endpoint): object {
       },
     },
   }
+}
+
+/** One file in the field `file`. */
+const UPLOAD = {
+  'multipart/form-data': {
+    schema: {
+      type: 'object',
+      required: ['file'],
+      properties: { file: { type: 'string', format: 'binary' } },
+    },
+  },
 }
 
 const json = (schema: object) => ({ 'application/json': { schema } })

@@ -15,6 +15,8 @@ export interface Operation {
   readonly query: readonly Parameter[]
   readonly optionalQuery: readonly string[]
   readonly body: JsonSchema | undefined
+  /** Takes a file as multipart/form-data. */
+  readonly upload: boolean
   readonly versioned: boolean
 }
 
@@ -29,7 +31,9 @@ interface DocumentOperation {
   operationId: string
   'x-access': Operation['access']
   parameters: Parameter[]
-  requestBody?: { content: { 'application/json': { schema: JsonSchema } } }
+  requestBody?: {
+    content: { 'application/json'?: { schema: JsonSchema }; 'multipart/form-data'?: object }
+  }
 }
 
 export async function readOperations(app: TestApp): Promise<Operation[]> {
@@ -46,7 +50,8 @@ export async function readOperations(app: TestApp): Promise<Operation[]> {
       optionalQuery: operation.parameters
         .filter((each) => each.in === 'query' && !each.required)
         .map((each) => each.name),
-      body: operation.requestBody?.content['application/json'].schema,
+      body: operation.requestBody?.content['application/json']?.schema,
+      upload: operation.requestBody?.content['multipart/form-data'] !== undefined,
       versioned: operation.parameters.some((each) => each.name === 'If-Match'),
     })),
   )
@@ -87,12 +92,20 @@ export async function tryOperation(
       ...(operation.body && { 'Content-Type': 'application/json' }),
     },
     ...(operation.body && { body: JSON.stringify(bodyFor(operation, operation.body, ids)) }),
+    ...(operation.upload && { body: sampleUpload() }),
   })
   const isProblem = response.headers.get('Content-Type')?.startsWith('application/problem+json')
   const problem = isProblem ? problemOf(await response.text(), operation.params.map(ids)) : undefined
   // An event stream would go on for ever.
   ending.abort()
   return { status: response.status, problem }
+}
+
+/** The smallest file of the first kind that can be uploaded. */
+function sampleUpload(): FormData {
+  const form = new FormData()
+  form.set('file', new Blob(['# MHz S RI R 50\n7 0.1 0\n']), 'sample.s1p')
+  return form
 }
 
 /** Without the request's id and the ids that were asked for, which an answer may repeat. */

@@ -3,6 +3,8 @@ import type { RecordTestBody } from '#shared/contracts/record-test.ts'
 import type { Judgement } from '#shared/engine/procedures/judgement.ts'
 import { ENGINE_VERSION } from '#shared/engine/procedures/judge-test.ts'
 import type { GroupTx, Statement } from '../../group-transaction.ts'
+import type { KeptKnown } from './kept-known.ts'
+import type { FileLink } from './named-files.ts'
 import { alreadySuperseded } from './test-subject.ts'
 
 export interface TestToInsert {
@@ -17,6 +19,9 @@ export interface TestToInsert {
   readonly policyId: string
   readonly ruleId: string | null
   readonly judgement: Judgement
+  /** What it was judged with besides the inputs. */
+  readonly known: KeptKnown
+  readonly files: readonly FileLink[]
   readonly contentHash: Buffer
 }
 
@@ -24,9 +29,9 @@ const INSERT: Statement = {
   name: 'insert-test',
   text: `INSERT INTO test (id, group_id, procedure, item_id, kit_id, performed_at, performed_on, recorded_at,
       claimed_at, operator_id, recorded_by, method, instrument_id, instrument_note, inputs, results, findings,
-      finding, policy_id, rule_id, engine_version, notes, supersedes_id, supersedes_reason, content_hash)
+      finding, policy_id, rule_id, engine_version, notes, supersedes_id, supersedes_reason, content_hash, known)
     VALUES ($1, $2, $3, $4, $5, $6, $7, $8, $9, $10, $11, $12, $13, $14, $15, $16, $17, $18, $19, $20, $21, $22, $23,
-      $24, $25)
+      $24, $25, $26)
     ON CONFLICT (id) DO NOTHING RETURNING id`,
 }
 
@@ -60,6 +65,7 @@ export async function insertTest(tx: GroupTx, test: TestToInsert): Promise<boole
       body.supersedes?.testId ?? null,
       body.supersedes?.reason ?? null,
       test.contentHash,
+      JSON.stringify(test.known),
     ])
     return rows.length === 1
   } catch (error) {

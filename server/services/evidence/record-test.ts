@@ -2,8 +2,10 @@ import type { RecordTestBody } from '#shared/contracts/record-test.ts'
 import type { StoredTest } from '#shared/contracts/test-shapes.ts'
 import { isFailure, type Failure } from '#shared/engine/outcome.ts'
 import type { PlainDate } from '#shared/engine/plain-date.ts'
-import { judgeTest, type KnownForTest } from '#shared/engine/procedures/judge-test.ts'
+import { filesWanted, judgePerformance } from '#shared/engine/procedures/judge-performance.ts'
 import type { Judgement } from '#shared/engine/procedures/judgement.ts'
+import type { KnownForTest } from '#shared/engine/procedures/performance.ts'
+import { filesNamed, type FileSources } from '#shared/engine/procedures/test-files.ts'
 import { policyAt, ruleFor } from '#shared/engine/readiness/rules-in-force.ts'
 import type { Policy, Rule } from '#shared/engine/readiness/types.ts'
 import type { Band } from '#shared/engine/vocabulary.ts'
@@ -18,6 +20,8 @@ import { affectedKits } from './affected-kits.ts'
 import { auditTest } from './audit-test.ts'
 import { contentHash, insertTest, type TestToInsert } from './insert-test.ts'
 import { accuracyOf, knownForTest } from './known-for-test.ts'
+import { keptKnown } from './kept-known.ts'
+import { fileSources, linkFiles, namedFiles } from './named-files.ts'
 import { readStoredTest, storedHash } from './stored-test.ts'
 import { testHistory } from './test-history.ts'
 import { applyConsequences, hasConsequences } from './test-consequences.ts'
@@ -72,7 +76,8 @@ export async function recordTestIn(tx: GroupTx, recording: Recording): Promise<S
   }
   const [[, isNew], rewriting] = await Promise.all([inserting, prepareRewriting(tx, kitIds)])
   if (!isNew) return sameAgain(tx, testId, { known: await storedHash(tx, testId), sent })
-  const [, , , stored] = await Promise.all([
+  const [, , , , stored] = await Promise.all([
+    linkFiles(tx, testId, test.files),
     insertEffects(tx, testId, rewriting.changes),
     auditTest(tx, { subject, test }),
     rewriting.write(),
@@ -106,10 +111,11 @@ async function judge(
   const claimedAt = new Date(body.performedAt)
   // A test cannot count before it was received, whatever the device's clock said (promise P7).
   const performedAt = claimedAt < tx.now ? claimedAt : tx.now
-  const [subject, instrument, history, , , policies, zone] = await Promise.all([
+  const [subject, instrument, history, files, , , policies, zone] = await Promise.all([
     readSubject(tx, body),
     readInstrument(tx, body),
     testHistory(tx, historyOf(body, performedAt)),
+    namedFiles(tx, body),
     readOperator(tx, operatorId),
     checkSuperseded(tx, testId, body),
     policiesOrFirst(tx),
@@ -120,7 +126,8 @@ async function judge(
   if (!policy) throw new Error('A group without a policy')
   const rule = ruleOf(policy, { subject, body, performedOn })
   const accuracy = accuracyOf(instrument)
-  const judgement = judgementOf(body, knownForTest({ subject, history, policy, rule, accuracy }))
+  const known = knownForTest({ subject, history, policy, rule, accuracy })
+  const judgement = judgementOf(body, { ...files.sources, ...(await baselineFile(tx, body, known)) }, known)
   return {
     subject,
     test: {
@@ -133,6 +140,8 @@ async function judge(
       policyId: policy.id,
       ruleId: rule?.id ?? null,
       judgement,
+      known: keptKnown(body.procedure, known),
+      files: files.links,
       contentHash: hash,
     },
   }
@@ -157,8 +166,18 @@ function ruleOf(
   return (body.procedure === 'heat-test' ? on(body.inputs.band) : undefined) ?? on(null)
 }
 
-function judgementOf(body: RecordTestBody, known: KnownForTest): Judgement {
-  const judgement = judgeTest(body, known)
+/** Only a sweep by file is compared with another one point by point. */
+async function baselineFile(tx: GroupTx, body: RecordTestBody, known: KnownForTest): Promise<FileSources> {
+  const named = filesNamed(body).map(({ id }) => id)
+  if (named.length === 0) return {}
+  return fileSources(
+    tx,
+    filesWanted(body, known).filter((id) => !named.includes(id)),
+  )
+}
+
+function judgementOf(body: RecordTestBody, sources: FileSources, known: KnownForTest): Judgement {
+  const judgement = judgePerformance(body, sources, known)
   if (!isFailure(judgement)) return judgement
   throw new AppError('request-invalid', 'The test cannot be judged as it stands. Nothing was saved.', {
     errors: [{ pointer: pointerTo(body.procedure, judgement), detail: judgement.message }],

@@ -1,6 +1,6 @@
 import { availableParallelism } from 'node:os'
 import argon2 from 'argon2'
-import { HashGate } from './hash-gate.ts'
+import { WorkGate } from '../work-gate.ts'
 
 /** argon2id at the least that OWASP's password storage sheet asks for, 19 MiB; one lane leaves the other core alone. */
 const SETTINGS = { type: argon2.argon2id, memoryCost: 19_456, timeCost: 2, parallelism: 1 } as const
@@ -8,10 +8,11 @@ const SETTINGS = { type: argon2.argon2id, memoryCost: 19_456, timeCost: 2, paral
 /** Verified where there is no hash to verify, so that an unknown address takes as long as a known one. Matches nothing. */
 const NOBODY = `$argon2id$v=19$m=${SETTINGS.memoryCost},t=${SETTINGS.timeCost},p=${SETTINGS.parallelism}$${'A'.repeat(22)}$${'A'.repeat(43)}`
 
-const gate = new HashGate({
+const gate = new WorkGate({
   atOnce: Math.max(1, availableParallelism() - 1),
   longestQueue: 32,
   longestWaitMs: 3000,
+  busy: 'Many are signing in just now. Try again in a moment.',
 })
 
 /** @throws AppError `unavailable` when too many hashes wait. */

@@ -21,6 +21,7 @@ export function judgePerformance(
 /** The attachments whose bytes `judgePerformance` wants: those named by the inputs, then the baseline's. */
 export function filesWanted(performance: Performance, { sweep }: Pick<KnownForTest, 'sweep'>): string[] {
   const named = filesNamed(performance).map(({ id }) => id)
-  const baseline = performance.procedure === 'antenna-sweep' ? (sweep.baseline?.file ?? null) : null
+  const isCompared = performance.procedure === 'antenna-sweep' && performance.inputs.source === 'file'
+  const baseline = isCompared ? (sweep.baseline?.file ?? null) : null
   return [...new Set(baseline === null ? named : [...named, baseline])]
 }

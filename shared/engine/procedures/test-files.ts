@@ -5,6 +5,7 @@
 import { failure, isFailure, type Outcome } from '../outcome.ts'
 import { readTouchstone } from '../touchstone/read-touchstone.ts'
 import type { TouchstoneFile } from '../touchstone/touchstone-file.ts'
+import type { Performance } from './performance.ts'
 
 export interface FileSource {
   /** Its ending tells the ports: `.s1p`, `.s2p`. */
@@ -24,14 +25,18 @@ export interface NamedFile {
   readonly id: string
 }
 
-const ROLES: readonly FileRole[] = ['file', 'open', 'short', 'load']
-
 /** The files that the inputs of a test name. Inputs entered by hand name none. */
-export function filesNamed({ inputs }: { readonly inputs: object }): NamedFile[] {
-  return ROLES.flatMap((role) => {
-    const id = (inputs as Partial<Record<FileRole, unknown>>)[role]
-    return typeof id === 'string' ? [{ role, id }] : []
-  })
+export function filesNamed(performance: Performance): NamedFile[] {
+  if (performance.procedure === 'open-short-load') {
+    const { open, short, load } = performance.inputs
+    return [
+      { role: 'open', id: open },
+      { role: 'short', id: short },
+      { role: 'load', id: load },
+    ]
+  }
+  const { inputs } = performance
+  return 'source' in inputs && inputs.source === 'file' ? [{ role: 'file', id: inputs.file }] : []
 }
 
 /** Every source parsed, or the first fault with its line in the message and the file's role as the field. */

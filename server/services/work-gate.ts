@@ -1,4 +1,4 @@
-import { AppError } from '../../errors.ts'
+import { AppError } from '../errors.ts'
 
 interface Limits {
   /** Runs at the same time. */
@@ -6,6 +6,8 @@ interface Limits {
   /** Waits at most; one more is refused at once. */
   readonly longestQueue: number
   readonly longestWaitMs: number
+  /** What is said to those who do not get in. */
+  readonly busy: string
 }
 
 interface Waiting {
@@ -13,10 +15,10 @@ interface Waiting {
 }
 
 /**
- * Lets a few password hashes run at a time, so that sign-ins leave a core to everything else. Beyond the queue or the
- * wait the answer is `unavailable` with `Retry-After`.
+ * Lets a few pieces of heavy work (password hashes, pictures) run at a time, so that they leave a core to everything
+ * else. Beyond the queue or the wait the answer is `unavailable` with `Retry-After`.
  */
-export class HashGate {
+export class WorkGate {
   #running = 0
   readonly #queue: Waiting[] = []
 
@@ -34,7 +36,7 @@ export class HashGate {
 
   #wait(): Promise<void> {
     const { longestQueue, longestWaitMs } = this.limits
-    if (this.#queue.length >= longestQueue) throw tooBusy()
+    if (this.#queue.length >= longestQueue) throw tooBusy(this.limits.busy)
     return new Promise((resolve, reject) => {
       const waiting: Waiting = {
         enter: () => {
@@ -44,7 +46,7 @@ export class HashGate {
       }
       const timer = setTimeout(() => {
         this.#queue.splice(this.#queue.indexOf(waiting), 1)
-        reject(tooBusy())
+        reject(tooBusy(this.limits.busy))
       }, longestWaitMs)
       this.#queue.push(waiting)
     })
@@ -58,8 +60,6 @@ export class HashGate {
   }
 }
 
-function tooBusy(): AppError {
-  return new AppError('unavailable', 'Many are signing in just now. Try again in a moment.', {
-    retryAfterSeconds: 3,
-  })
+function tooBusy(detail: string): AppError {
+  return new AppError('unavailable', detail, { retryAfterSeconds: 3 })
 }

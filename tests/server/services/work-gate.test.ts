@@ -1,9 +1,9 @@
 /** Hashing one at a time (promise P17). */
 import { setTimeout as pause } from 'node:timers/promises'
 import { describe, expect, it } from 'vitest'
-import { HashGate } from '#server/services/sign-in/hash-gate.ts'
+import { WorkGate } from '#server/services/work-gate.ts'
 
-const limits = { atOnce: 2, longestQueue: 3, longestWaitMs: 50 }
+const limits = { atOnce: 2, longestQueue: 3, longestWaitMs: 50, busy: 'Busy.' }
 
 /** Work that ends when told to. */
 function held() {
@@ -12,9 +12,9 @@ function held() {
   return { work: () => ended, end: () => end() }
 }
 
-describe('HashGate', () => {
+describe('WorkGate', () => {
   it('lets no more than its number run at once', async () => {
-    const gate = new HashGate({ ...limits, longestQueue: 20, longestWaitMs: 5000 })
+    const gate = new WorkGate({ ...limits, longestQueue: 20, longestWaitMs: 5000 })
     let running = 0
     let most = 0
     const work = async () => {
@@ -28,7 +28,7 @@ describe('HashGate', () => {
   })
 
   it('refuses at once what finds the queue full', async () => {
-    const gate = new HashGate({ ...limits, longestWaitMs: 5000 })
+    const gate = new WorkGate({ ...limits, longestWaitMs: 5000 })
     const { work, end } = held()
     const accepted = Array.from({ length: 5 }, () => gate.run(work))
     await expect(gate.run(work)).rejects.toMatchObject({
@@ -40,7 +40,7 @@ describe('HashGate', () => {
   })
 
   it('refuses what has waited too long, and goes on', async () => {
-    const gate = new HashGate(limits)
+    const gate = new WorkGate(limits)
     const { work, end } = held()
     const first = [gate.run(work), gate.run(work)]
     await expect(gate.run(work)).rejects.toMatchObject({ code: 'unavailable' })
@@ -50,7 +50,7 @@ describe('HashGate', () => {
   })
 
   it('gives its place on when the work fails', async () => {
-    const gate = new HashGate({ ...limits, atOnce: 1 })
+    const gate = new WorkGate({ ...limits, atOnce: 1 })
     await expect(gate.run(async () => Promise.reject(new Error('failed')))).rejects.toThrow('failed')
     await expect(gate.run(async () => 'served')).resolves.toBe('served')
   })

@@ -1,0 +1,20 @@
+import { systemActor } from '../../caller.ts'
+import type { AppContext } from '../../context.ts'
+import { inGroup, type Statement } from '../../group-transaction.ts'
+import { poolOf } from '../../pool.ts'
+
+const KEPT_MS = 24 * 60 * 60_000
+
+const UNUSED: Statement = {
+  name: 'sweep-attachments',
+  text: `DELETE FROM attachment a WHERE a.uploaded_at < $1
+    AND NOT EXISTS (SELECT FROM test_attachment t WHERE t.attachment_id = a.id)`,
+}
+
+/** Removes files that no test has named within a day. Safe at any time and twice at once. */
+export async function sweepAttachments(ctx: AppContext): Promise<void> {
+  const { rows } = await poolOf(ctx.db).query<{ id: string }>('SELECT id FROM list_groups()')
+  const before = new Date(ctx.clock.now().getTime() - KEPT_MS)
+  for (const { id: groupId } of rows)
+    await inGroup(ctx, { groupId, actor: systemActor('sweep-attachments') }, (tx) => tx.sql(UNUSED, [before]))
+}
