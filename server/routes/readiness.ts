@@ -1,9 +1,11 @@
 import { listDueChecks as dueContract } from '#shared/contracts/due-checks.ts'
+import { readForecast as forecastContract } from '#shared/contracts/forecast.ts'
 import { readItemChecks as itemContract } from '#shared/contracts/item-checks.ts'
 import { readKitReadiness as readContract } from '#shared/contracts/kit-readiness.ts'
 import type { AppContext } from '../context.ts'
 import { inGroup } from '../group-transaction.ts'
 import { listDueChecks } from '../services/readiness/due-checks.ts'
+import { readForecast } from '../services/readiness/read-forecast.ts'
 import { readItemChecks } from '../services/readiness/read-item-checks.ts'
 import { readKitReadiness } from '../services/readiness/read-kit-readiness.ts'
 import type { EndpointRouter } from './endpoint.ts'
@@ -13,5 +15,6 @@ export function readinessRoutes(endpoints: EndpointRouter, ctx: AppContext): voi
     inGroup(ctx, by, (tx) => readKitReadiness(tx, { kitId: params.kitId, asOf: query.asOf })),
   )
   endpoints.add(itemContract, ({ params, by }) => inGroup(ctx, by, (tx) => readItemChecks(tx, params.itemId)))
+  endpoints.add(forecastContract, ({ by }) => inGroup(ctx, by, readForecast))
   endpoints.add(dueContract, ({ query, by }) => inGroup(ctx, by, (tx) => listDueChecks(tx, query)))
 }

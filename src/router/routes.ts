@@ -49,6 +49,12 @@ export const routes: RouteRecordRaw[] = [
     meta: { title: 'Tests due', roles: CREW, light: true },
   },
   {
+    path: '/forecast',
+    name: 'forecast',
+    component: () => import('@/views/ForecastView.vue'),
+    meta: { title: 'Forecast', roles: CREW, light: true },
+  },
+  {
     path: '/policy',
     name: 'policy',
     component: () => import('@/views/PolicyView.vue'),

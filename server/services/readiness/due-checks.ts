@@ -1,21 +1,11 @@
 import type { z } from 'zod'
 import type { DueCheck, listDueChecks as contract } from '#shared/contracts/due-checks.ts'
-import { checksAt, checksOfItem } from '#shared/engine/readiness/checks.ts'
-import { dossierOf, momentOf } from '#shared/engine/readiness/moment.ts'
 import type { CheckState, KitState } from '#shared/engine/readiness/types.ts'
 import type { GroupTx, Statement } from '../../group-transaction.ts'
-import { loadKitStates } from '../load-kit-states.ts'
-import { loadSpares } from './spare-states.ts'
+import { checksOfGroup } from './group-checks.ts'
 
 type Query = z.output<typeof contract.query>
 
-/** Kits whose states are in memory at once. */
-const STEP = 200
-
-const KITS: Statement = {
-  name: 'due-kits',
-  text: `SELECT id FROM kit WHERE group_id = $1 AND retired_at IS NULL AND ($2::uuid IS NULL OR id = $2) ORDER BY id`,
-}
 const PLACES: Statement = { name: 'due-places', text: 'SELECT id, name FROM place WHERE group_id = $1' }
 
 interface Located extends DueCheck {
@@ -24,30 +14,17 @@ interface Located extends DueCheck {
 
 /** Everything in the group that is not current, whatever the filters: what reminders and digests read too. */
 export async function dueChecksOf(tx: GroupTx, kitId: string | null = null): Promise<Located[]> {
-  const [kits, places] = await Promise.all([
-    tx.sql<{ id: string }>(KITS, [tx.groupId, kitId]),
+  const [parts, places] = await Promise.all([
+    checksOfGroup(tx, kitId),
     tx.sql<{ id: string; name: string }>(PLACES, [tx.groupId]),
   ])
   const placeOf = new Map(places.map((row) => [row.id, row.name]))
-  const found: Located[] = []
-  for (let at = 0; at < kits.length; at += STEP) {
-    const ids = kits.slice(at, at + STEP).map((kit) => kit.id)
-    for (const { state, placeId } of await loadKitStates(tx, ids)) {
+  return parts
+    .flatMap(({ state, checks, kit, placeId }) => {
       const place = placeId === null ? null : (placeOf.get(placeId) ?? null)
-      found.push(...dueOf(state, checksAt(state, tx.now.getTime()), { kit: state.kit, place, placeId }))
-    }
-  }
-  if (kitId === null) found.push(...(await dueSpares(tx, placeOf)))
-  return found.sort(byDay)
-}
-
-async function dueSpares(tx: GroupTx, placeOf: ReadonlyMap<string, string>): Promise<Located[]> {
-  return (await loadSpares(tx)).flatMap(({ state, placeId }) => {
-    const moment = momentOf(dossierOf(state), tx.now.getTime())
-    const checks = state.items.flatMap((item) => checksOfItem(moment, item, { vital: false, bands: [] }))
-    const place = placeId === null ? null : (placeOf.get(placeId) ?? null)
-    return dueOf(state, checks, { kit: null, place, placeId })
-  })
+      return dueOf(state, checks, { kit, place, placeId })
+    })
+    .sort(byDay)
 }
 
 interface Where {
