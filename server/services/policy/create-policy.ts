@@ -37,8 +37,7 @@ export async function createPolicy(
   if (await createdBefore(tx, { id: policyId, action: 'policy-created', body }))
     return readPolicy(tx, policyId)
   await lockNewId(tx, tx.groupId)
-  const [last] = await tx.sql<{ number: number; effective_on: string }>(LAST, [tx.groupId])
-  await checkDay(tx, body, last)
+  const last = await checkDay(tx, body)
   checkRuleIds(body)
   const number = (last?.number ?? 0) + 1
   const { name, effectiveOn, reason, settings } = body
@@ -54,23 +53,31 @@ export async function createPolicy(
     summary: `put policy ${number}, ${name}, into force from ${dayText(effectiveOn)}: ${reason}`,
     after: body,
   })
-  const kits = await tx.sql<{ id: string }>(KITS, [tx.groupId])
-  await rewriteReadiness(
-    tx,
-    kits.map((kit) => kit.id),
-  )
+  await rewriteReadiness(tx, await kitsInUse(tx))
   return readPolicy(tx, policyId)
 }
 
-async function checkDay(
+export async function kitsInUse(tx: GroupTx): Promise<string[]> {
+  const kits = await tx.sql<{ id: string }>(KITS, [tx.groupId])
+  return kits.map((kit) => kit.id)
+}
+
+interface LastVersion {
+  [column: string]: unknown
+  number: number
+  effective_on: string
+}
+
+/** Refuses a day that has passed or lies before the last version's; the answer is that version, if there is one. */
+export async function checkDay(
   tx: GroupTx,
-  { effectiveOn }: CreatePolicyBody,
-  last: { effective_on: string } | undefined,
-): Promise<void> {
+  { effectiveOn }: Pick<CreatePolicyBody, 'effectiveOn'>,
+): Promise<LastVersion | undefined> {
+  const [last] = await tx.sql<LastVersion>(LAST, [tx.groupId])
   // The first version of a group may reach back: nothing was judged by another.
-  if (!last) return
+  if (!last) return last
   if (effectiveOn < (await tx.today())) throw invalidField('#/effectiveOn', 'Choose today or a later day.')
-  if (effectiveOn >= last.effective_on) return
+  if (effectiveOn >= last.effective_on) return last
   const detail = `The last version takes effect on ${dayText(last.effective_on)}: choose that day or a later one.`
   throw new AppError('state-conflict', detail, { errors: [{ pointer: '#/effectiveOn', detail }] })
 }
