@@ -21,7 +21,7 @@ export function securityHeaders(): RequestHandler {
         frameAncestors: ["'none'"],
         formAction: ["'self'"],
         requireTrustedTypesFor: ["'script'"],
-        trustedTypes: ['vue'],
+        trustedTypes: ['vue', 'halyard-worker'],
       },
     },
     strictTransportSecurity: { maxAge: 63_072_000, includeSubDomains: true },

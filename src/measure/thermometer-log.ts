@@ -1,0 +1,191 @@
+import { parse } from 'csv-parse/browser/esm/sync'
+import { failure, isFailure, type Failure, type Outcome } from '#shared/engine/outcome.ts'
+import { celsiusFromFahrenheit } from '#shared/engine/units.ts'
+import {
+  findColumns,
+  readTemperature,
+  unitIn,
+  type LogColumns,
+  type TemperatureColumn,
+  type TemperatureUnit,
+} from './log-columns.ts'
+import { readTime, sinceFirst, type ReadTime } from './log-time.ts'
+
+/** A thermometer's log as a heat test takes it: seconds since its first line and °C. */
+export interface ThermometerLog {
+  readonly readings: readonly { readonly atS: number; readonly temperatureC: number }[]
+  /** Lines of readings in the file; more than `readings` when they were thinned. */
+  readonly lines: number
+  readonly unit: TemperatureUnit
+  readonly columns: readonly TemperatureColumn[]
+  /** The column that was read. */
+  readonly column: number
+}
+
+/** What a person answers where the file does not say. */
+export interface LogAnswers {
+  readonly unit?: TemperatureUnit | undefined
+  /** Place of the temperature column in the file. */
+  readonly column?: number | undefined
+}
+
+export interface LogFault {
+  readonly line: number
+  readonly column: string
+  readonly message: string
+}
+
+/** `E_UNIT`: ask °C or °F and read again. Every other failure is about the file; `faults` names the lines. */
+export interface LogFailure extends Failure {
+  readonly faults?: readonly LogFault[]
+  readonly columns?: readonly TemperatureColumn[]
+}
+
+/** Promise P26: what may be uploaded. */
+const MOST_BYTES = 2 * 1024 * 1024
+const MOST_ROWS = 5000
+/** What a test takes; a longer log is thinned evenly, its hottest reading kept. */
+export const MOST_READINGS = 500
+const MOST_FAULTS = 20
+
+/** Reads a CSV log; all or nothing. */
+export function readThermometerLog(
+  source: string | Uint8Array,
+  answers: LogAnswers = {},
+): ThermometerLog | LogFailure {
+  const rows = rowsOf(source)
+  if (isFailure(rows)) return rows
+  const columns = findColumns(rows.map(({ cells }) => cells))
+  if (!columns)
+    return failure(
+      'E_LOG_COLUMNS',
+      'No column of times beside a column of temperatures was found. A heading such as "Time, Temperature °C" helps.',
+    )
+  const column = columns.temperatures.find(({ place }) => place === answers.column) ?? columns.temperatures[0]
+  if (!column) return failure('E_LOG_COLUMNS', 'There is no column of temperatures.')
+  return readRows(rows.slice(columns.from), { columns, column, answers })
+}
+
+interface Row {
+  readonly line: number
+  readonly cells: readonly string[]
+}
+
+function rowsOf(source: string | Uint8Array): Outcome<Row[]> {
+  if (source.length > MOST_BYTES)
+    return failure('E_LOG_SIZE', 'The file is larger than 2 MiB: export a shorter log.')
+  const text = typeof source === 'string' ? source : decode(source)
+  if (text === null)
+    return failure('E_LOG_ENCODING', 'The file is not text in UTF-8: export it as CSV (UTF-8).')
+  try {
+    const records = parse(text.replace(/\r\n?/g, '\n'), {
+      delimiter: delimiterOf(text),
+      record_delimiter: '\n',
+      relax_column_count: true,
+      relax_quotes: true,
+      bom: true,
+      trim: true,
+      info: true,
+    }) as unknown as { record: string[]; info: { lines: number } }[]
+    const rows = records.map(({ record, info }) => ({ line: info.lines, cells: record }))
+    const filled = rows.filter(({ cells }) => cells.some((cell) => cell !== ''))
+    return filled.length > MOST_ROWS
+      ? failure('E_LOG_SIZE', `${filled.length} lines are more than ${MOST_ROWS}: export a shorter log.`)
+      : filled
+  } catch (error) {
+    const { lines, message } = error as { lines?: number; message: string }
+    return failure('E_LOG_CSV', `This is no table that can be read: ${message}.`, { line: lines ?? 1 })
+  }
+}
+
+function decode(bytes: Uint8Array): string | null {
+  try {
+    return new TextDecoder('utf-8', { fatal: true }).decode(bytes)
+  } catch {
+    return null
+  }
+}
+
+/** Of tab, semicolon and comma the one that stands in most lines: with a semicolon, commas are decimals. */
+function delimiterOf(text: string): string {
+  const lines = text.split(/\r\n?|\n/).slice(0, 200)
+  const withOne = (delimiter: string) => lines.filter((line) => line.includes(delimiter)).length
+  const tabs = withOne('\t')
+  const semicolons = withOne(';')
+  if (tabs > 0 && tabs >= semicolons) return '\t'
+  return semicolons > 0 && semicolons >= withOne(',') / 2 ? ';' : ','
+}
+
+interface Plan {
+  readonly columns: LogColumns
+  readonly column: TemperatureColumn
+  readonly answers: LogAnswers
+}
+
+function readRows(rows: readonly Row[], plan: Plan): ThermometerLog | LogFailure {
+  const faults: LogFault[] = []
+  const read: { line: number; time: ReadTime; figure: number }[] = []
+  for (const row of rows) {
+    const one = readRow(row, plan)
+    if ('message' in one) faults.push(one)
+    else read.push({ line: row.line, ...one })
+  }
+  if (faults.length > 0) return faulty(faults)
+  if (read.length < 2)
+    return failure('E_TOO_FEW', `The log holds ${read.length} reading(s); a heat test needs two.`)
+  const at = sinceFirst(read.map(({ time }) => time))
+  const back = at.findIndex((seconds, place) => place > 0 && seconds <= (at[place - 1] ?? 0))
+  if (back > 0) {
+    const message = 'This time is not after the one before it.'
+    return faulty([{ line: read[back]?.line ?? 0, column: 'time', message }])
+  }
+  const unit = plan.answers.unit ?? plan.column.unit ?? unitIn(rows[0]?.cells[plan.column.place] ?? '')
+  const { temperatures } = plan.columns
+  if (unit === null) return { ...failure('E_UNIT', 'The log does not say °C or °F.'), columns: temperatures }
+  const celsius = (figure: number) => (unit === 'F' ? celsiusFromFahrenheit(figure) : figure)
+  const readings = read.map(({ figure }, place) => ({
+    atS: at[place] ?? 0,
+    temperatureC: Math.round(celsius(figure) * 1000) / 1000,
+  }))
+  const outside = readings.findIndex(({ temperatureC }) => temperatureC < -40 || temperatureC > 300)
+  if (outside >= 0) {
+    const message = 'This lies outside −40 to 300 °C: is it another unit, or a probe that came loose?'
+    return faulty([{ line: read[outside]?.line ?? 0, column: plan.column.name, message }])
+  }
+  return {
+    readings: thinned(readings),
+    lines: readings.length,
+    unit,
+    columns: temperatures,
+    column: plan.column.place,
+  }
+}
+
+function readRow(
+  { line, cells }: Row,
+  { columns, column }: Plan,
+): { time: ReadTime; figure: number } | LogFault {
+  const said = columns.time.map((place) => cells[place] ?? '').join(' ')
+  const time = readTime(said, columns.unitS)
+  if (!time) return { line, column: 'time', message: `“${said.trim()}” is not a time that can be read.` }
+  const cell = cells[column.place] ?? ''
+  const figure = readTemperature(cell)
+  if (figure === null) return { line, column: column.name, message: `“${cell}” is not a temperature.` }
+  return { time, figure }
+}
+
+function faulty(faults: readonly LogFault[]): LogFailure {
+  const [first] = faults
+  const more = faults.length > 1 ? ` ${faults.length - 1} more line(s) have a fault.` : ''
+  const message = `Line ${first?.line}, ${first?.column}: ${first?.message}${more}`
+  return { code: 'E_LOG_LINE', message, line: first?.line ?? 0, faults: faults.slice(0, MOST_FAULTS) }
+}
+
+/** Evenly, with the first, the last and the hottest. */
+function thinned<Reading extends { readonly temperatureC: number }>(readings: readonly Reading[]): Reading[] {
+  if (readings.length <= MOST_READINGS) return [...readings]
+  const step = (readings.length - 1) / (MOST_READINGS - 2)
+  const places = new Set(Array.from({ length: MOST_READINGS - 1 }, (_, n) => Math.round(n * step)))
+  const hottest = readings.reduce((a, b) => (b.temperatureC > a.temperatureC ? b : a))
+  return readings.filter((reading, place) => places.has(place) || reading === hottest)
+}
