@@ -4,6 +4,8 @@ import { ProblemError, problemFromDetails } from './problem-error.ts'
 import { addressOf } from './address.ts'
 
 const TIME_OUT_MS = 15_000
+/** A photo over a slow line. */
+const UPLOAD_TIME_OUT_MS = 120_000
 
 /** Present exactly where the contract names it. */
 type Part<E, Name extends string, Value> =
@@ -17,6 +19,8 @@ export type Call<E extends Endpoint> = Part<E, 'params', ParamsOf<E>> & {
 } & Part<E, 'body', BodyInputOf<E>> &
   (E extends { versioned: true } ? { readonly version: number } : { readonly version?: undefined }) & {
     readonly signal?: AbortSignal
+    /** A file to send, in place of a body. */
+    readonly form?: FormData
     /** Hears when the service answered, by its own clock, epoch ms: an answer kept by the browser says when it was made. */
     readonly answered?: (atMs: number) => void
     /** An answer that was asked for before the application had loaded: read instead of asking again. */
@@ -80,13 +84,13 @@ async function callOnce<E extends Endpoint>(endpoint: E, call: Call<E>): Promise
 }
 
 async function send<E extends Endpoint>(endpoint: E, call: Call<E>): Promise<Response> {
-  const timeOut = AbortSignal.timeout(TIME_OUT_MS)
+  const timeOut = AbortSignal.timeout(call.form ? UPLOAD_TIME_OUT_MS : TIME_OUT_MS)
   try {
     if (call.early) return await orTimeOut(call.early, timeOut)
     return await fetch(addressOf(endpoint.path, call.params, call.query), {
       method: endpoint.method.toUpperCase(),
       headers: headersOf(call),
-      body: call.body === undefined ? undefined : JSON.stringify(call.body),
+      body: call.form ?? (call.body === undefined ? undefined : JSON.stringify(call.body)),
       credentials: 'same-origin',
       signal: call.signal ? AbortSignal.any([call.signal, timeOut]) : timeOut,
     })

@@ -4,6 +4,8 @@ import type { TestForm } from '#shared/contracts/test-form.ts'
 import type { StoredTest } from '#shared/contracts/test-shapes.ts'
 import { callApi } from '@/api/call-api.ts'
 import { uuidv7 } from '@/api/new-id.ts'
+import { soundFiles, uploadFiles } from '@/api/upload-files.ts'
+import type { HeldFiles } from './useHeldFiles.ts'
 import { useProblem } from './useProblem.ts'
 
 export interface Correction {
@@ -30,12 +32,19 @@ interface Recording {
   readonly common: Partial<CommonFields>
 }
 
+interface Sent {
+  /** Those that the test is read from; its inputs name them. */
+  readonly files?: HeldFiles | undefined
+  /** Those beside the readings. */
+  readonly attached?: HeldFiles | undefined
+}
+
 /**
  * Recording of one test by hand. The id is made once a form, so that pressing twice or sending again records once;
  * what was typed stays through every error.
  */
 export function useTestRecord({ subject, procedure, corrects, common: start }: Recording) {
-  const { error, field, run } = useProblem()
+  const { error, field, run, clear } = useProblem()
   const saving = ref(false)
   const testId = uuidv7()
   const common = reactive<CommonFields>({
@@ -47,7 +56,8 @@ export function useTestRecord({ subject, procedure, corrects, common: start }: R
     ...start,
   })
 
-  async function record(inputs: unknown): Promise<StoredTest | undefined> {
+  /** Files are sent before the test, each once however often it is tried. */
+  async function record(inputs: unknown, { files, attached }: Sent = {}): Promise<StoredTest | undefined> {
     if (saving.value) return undefined
     saving.value = true
     const { performedAt, instrumentId, ...words } = common
@@ -58,15 +68,19 @@ export function useTestRecord({ subject, procedure, corrects, common: start }: R
       performedAt: new Date(performedAt).toISOString(),
       ...(instrumentId && { instrumentId }),
       ...(corrects && { supersedes: corrects }),
+      ...(attached && { attachmentIds: soundFiles(attached).map(({ id }) => id) }),
       inputs,
       // The service checks the readings by the same contract and names the field at fault.
     } as RecordTestInput
-    const stored = await run(() => callApi(recordTest, { params: { testId }, body }))
+    const stored = await run(async () => {
+      await uploadFiles([files, attached])
+      return callApi(recordTest, { params: { testId }, body })
+    })
     saving.value = false
     return stored
   }
 
-  return { common, error, field, saving, record }
+  return { common, error, field, clear, saving, record }
 }
 
 /** The method and instrument that this member used last, or the first that fit. */
@@ -77,7 +91,7 @@ export function commonFrom(form: TestForm): Partial<CommonFields> {
   }
 }
 
-function localInput(at: Date): string {
+export function localInput(at: Date): string {
   const local = new Date(at.getTime() - at.getTimezoneOffset() * 60_000)
   return local.toISOString().slice(0, 16)
 }
