@@ -32,6 +32,9 @@ const LITHIUM =
 const LEAD = 'Lead-acid gives off hydrogen and acid: ventilate, protect eyes, no sparks, cover the terminals.'
 const SHORT = 'Take rings off and fuse close to the battery: a short circuit burns.'
 
+const NO_TRANSMITTER =
+  'Nothing may transmit into an analyzer: radio off, and no transmitter close by while it is connected.'
+
 const card = (name: string, steps: readonly string[], cautions: readonly string[]): MethodCard => ({
   name,
   steps,
@@ -65,12 +68,24 @@ export const METHOD_CARDS: Readonly<Record<Procedure, readonly MethodCard[]>> = 
       ],
       [BURNS, CONTROL, HOT],
     ),
+    card(
+      'Two units back to back, analyzer',
+      [
+        'Join two like units at their high-impedance sides, with short leads.',
+        'Calibrate the analyzer at both ends of its leads, then sweep from port 1 to port 2 and save a .s2p file.',
+      ],
+      [NO_TRANSMITTER],
+    ),
   ],
   'open-short-load': [
     card(
       'Open, short and load at the secondary',
-      ['Calibrate the analyzer.', 'Sweep with the secondary open, shorted and loaded.'],
-      [],
+      [
+        'Calibrate the analyzer at the end of its lead, over all the bands.',
+        'Sweep with the load resistor at the secondary and save a .s1p file.',
+        'Lift only the resistor and sweep the open; then short it and sweep. Same leads, same fixture, same points.',
+      ],
+      [NO_TRANSMITTER],
     ),
   ],
   'antenna-sweep': [
@@ -89,6 +104,11 @@ export const METHOD_CARDS: Readonly<Record<Procedure, readonly MethodCard[]>> = 
       'Far end open or shorted, half the return loss',
       ['Open or short the far end.', 'Read the return loss on each band and take half of it.'],
       [],
+    ),
+    card(
+      'Both ends on the analyzer',
+      ['Calibrate the analyzer at both ends of its leads.', 'Sweep through the line and save a .s2p file.'],
+      [NO_TRANSMITTER],
     ),
     card(
       'Two power readings into a dummy load',

@@ -8,6 +8,7 @@ import type { Procedure } from '#shared/engine/vocabulary.ts'
 export const itemForms: Partial<Record<Procedure, Component>> = {
   'heat-test': defineAsyncComponent(() => import('@/components/heat-test/HeatTestRun.vue')),
   'pair-loss': defineAsyncComponent(() => import('./PairLossForm.vue')),
+  'open-short-load': defineAsyncComponent(() => import('./OpenShortLoadForm.vue')),
   'antenna-sweep': defineAsyncComponent(() => import('./AntennaSweepForm.vue')),
   'feedline-loss': defineAsyncComponent(() => import('./FeedlineLossForm.vue')),
   'battery-capacity': defineAsyncComponent(() => import('./BatteryCapacityForm.vue')),

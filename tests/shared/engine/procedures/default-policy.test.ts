@@ -32,6 +32,10 @@ describe('the policy that a group begins with', () => {
   })
 })
 
+/** The analyzer's own signal is all that is sent. */
+const isByAnalyzer = ({ steps }: { steps: readonly string[] }) =>
+  /calibrate the analyzer/i.test(steps.join(' '))
+
 describe('method cards', () => {
   it('are there for every procedure', () => {
     for (const procedure of PROCEDURES) expect(METHOD_CARDS[procedure].length).toBeGreaterThan(0)
@@ -39,10 +43,17 @@ describe('method cards', () => {
 
   it('warn before every transmission', () => {
     for (const procedure of ['heat-test', 'pair-loss', 'radio-check'] as const) {
-      for (const card of METHOD_CARDS[procedure]) {
+      for (const card of METHOD_CARDS[procedure].filter((one) => !isByAnalyzer(one))) {
         expect(card.cautions.join(' ')).toContain('licensed control operator')
       }
     }
+  })
+
+  it('keep every transmitter away from an analyzer', () => {
+    const cards = [...METHOD_CARDS['pair-loss'], ...METHOD_CARDS['open-short-load']].filter(isByAnalyzer)
+    expect(cards).toHaveLength(2)
+    for (const card of cards)
+      expect(card.cautions.join(' ')).toContain('Nothing may transmit into an analyzer')
   })
 
   it('read a heat test at the minutes that fall inside it, and at its end', () => {
