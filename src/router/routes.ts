@@ -35,12 +35,11 @@ export const routes: RouteRecordRaw[] = [
     meta: { title: 'Record a test', roles: CREW, light: true },
   },
   {
-    // Of the procedures only the count tests a whole kit.
-    path: '/kits/:kitId/tests/new/:procedure(count)',
+    path: '/kits/:kitId/tests/new/:procedure(count|on-air-check)',
     name: 'record-kit-test',
     component: () => import('@/views/RecordKitTestView.vue'),
     props: true,
-    meta: { title: 'Count a kit', roles: CREW, light: true },
+    meta: { title: 'Test a kit', roles: CREW, light: true },
   },
   {
     path: '/due',
