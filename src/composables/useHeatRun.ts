@@ -9,6 +9,7 @@ import {
   type HeatRun,
   type HeatSetUp,
 } from '@/components/heat-test/heat-run.ts'
+import { withLog, withoutLog, type PlacedLog } from '@/components/heat-test/log-of-run.ts'
 
 const keyOf = (itemId: string) => `halyard.heat-test.${itemId}`
 
@@ -32,6 +33,8 @@ export function useHeatRun(form: TestForm) {
     read: (temperatureC: number) => void (run.value = withReading(run.value, temperatureC, Date.now())),
     remove: (place: number) => void (run.value = withoutReading(run.value, place)),
     keyUp: (stoppedAtLimit: boolean) => change({ step: 'cooling', keyUpAt: Date.now(), stoppedAtLimit }),
+    takeLog: (log: PlacedLog) => void (run.value = withLog(run.value, log)),
+    dropLog: () => void (run.value = withoutLog(run.value)),
     review: () => change({ step: 'review' }),
     /** Begins again with the same set-up and a new id. */
     restart: () => void (run.value = { ...newRun(form), setUp: run.value.setUp }),

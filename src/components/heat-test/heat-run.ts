@@ -35,6 +35,8 @@ export interface HeatRun {
   readonly keyDownAt: number | null
   readonly keyUpAt: number | null
   readonly readings: readonly HeatReadingEntry[]
+  /** Readings by hand in whose place a thermometer's log stands now. */
+  readonly setAside?: readonly HeatReadingEntry[]
   readonly stoppedAtLimit: boolean
   readonly swr: {
     readonly start: number | null
