@@ -93,7 +93,7 @@ function checkRoles(files: TerminationFiles): Outcome<TerminationFiles> {
 }
 
 /** The load should be what the turns make of 50 ohm; further off than this it is another load. Our choice. */
-const LOAD_WITHIN = 0.25
+const LOAD_WITHIN = 0.2
 
 function loadWarnings(loadOhm: number, { turnsPrimary, turnsSecondary }: WindingFacts): Warning[] {
   if (!turnsPrimary || !turnsSecondary) return []
