@@ -1,0 +1,71 @@
+import { z } from 'zod'
+import { EMISSION_DUTIES, type EmissionId } from '#shared/engine/emission-duty.ts'
+import { defineEndpoint } from './endpoint.ts'
+import { id } from './fields.ts'
+import { CREW } from './roles.ts'
+import { answeredAt, band } from './words.ts'
+
+const EMISSIONS = Object.keys(EMISSION_DUTIES) as [EmissionId, ...EmissionId[]]
+const minutes = z.coerce.number().min(0).max(1440)
+
+/** How the station is used, with what a group would try first. */
+export const exposureUse = z.strictObject({
+  emission: z.enum(EMISSIONS).default('ssb-conversational'),
+  onMinutes: minutes.default(5),
+  offMinutes: minutes.default(5),
+  /** Of the antenna, dBi; 2.15 is a dipole. */
+  gainDbi: z.coerce.number().min(-20).max(30).default(2.15),
+})
+
+const tier = z.object({ averageW: z.number(), distanceM: z.number(), covered: z.boolean() })
+const warning = z.object({ code: z.string(), message: z.string() })
+
+/** A record of the configuration and what follows from it; shown with its caution. */
+export const kitExposureRecord = z.object({
+  kitId: z.string(),
+  designation: z.string(),
+  asOf: answeredAt,
+  use: z.object({
+    emission: z.string(),
+    onMinutes: z.number(),
+    offMinutes: z.number(),
+    gainDbi: z.number(),
+  }),
+  /** The antenna of the kit that the figures are about, with what its page says; null without one. */
+  antenna: z
+    .object({
+      id: z.string(),
+      designation: z.string(),
+      lengthM: z.number().nullable(),
+      feedOhm: z.number().nullable(),
+    })
+    .nullable(),
+  bands: z.array(
+    z.object({
+      band,
+      frequencyMHz: z.number(),
+      pepAtAntennaW: z.number(),
+      controlled: tier,
+      general: tier,
+      feedPoint: z.object({ rmsV: z.number(), peakV: z.number() }).nullable(),
+      warnings: z.array(warning),
+    }),
+  ),
+  /** Bands whose power at the antenna nobody knows. */
+  unknownBands: z.array(band),
+  caution: z.string(),
+  source: z.string(),
+})
+
+export const readKitExposure = defineEndpoint({
+  name: 'read-kit-exposure',
+  method: 'get',
+  path: '/api/v1/kits/:kitId/exposure',
+  summary: 'Distances to keep from the antenna of a kit as it stands, and the voltage at its feed point',
+  access: { scope: 'group', roles: CREW },
+  params: z.strictObject({ kitId: id }),
+  query: exposureUse,
+  response: kitExposureRecord,
+})
+
+export type KitExposureRecord = z.output<typeof kitExposureRecord>
