@@ -44,3 +44,15 @@ test('keeps a filter in the address and shows what is left', async ({ page }) =>
   await expect(page.getByRole('row', { name: /^K-18/ })).toBeVisible()
   await expect(page.getByRole('row', { name: /^K-01/ })).toHaveCount(0)
 })
+
+test('opens the distances to keep from a station’s antenna, with the caution first', async ({ page }) => {
+  await openAs(page, 'oona')
+  await page.getByRole('row', { name: /^K-01/ }).getByRole('link').first().click()
+  await page.getByText('RF exposure and feed-point voltage').click()
+  await expect(page.getByRole('region', { name: 'Before anybody transmits' })).toBeVisible()
+  const row = page.getByRole('row', { name: /^40 m/ })
+  const quiet = await row.textContent()
+  await page.getByLabel('Emission').selectOption('carrier')
+  await expect(row).not.toHaveText(quiet ?? '')
+  await expect(row).toContainText(/\d+(\.\d)? m.*\d+(\.\d)? m.* V/)
+})
