@@ -21,6 +21,6 @@ export function testRoutes(endpoints: EndpointRouter, ctx: AppContext): void {
     inGroup(ctx, by, (tx) => readItemResults(tx, { itemId: params.itemId, procedures: query.procedure })),
   )
   endpoints.add(formContract, ({ params, query, by }) =>
-    inGroup(ctx, by, (tx) => readTestForm(tx, { itemId: params.itemId, procedure: query.procedure })),
+    inGroup(ctx, by, (tx) => readTestForm(tx, { ...params, ...query })),
   )
 }

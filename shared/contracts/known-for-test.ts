@@ -2,7 +2,7 @@ import { z } from 'zod'
 import { BAND_REGIONS } from '#shared/engine/band-edges.ts'
 import type { Accuracy } from '#shared/engine/procedures/accuracy.ts'
 import type { KnownForTest } from '#shared/engine/procedures/performance.ts'
-import { CHEMISTRIES } from '#shared/engine/vocabulary.ts'
+import { CHEMISTRIES, type Band } from '#shared/engine/vocabulary.ts'
 import { band } from './words.ts'
 
 /** What the engine knows for a test besides its inputs, as a form gets it and as it is kept with the test. */
@@ -57,20 +57,29 @@ export const knownShape = z.object({
 
 type Known = z.output<typeof knownShape>
 
+interface Ruled {
+  readonly limits: Readonly<Record<string, unknown>>
+}
+
 interface Form {
   readonly known: Known
-  readonly judgedBy: { readonly rule: { readonly limits: Readonly<Record<string, unknown>> } | null }
+  readonly judgedBy: { readonly rule: Ruled | null }
+  readonly bandRules: Readonly<Partial<Record<Band, Ruled>>>
   readonly instruments: readonly { readonly id: string; readonly accuracy: Accuracy }[]
 }
 
-/** What a form must hand to `judgePerformance` so that a preview is what the server will say. */
+/**
+ * What a form must hand to `judgePerformance` so that a preview is what the server will say. `band`: of a heat test,
+ * which is about one.
+ */
 export function knownFromForm(
-  { known, judgedBy, instruments }: Form,
+  { known, judgedBy, bandRules, instruments }: Form,
   instrumentId: string | null,
+  band: Band | null = null,
 ): KnownForTest {
   return {
     ...known,
-    rule: judgedBy.rule ?? undefined,
+    rule: (band && bandRules[band]) ?? judgedBy.rule ?? undefined,
     instrument: instruments.find(({ id }) => id === instrumentId)?.accuracy ?? null,
     plan: { positions: [], sealNumber: null },
   }

@@ -16,6 +16,18 @@ export const methodCard = z.object({
   source: z.string(),
 })
 
+/** How a heat test is run, from its rule. */
+const heatPlan = z.object({
+  powerW: z.number(),
+  minutes: z.number(),
+  stopC: z.number(),
+  maxSwrChange: z.number().nullable(),
+  /** Reading times while keyed, minutes since key-down. */
+  readingMinutes: z.array(z.number()),
+  /** Reading times after key-up, minutes. */
+  coolingMinutes: z.array(z.number()),
+})
+
 /** Everything that a phone needs to run and judge one test of one item, also without a network. */
 export const testForm = z.object({
   item: itemNamed.extend({
@@ -38,18 +50,9 @@ export const testForm = z.object({
   /** For `knownFromForm`: with it the engine says on the phone what the server will say. */
   known: knownShape,
   /** Heat test only, else null. */
-  heat: z
-    .object({
-      powerW: z.number(),
-      minutes: z.number(),
-      stopC: z.number(),
-      maxSwrChange: z.number().nullable(),
-      /** Reading times while keyed, minutes since key-down. */
-      readingMinutes: z.array(z.number()),
-      /** Reading times after key-up, minutes. */
-      coolingMinutes: z.array(z.number()),
-    })
-    .nullable(),
+  heat: heatPlan.nullable(),
+  /** Heat tests: the bands that the policy has a rule of their own for; the others go by `judgedBy` and `heat`. */
+  bandRules: z.partialRecord(band, z.object({ limits: z.record(z.string(), z.unknown()), heat: heatPlan })),
   /** Newest tests of this item by this procedure. */
   recent: z.array(testSummary),
 })
@@ -61,7 +64,11 @@ export const readTestForm = defineEndpoint({
   summary: 'What a phone needs to run one test of one item',
   access: { scope: 'group', roles: CREW },
   params: z.strictObject({ itemId: id }),
-  query: z.strictObject({ procedure }),
+  query: z.strictObject({
+    procedure,
+    /** The test that the new one corrects: it counts for nothing any more. */
+    corrects: id.optional(),
+  }),
   response: testForm,
 })
 

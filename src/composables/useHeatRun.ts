@@ -1,5 +1,6 @@
 import { computed, shallowRef, watch } from 'vue'
 import type { TestForm } from '#shared/contracts/test-form.ts'
+import type { Band } from '#shared/engine/vocabulary.ts'
 import { uuidv7 } from '@/api/new-id.ts'
 import {
   hottestC,
@@ -17,7 +18,7 @@ const keyOf = (itemId: string) => `halyard.heat-test.${itemId}`
 export function useHeatRun(form: TestForm) {
   const itemId = form.item.id
   const run = shallowRef<HeatRun>(readKept(itemId) ?? newRun(form))
-  const plan = computed<HeatPlan>(() => planOf(form))
+  const plan = computed<HeatPlan>(() => planOf(form, run.value.setUp.band))
   watch(run, (value) => keep(itemId, value), { immediate: true })
 
   const change = (changes: Partial<HeatRun>) => void (run.value = { ...run.value, ...changes })
@@ -26,7 +27,8 @@ export function useHeatRun(form: TestForm) {
     run,
     plan,
     hottest: computed(() => hottestC(run.value)),
-    setUp: (changes: Partial<HeatSetUp>) => change({ setUp: { ...run.value.setUp, ...changes } }),
+    setUp: (changes: Partial<HeatSetUp>) =>
+      change({ setUp: { ...run.value.setUp, ...powerOfBand(form, changes), ...changes } }),
     change,
     keyDown: () =>
       change({ step: 'keyed', keyDownAt: Date.now(), keyUpAt: null, readings: [], stoppedAtLimit: false }),
@@ -67,8 +69,15 @@ function newRun(form: TestForm): HeatRun {
   }
 }
 
+/** Another band with a rule of its own is tested at the power of that rule. */
+function powerOfBand({ bandRules }: TestForm, { band }: Partial<HeatSetUp>): Partial<HeatSetUp> {
+  const powerW = band ? bandRules[band]?.heat.powerW : undefined
+  return powerW === undefined ? {} : { powerW }
+}
+
 /** Without a rule in force the card's customary method stands (common practice, no source). */
-function planOf({ heat }: TestForm): HeatPlan {
+function planOf(form: TestForm, band: Band | null): HeatPlan {
+  const heat = (band && form.bandRules[band]?.heat) ?? form.heat
   return {
     stopC: heat?.stopC ?? 85,
     minutes: heat?.minutes ?? 10,

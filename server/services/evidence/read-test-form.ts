@@ -7,7 +7,7 @@ import {
   METHOD_CARDS,
 } from '#shared/engine/procedures/method-cards.ts'
 import { canBeTested } from '#shared/engine/procedures/subjects.ts'
-import { policyAt, ruleFor } from '#shared/engine/readiness/rules-in-force.ts'
+import { policyAt } from '#shared/engine/readiness/rules-in-force.ts'
 import type { Rule } from '#shared/engine/readiness/types.ts'
 import { BANDS, type Band, type Procedure } from '#shared/engine/vocabulary.ts'
 import { AppError } from '../../errors.ts'
@@ -15,6 +15,7 @@ import type { GroupTx, Statement } from '../../group-transaction.ts'
 import { policiesOrFirst } from '../first-policy.ts'
 import { knownForTest } from './known-for-test.ts'
 import { fittingInstruments, lastUsed } from './form-instruments.ts'
+import { ruleOfTest } from './rule-of-test.ts'
 import { testHistory } from './test-history.ts'
 import { summariesOf } from './test-summaries.ts'
 import { readItemSubject, type TestSubject } from './test-subject.ts'
@@ -41,11 +42,14 @@ const RULE_WORDS: Statement = { name: 'rule-words', text: 'SELECT reason, source
 interface Asked {
   readonly itemId: string
   readonly procedure: Procedure
+  /** The test that the new one corrects: it counts for nothing any more. */
+  readonly corrects?: string | undefined
 }
 
 /** What a phone needs to run and judge one test, also after its signal is gone. */
-export async function readTestForm(tx: GroupTx, { itemId, procedure }: Asked): Promise<TestForm> {
-  const asked = { procedure, subjectId: itemId, performedAt: tx.now, corrects: null }
+export async function readTestForm(tx: GroupTx, wanted: Asked): Promise<TestForm> {
+  const { itemId, procedure, corrects = null } = wanted
+  const asked = { procedure, subjectId: itemId, performedAt: tx.now, corrects }
   const [subject, [face], recent, history, policies, today] = await Promise.all([
     readItemSubject(tx, itemId),
     tx.sql<FaceRow>(FACE, [itemId]),
@@ -59,7 +63,8 @@ export async function readTestForm(tx: GroupTx, { itemId, procedure }: Asked): P
     throw new AppError('request-invalid', `This procedure is not done to a ${category}.`)
   const policy = policyAt({ policies }, tx.now.getTime())
   if (!policy) throw new Error('A group without a policy')
-  const rule = ruleFor(policy, subject, procedure, today)
+  const ruleOn = (band: Band | null) => ruleOfTest(policy, { subject, procedure, on: today, band })
+  const rule = ruleOn(null)
   const [instruments, last, tests, words] = await Promise.all([
     fittingInstruments(tx, procedure, policy),
     lastUsed(tx, procedure),
@@ -97,6 +102,7 @@ export async function readTestForm(tx: GroupTx, { itemId, procedure }: Asked): P
     instruments,
     known: knownShape.parse(knownForTest({ subject, history, policy, rule, accuracy: null })),
     heat: procedure === 'heat-test' ? heatOf(rule) : null,
+    bandRules: procedure === 'heat-test' ? bandRules(rule, ruleOn) : {},
     recent: tests,
   }
 }
@@ -117,7 +123,16 @@ function bandsOf(subject: TestSubject, rule: Rule | undefined, promised: Band[] 
   return BANDS.filter((band) => known.includes(band))
 }
 
-function heatOf(rule: Rule | undefined): TestForm['heat'] {
+function bandRules(rule: Rule | undefined, ruleOn: (band: Band) => Rule | undefined): TestForm['bandRules'] {
+  const own = BANDS.flatMap((band) => {
+    const found = ruleOn(band)
+    if (!found || found.id === rule?.id) return []
+    return [[band, { limits: { ...found.limits }, heat: heatOf(found) }] as const]
+  })
+  return Object.fromEntries(own)
+}
+
+function heatOf(rule: Rule | undefined): NonNullable<TestForm['heat']> {
   const { powerW, minutes, maxC, maxSwrChange } = limitsOf('heat-test', rule)
   return {
     powerW,

@@ -1,14 +1,11 @@
 import type { RecordTestBody } from '#shared/contracts/record-test.ts'
 import type { StoredTest } from '#shared/contracts/test-shapes.ts'
 import { isFailure, type Failure } from '#shared/engine/outcome.ts'
-import type { PlainDate } from '#shared/engine/plain-date.ts'
 import { filesWanted, judgePerformance } from '#shared/engine/procedures/judge-performance.ts'
 import type { Judgement } from '#shared/engine/procedures/judgement.ts'
 import type { KnownForTest } from '#shared/engine/procedures/performance.ts'
 import { filesNamed, type FileSources } from '#shared/engine/procedures/test-files.ts'
-import { policyAt, ruleFor } from '#shared/engine/readiness/rules-in-force.ts'
-import type { Policy, Rule } from '#shared/engine/readiness/types.ts'
-import type { Band } from '#shared/engine/vocabulary.ts'
+import { policyAt } from '#shared/engine/readiness/rules-in-force.ts'
 import type { Caller } from '../../caller.ts'
 import type { AppContext } from '../../context.ts'
 import { AppError } from '../../errors.ts'
@@ -22,6 +19,7 @@ import { contentHash, insertTest, type TestToInsert } from './insert-test.ts'
 import { accuracyOf, knownForTest } from './known-for-test.ts'
 import { keptKnown } from './kept-known.ts'
 import { fileSources, linkFiles, namedFiles } from './named-files.ts'
+import { ruleOfTest } from './rule-of-test.ts'
 import { readStoredTest, storedHash } from './stored-test.ts'
 import { testHistory } from './test-history.ts'
 import { applyConsequences, hasConsequences } from './test-consequences.ts'
@@ -124,7 +122,12 @@ async function judge(
   const performedOn = localDay(performedAt, zone)
   const policy = policyAt({ policies }, performedAt.getTime())
   if (!policy) throw new Error('A group without a policy')
-  const rule = ruleOf(policy, { subject, body, performedOn })
+  const rule = ruleOfTest(policy, {
+    subject,
+    procedure: body.procedure,
+    on: performedOn,
+    band: body.procedure === 'heat-test' ? body.inputs.band : null,
+  })
   const accuracy = accuracyOf(instrument)
   const known = knownForTest({ subject, history, policy, rule, accuracy })
   const judgement = judgementOf(body, { ...files.sources, ...(await baselineFile(tx, body, known)) }, known)
@@ -154,16 +157,6 @@ function historyOf(body: RecordTestBody, performedAt: Date): Parameters<typeof t
     performedAt,
     corrects: body.supersedes?.testId ?? null,
   }
-}
-
-/** A heat test is about one band; a band that no rule names is tested the way that the others are. */
-function ruleOf(
-  policy: Policy,
-  test: { subject: TestSubject; body: RecordTestBody; performedOn: PlainDate },
-): Rule | undefined {
-  const { subject, body, performedOn } = test
-  const on = (band: Band | null) => ruleFor(policy, subject, body.procedure, performedOn, band)
-  return (body.procedure === 'heat-test' ? on(body.inputs.band) : undefined) ?? on(null)
 }
 
 /** Only a sweep by file is compared with another one point by point. */

@@ -167,6 +167,7 @@ describe('the form of a test', () => {
       },
       bands: ['40 m', '20 m'],
       judgedBy: { policyNumber: 1, rule: { intervalMonths: 12, source: 'common practice, no source' } },
+      bandRules: {},
       lastMethod: null,
       lastInstrument: null,
       recent: [],
