@@ -41,6 +41,7 @@ const WHOLE: Readonly<Record<string, FieldName>> = {
   minutes: { label: 'Minutes', unit: 'min', factor: 1 },
   atS: { label: 'At', unit: 's', factor: 1 },
   swr: { label: 'SWR', unit: '', factor: 1 },
+  watts: { label: 'Power', unit: 'W', factor: 1 },
 }
 
 const SPELLINGS: readonly (readonly [RegExp, string])[] = [
