@@ -14,7 +14,7 @@ const standing = z.object({
 export const previewPolicy = defineEndpoint({
   name: 'preview-policy',
   method: 'post',
-  path: '/api/v1/policies/preview',
+  path: '/api/v1/policy/preview',
   summary: 'What a new version of the policy would change, before it takes effect',
   access: { scope: 'group', roles: POLICY_MAKERS },
   body: createPolicy.body.pick({ effectiveOn: true, settings: true, rules: true }),

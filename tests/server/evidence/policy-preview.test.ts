@@ -23,7 +23,7 @@ const rules = (change: (rule: PolicyAnswer['rules'][number]) => object = () => (
 const shorterCounts = () => rules(({ procedure }) => (procedure === 'count' ? { intervalMonths: 1 } : {}))
 
 async function preview(body: object): Promise<ResponseOf<typeof previewPolicy>> {
-  const answer = await ines.post('/api/v1/policies/preview', body).expect(200)
+  const answer = await ines.post('/api/v1/policy/preview', body).expect(200)
   return previewPolicy.response.parse(answer.body)
 }
 
@@ -56,10 +56,10 @@ describe('the preview of a policy', () => {
   it('refuses a day that has passed, and rules that are none', async () => {
     const settings = current.settings
     await ines
-      .post('/api/v1/policies/preview', { effectiveOn: '2026-01-01', settings, rules: rules() })
+      .post('/api/v1/policy/preview', { effectiveOn: '2026-01-01', settings, rules: rules() })
       .expect(422)
     await ines
-      .post('/api/v1/policies/preview', { effectiveOn: '2026-12-01', settings, rules: [] })
+      .post('/api/v1/policy/preview', { effectiveOn: '2026-12-01', settings, rules: [] })
       .expect(422)
   })
 })
