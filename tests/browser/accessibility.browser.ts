@@ -1,12 +1,7 @@
 /** No page has a barrier that axe finds, in either theme (promise P41). */
-import { readFileSync } from 'node:fs'
-import { createRequire } from 'node:module'
-import type { Page } from '@playwright/test'
-import type { AxeResults } from 'axe-core'
+import { violationsByTheme as violations } from './support/axe.ts'
 import { openAs } from './support/sign-in.ts'
 import { expect, test } from './support/test.ts'
-
-const axe = readFileSync(createRequire(import.meta.url).resolve('axe-core/axe.min.js'), 'utf8')
 
 const PAGES = [
   '/',
@@ -28,27 +23,6 @@ const PAGES = [
   '/profile',
   '/more',
 ]
-
-/** What axe finds in both themes; the page is looked at as it stands, so that it is loaded once. */
-async function violations(page: Page): Promise<string[]> {
-  // Scripts are strict, so axe is injected by the debugger, which the page's own policy does not bind.
-  await page.evaluate(axe)
-  const found: string[] = []
-  for (const theme of ['day', 'night']) {
-    const results = await page.evaluate(async (name) => {
-      document.documentElement.dataset.theme = name
-      // Colours that fade over are looked at when they are there.
-      await new Promise(requestAnimationFrame)
-      await Promise.allSettled(document.getAnimations().map(({ finished }) => finished))
-      return (window as unknown as { axe: { run(options: object): Promise<AxeResults> } }).axe.run({
-        runOnly: ['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa', 'best-practice'],
-      })
-    }, theme)
-    for (const { id, nodes } of results.violations)
-      found.push(`${theme}, ${id}: ${nodes.map(({ target }) => target.join(' ')).join(' | ')}`)
-  }
-  return found
-}
 
 test.beforeEach(async ({ page }, { project }) => {
   await page.setViewportSize({ width: project.name === 'phone' ? 320 : 1280, height: 800 })

@@ -1,5 +1,5 @@
-import { addMonths } from '../plain-date.ts'
 import type { Band, Procedure } from '../vocabulary.ts'
+import { calibrationStanding } from './calibration-state.ts'
 import type { Moment } from './moment.ts'
 import { policyAt, ruleFor } from './rules-in-force.ts'
 import type { Evidence, RaisedCheck } from './types.ts'
@@ -27,18 +27,16 @@ function calibrationDoubt(moment: Moment, test: Evidence): Doubt | undefined {
   if (test.instrumentId === null) return undefined
   const instrument = moment.state.instruments.find(({ id }) => id === test.instrumentId)
   if (!instrument) return undefined
-  const known = moment.tests(instrument.id, 'calibration').filter((one) => one.recordedAt <= moment.at)
-  const after = known.findLast((one) => one.performedAt > test.performedAt)
-  if (after?.finding === 'fail') return { kind: 'calibration-failed', instrument: instrument.designation }
-  if (after) return undefined
-  const before = known.find((one) => one.performedAt <= test.performedAt)
-  if (!before) return undefined
-  if (before.finding === 'fail') return { kind: 'calibration-failed', instrument: instrument.designation }
   const policy = policyAt(moment.state, test.performedAt)
   const subject = { category: instrument.category, facts: {} }
-  const months = ruleFor(policy, subject, 'calibration', test.performedOn)?.intervalMonths
-  if (!months || addMonths(before.performedOn, months) >= test.performedOn) return undefined
-  return { kind: 'calibration-lapsed', instrument: instrument.designation }
+  const { state } = calibrationStanding({
+    calibrations: moment.tests(instrument.id, 'calibration').filter((one) => one.recordedAt <= moment.at),
+    performedAt: test.performedAt,
+    performedOn: test.performedOn,
+    months: ruleFor(policy, subject, 'calibration', test.performedOn)?.intervalMonths ?? null,
+  })
+  if (state !== 'failed' && state !== 'lapsed') return undefined
+  return { kind: `calibration-${state}`, instrument: instrument.designation }
 }
 
 function recallDoubt(moment: Moment, test: Evidence, band: Band | null): Doubt | undefined {

@@ -1,0 +1,35 @@
+import { readFileSync } from 'node:fs'
+import { createRequire } from 'node:module'
+import type { Page } from '@playwright/test'
+import type { AxeResults } from 'axe-core'
+
+const axe = readFileSync(createRequire(import.meta.url).resolve('axe-core/axe.min.js'), 'utf8')
+
+/** Scripts are strict, so axe is injected by the debugger, which the page's own policy does not bind. */
+export async function violations(page: Page): Promise<string[]> {
+  await page.evaluate(axe)
+  const results = await page.evaluate(
+    () =>
+      (window as unknown as { axe: { run(options: object): Promise<AxeResults> } }).axe.run({
+        runOnly: ['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa', 'best-practice'],
+      }) as Promise<AxeResults>,
+  )
+  return results.violations.map(
+    ({ id, nodes }) => `${id}: ${nodes.map(({ target }) => target.join(' ')).join(' | ')}`,
+  )
+}
+
+/** The same in both themes; the page is looked at as it stands, so that it is loaded once. */
+export async function violationsByTheme(page: Page): Promise<string[]> {
+  const found: string[] = []
+  for (const theme of ['day', 'night']) {
+    await page.evaluate(async (name) => {
+      document.documentElement.dataset.theme = name
+      // Colours that fade over are looked at when they are there.
+      await new Promise(requestAnimationFrame)
+      await Promise.allSettled(document.getAnimations().map(({ finished }) => finished))
+    }, theme)
+    found.push(...(await violations(page)).map((violation) => `${theme}, ${violation}`))
+  }
+  return found
+}
