@@ -17,6 +17,7 @@ interface Place {
 
 export interface TrendPanel {
   readonly name: string
+  readonly nameY: number
   readonly unit: string
   readonly top: number
   readonly foot: number
@@ -51,14 +52,18 @@ export interface TrendLayout {
   readonly panels: readonly TrendPanel[]
 }
 
-const PANEL_HEIGHT = 128
+const PLOT_HEIGHT = 84
+/** Between a plot and the name of the next. */
+const GAP = 10
 const FOOT_HEIGHT = 40
-const HEAD = 34
+/** Over a plot: its name, and on a phone the words of its due day under that. */
+const headOf = (narrow: boolean) => (narrow ? 54 : 34)
+const panelHeight = (narrow: boolean) => headOf(narrow) + PLOT_HEIGHT + GAP
 const AXIS = 52
 const MARGIN = 12
 const WORDS = 120
 
-export const trendHeight = (panels: number) => panels * PANEL_HEIGHT + FOOT_HEIGHT
+export const trendHeight = (panels: number, narrow: boolean) => panels * panelHeight(narrow) + FOOT_HEIGHT
 
 interface Convert {
   /** Differences of temperature in the member's degrees; everything else as it is. */
@@ -78,13 +83,16 @@ export function trendLayout(
   return {
     left,
     right,
-    foot: series.length * PANEL_HEIGHT,
+    foot: series.length * panelHeight(narrow),
     xTicks: dayTicks(from, to, narrow ? 4 : 8).map(({ day, label }) => ({ at: x(day), label })),
     today: today <= to && today >= from ? x(today) : null,
-    panels: series.map((one, index) =>
-      panelOf(one, { top: index * PANEL_HEIGHT + HEAD, left, right, x, convert }),
-    ),
+    panels: series.map((one, index) => panelOf(one, { ...rowOf(index, narrow), left, right, x, convert })),
   }
+}
+
+function rowOf(index: number, narrow: boolean) {
+  const start = index * panelHeight(narrow)
+  return { top: start + headOf(narrow), nameY: start + 20 }
 }
 
 /** From the first test to the last due day, today included, with a little room. */
@@ -99,14 +107,15 @@ function spanOf(series: readonly TrendSeries[], today: PlainDate): [PlainDate, P
 
 interface Box {
   readonly top: number
+  readonly nameY: number
   readonly left: number
   readonly right: number
   readonly x: (day: PlainDate) => number
   readonly convert: Convert
 }
 
-function panelOf(series: TrendSeries, { top, left, right, x, convert }: Box): TrendPanel {
-  const foot = top + PANEL_HEIGHT - HEAD - 10
+function panelOf(series: TrendSeries, { top, nameY, left, right, x, convert }: Box): TrendPanel {
+  const foot = top + PLOT_HEIGHT
   const shown = (value: number) => convert.shown(value, series.unit)
   const axis = axisOf(series, shown)
   const scale = linearScale(axis, foot, top)
@@ -117,6 +126,7 @@ function panelOf(series: TrendSeries, { top, left, right, x, convert }: Box): Tr
   const text = (value: number) => numberText(shown(value), series.digits)
   return {
     name: series.band === null ? series.word : `${series.band}: ${series.word}`,
+    nameY,
     unit: convert.unitOf(series.unit),
     top,
     foot,

@@ -142,7 +142,7 @@ describe('the drawing of a history', () => {
       { width: 358, narrow: true, today: '2026-10-31' },
       { shown: (v) => v, unitOf: (u) => u },
     )
-    expect(at.foot).toBeLessThan(trendHeight(2))
+    expect(at.foot).toBeLessThan(trendHeight(2, true))
     for (const { marks, top, foot, limits, due } of at.panels) {
       for (const { x, y } of marks) {
         expect(x).toBeGreaterThan(at.left)
