@@ -39,22 +39,22 @@ async function expectWhole(page: Page, name: string): Promise<void> {
   expect(wider, `${name} is wider than the screen`).toBeLessThanOrEqual(0)
 }
 
+/** Numbers keep their unit by an unbreakable space, which a pattern must take for one. */
+const words = (text: string) => new RegExp(text.replaceAll(' ', '\\s'))
+
 const TESTS = [
-  ['XFM-07', 'heat-test', 'fail', /It reached 85 °C after 8\.\d min at 50 W on 10 m/],
-  ['XFM-07', 'pair-loss', 'fail', /10 m fails: 74 % comes through where at least 80 % is asked/],
-  ['FDL-20', 'feedline-loss', 'fail', /2 m fails: the line takes 3\.1 dB, 1\.7 dB more than its baseline/],
-  ['ANT-07', 'antenna-sweep', 'fail', /40 m fails: SWR 3 at 7\.2 MHz where at most 2\.5 is allowed/],
-  ['BAT-013', 'battery-capacity', 'fail', /79 % of its rating/],
+  ['XFM-07', 'heat-test', 'fail', 'It reached 85 °C after 8\\.\\d min at 50 W on 10 m'],
+  ['XFM-07', 'pair-loss', 'fail', '10 m fails: 74 % comes through where at least 80 % is asked'],
+  ['FDL-20', 'feedline-loss', 'fail', '2 m fails: the line takes 3\\.1 dB, 1\\.7 dB more than its baseline'],
+  ['ANT-07', 'antenna-sweep', 'fail', '40 m fails: SWR 3 at 7\\.2 MHz where at most 2\\.5 is allowed'],
+  ['BAT-013', 'battery-capacity', 'fail', '79 % of its rating'],
 ] as const
 
 const ITEMS = [
-  [
-    'FDL-20',
-    /the loss on 2 m grew from 1\.4 dB to 3\.1 dB while the SWR at the radio fell from 1\.52 to 1\.33/,
-  ],
-  ['ANT-15', /SWR on /],
-  ['BAT-013', /Capacity: 88 % on .*, 79 % on .*at least 80 % is asked: it fails/],
-  ['XFM-07', /Efficiency on 10 m: /],
+  ['FDL-20', '1\\.4 dB to 3\\.1 dB while the SWR at the radio fell from 1\\.52 to 1\\.33'],
+  ['ANT-15', 'SWR on '],
+  ['BAT-013', 'Capacity: 88 % on .*, 79 % on .*at least 80 % is asked: it fails'],
+  ['XFM-07', 'Efficiency on 10 m: '],
 ] as const
 
 for (const theme of ['day', 'night'] as const) {
@@ -64,13 +64,13 @@ for (const theme of ['day', 'night'] as const) {
     await openAs(page, 'tobin')
     for (const [designation, procedure, finding, answer] of TESTS) {
       await page.goto(await testPath(page, designation, procedure, finding))
-      await expect(page.locator('figure figcaption')).toContainText(answer)
+      await expect(page.locator('figure figcaption')).toContainText(words(answer))
       await expect(page.locator('figure svg[role="img"]')).toBeVisible()
       await expectWhole(page, `${procedure} of ${designation}`)
     }
     for (const [designation, answer] of ITEMS) {
       await page.goto(`/items/${await itemId(page, designation)}`)
-      await expect(page.locator('figure figcaption').first()).toContainText(answer)
+      await expect(page.locator('figure figcaption').first()).toContainText(words(answer))
       await expectWhole(page, designation)
     }
   })
