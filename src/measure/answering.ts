@@ -2,6 +2,7 @@ import { projectHeat } from '#shared/engine/heat-projection.ts'
 import { failure, isFailure, type Outcome } from '#shared/engine/outcome.ts'
 import { judgeTest } from '#shared/engine/procedures/judge-test.ts'
 import { recogniseTerminations } from '#shared/engine/recognise-terminations.ts'
+import { swrTrace } from '#shared/engine/swr-trace.ts'
 import { readTouchstone } from '#shared/engine/touchstone/read-touchstone.ts'
 import type { TouchstoneFile } from '#shared/engine/touchstone/touchstone-file.ts'
 import type { Answer, Ask, FileFacts, QuestionName } from './questions.ts'
@@ -31,6 +32,10 @@ export function makeAnswerer(): Answerer {
     recognise: ({ ids }) => {
       const files = ids.flatMap((id) => kept.get(id) ?? [])
       return recogniseTerminations(files)
+    },
+    'swr-trace': ({ id }) => {
+      const file = kept.get(id)?.file
+      return file ? swrTrace(file) : null
     },
     judge: ({ performance, known }) => {
       const files = Object.fromEntries([...kept].map(([id, { file }]) => [id, file]))

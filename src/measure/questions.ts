@@ -5,6 +5,7 @@ import type { Outcome } from '#shared/engine/outcome.ts'
 import type { Judgement } from '#shared/engine/procedures/judgement.ts'
 import type { KnownForTest, Performance } from '#shared/engine/procedures/judge-test.ts'
 import type { RecognisedTerminations } from '#shared/engine/recognise-terminations.ts'
+import type { SwrTrace } from '#shared/engine/swr-trace.ts'
 import type { FileNote } from '#shared/engine/touchstone/touchstone-file.ts'
 import type { LogAnswers, LogFailure, ThermometerLog } from './thermometer-log.ts'
 
@@ -27,6 +28,8 @@ export interface Questions {
   'forget-file': { ask: { readonly id: string }; answer: null }
   /** Which of three kept files is the open, the short and the load. */
   recognise: { ask: { readonly ids: readonly string[] }; answer: Outcome<RecognisedTerminations> }
+  /** SWR of a kept one-port file at every point; null when the file is not kept. */
+  'swr-trace': { ask: { readonly id: string }; answer: Outcome<SwrTrace> | null }
   judge: {
     ask: { readonly performance: Performance; readonly known: KnownForTest }
     answer: Outcome<Judgement>

@@ -45,7 +45,7 @@ export function sweepPicture(test: StoredTest, history: readonly ItemResult[]): 
     return [
       {
         band,
-        edges: widestEdges(band),
+        edges: bandEdgesMHz(band),
         worst: { ...worst, frequencyMHz },
         points: here,
         resonanceMHz,
@@ -86,8 +86,8 @@ function baselineOf(baseline: ItemResult | undefined, band: Band): SweepPanel['b
   }
 }
 
-/** National rules and licence classes narrow them further. */
-function widestEdges(band: Band): SweepPanel['edges'] {
+/** A band at its widest anywhere; national rules and licence classes narrow it. */
+export function bandEdgesMHz(band: Band): SweepPanel['edges'] {
   const regions = Object.values(BAND_TABLE.regions).flatMap((region) => region[band] ?? [])
   if (regions.length === 0) return null
   return {
