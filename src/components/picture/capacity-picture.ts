@@ -106,7 +106,7 @@ export function capacityTable(picture: CapacityPicture, text: UnitText): ChartTa
   const least =
     limit === null ? [] : [['Limit', ah((ratedAh * limit) / 100), quantityText(limit, '%', 0), '']]
   return {
-    columns: ['', 'Capacity', 'Of the rating', 'Finding'],
+    columns: ['What', 'Capacity', 'Of the rating', 'Finding'],
     rows: [rated, read, judged, ...least].map((cells) => ({ cells })),
   }
 }

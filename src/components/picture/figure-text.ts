@@ -16,7 +16,7 @@ export function withUncertainty(
   const ending = unit === '' ? '' : `\u00a0${unit}`
   if (uncertainty === null) return `${numberText(value, most)}${ending}`
   const digits = digitsBeside(uncertainty, most)
-  return `${numberText(value, digits, true)} ± ${numberText(uncertainty, digits, true)}${ending}`
+  return `${numberText(value, digits, true)}\u00a0±\u00a0${numberText(uncertainty, digits, true)}${ending}`
 }
 
 /** `40 m`, `40 m and 20 m`, `40 m, 20 m and 10 m`. */

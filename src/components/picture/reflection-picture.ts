@@ -88,7 +88,7 @@ export function reflectionLayout(
   traces: readonly RoleTrace[],
   place: Place,
 ): ReflectionLayout {
-  const [left, right] = [44, place.width - 62]
+  const [left, right] = [44, place.width - (place.narrow ? 76 : 62)]
   const [top, foot] = [40, place.height - 48]
   const y = swrScale(Infinity, foot, top)
   const span = extentOf(traces.flatMap(({ frequencyHz }) => [frequencyHz[0], frequencyHz.at(-1)])) ?? {
