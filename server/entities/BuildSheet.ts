@@ -13,6 +13,9 @@ export class BuildSheet extends RegistryRow {
   @Column('jsonb')
   details: Record<string, unknown>
 
+  @Column('jsonb', { default: {} })
+  winding: Record<string, unknown>
+
   @Column('text', { default: '' })
   notes: string
 }

@@ -3,6 +3,7 @@ import { CreateRegistry1796000100000 } from './1796000100000-CreateRegistry.ts'
 import { CreateEvidence1796000200000 } from './1796000200000-CreateEvidence.ts'
 import { CreateReadiness1796000300000 } from './1796000300000-CreateReadiness.ts'
 import { CreateAttachments1796000400000 } from './1796000400000-CreateAttachments.ts'
+import { AddWindingCards1796000500000 } from './1796000500000-AddWindingCards.ts'
 
 export const migrations = [
   CreateGroupsAndPeople1796000000000,
@@ -10,4 +11,5 @@ export const migrations = [
   CreateEvidence1796000200000,
   CreateReadiness1796000300000,
   CreateAttachments1796000400000,
+  AddWindingCards1796000500000,
 ]

@@ -3,6 +3,7 @@ import { attachmentRoutes } from './attachments.ts'
 import { batchRoutes } from './batches.ts'
 import { boardRoutes } from './board.ts'
 import { buildSheetRoutes } from './build-sheets.ts'
+import { buildRoutes } from './builds.ts'
 import { consumableRoutes, stockRoutes } from './consumables.ts'
 import type { EndpointRouter } from './endpoint.ts'
 import { healthRoutes } from './health.ts'
@@ -38,6 +39,7 @@ const routes: readonly ((endpoints: EndpointRouter, ctx: AppContext) => void)[] 
   moveRoutes,
   buildSheetRoutes,
   batchRoutes,
+  buildRoutes,
   consumableRoutes,
   stockRoutes,
   registryRoutes,

@@ -1,16 +1,33 @@
 import { z } from 'zod'
 import { defineEndpoint } from './endpoint.ts'
-import { id, line, newId, page, pageQuery, text } from './fields.ts'
+import { amount, id, line, newId, page, pageQuery, text } from './fields.ts'
+import { CONSTRUCTIONS } from '#shared/engine/builds/winding-length.ts'
 import { BUILT_CATEGORIES, buildDetails, buildDetailsRecord } from './item-details.ts'
 import { bringBackBody, recordFields, retireBody, retiredFilter } from './registry-fields.ts'
 import { CREW, KEEPERS } from './roles.ts'
 
 const params = z.object({ buildSheetId: id })
 
+/** What a winding card needs besides the details of the finished thing. Lengths of a turn and of a tail in mm. */
+const windingFields = {
+  construction: z.enum(CONSTRUCTIONS).optional(),
+  awg: z.int().min(-3).max(40).optional(),
+  /** Once round the core or the stack of cores, wire included. */
+  meanTurnMm: amount(1, 1000).optional(),
+  /** What is left of each wire at each of its ends. */
+  tailMm: amount(0, 2000).optional(),
+  tap: line(120, 1).optional(),
+  materialsCost: amount(0, 100_000).optional(),
+  currency: line(8, 1).optional(),
+  /** Of this build's own, beside those that every card carries. */
+  cautions: text(1000, 1).optional(),
+}
+
 /** How a transformer or an antenna is made. */
 export const buildSheetBody = z.strictObject({
   name: line(120, 1),
   details: buildDetails,
+  winding: z.strictObject(windingFields).default({}),
   notes: text(4000).default(''),
 })
 
@@ -19,6 +36,7 @@ export const buildSheetRecord = z.object({
   name: z.string(),
   category: z.enum(BUILT_CATEGORIES),
   details: buildDetailsRecord,
+  winding: z.object(windingFields),
   notes: z.string(),
   batches: z.int(),
   items: z.int(),

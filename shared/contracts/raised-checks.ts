@@ -1,6 +1,7 @@
 import { z } from 'zod'
 import { defineEndpoint } from './endpoint.ts'
 import { id, line, newId, plainDate } from './fields.ts'
+import { recallProcedure } from './recall-shapes.ts'
 import { CREW, LEADS } from './roles.ts'
 import { answeredAt, band, procedure } from './words.ts'
 
@@ -62,7 +63,7 @@ export const withdrawRaisedCheck = defineEndpoint({
   response: raisedCheck,
 })
 
-/** Every serviceable unit of the batch that has not been tested on this band since gets a check. */
+/** Every unit in use of the batch that is not known to fail on this band gets a check. */
 export const raiseRecall = defineEndpoint({
   name: 'raise-recall',
   method: 'post',
@@ -70,6 +71,11 @@ export const raiseRecall = defineEndpoint({
   summary: 'Recall a batch: its units are in doubt on one band until each is tested',
   access: { scope: 'group', roles: LEADS },
   params: z.strictObject({ batchId: id }),
-  body: z.strictObject({ band: band.nullable(), reason: line(300, 1), dueOn: plainDate }),
+  body: z.strictObject({
+    procedure: recallProcedure.default('heat-test'),
+    band: band.nullable(),
+    reason: line(300, 1),
+    dueOn: plainDate,
+  }),
   response: z.object({ raised: z.array(raisedCheck) }),
 })

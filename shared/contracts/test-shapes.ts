@@ -1,6 +1,7 @@
 import { z } from 'zod'
 import { testAttachment } from './attachments.ts'
 import { itemNamed, named } from './readiness-shapes.ts'
+import { recallProposal } from './recall-shapes.ts'
 import { answeredAt, band, category, findingWord, procedure, verdict } from './words.ts'
 
 /** How a stored test looks in answers. */
@@ -94,10 +95,8 @@ export const storedTest = testSummary.omit({ operatorName: true }).extend({
   /** Files that the test is read from, then those beside it. */
   attachments: z.array(testAttachment),
   effects: z.array(testEffect),
-  /** A failed unit of a batch: its siblings may have the same fault, and nothing asks for their test yet. */
-  proposedRecall: z
-    .object({ batchId: z.string(), batchName: z.string(), band: band.nullable(), siblings: z.int() })
-    .nullable(),
+  /** What this test says about the siblings of the unit, where nothing asks for their test yet. */
+  proposedRecalls: z.array(recallProposal),
 })
 
 export type StoredTest = z.output<typeof storedTest>

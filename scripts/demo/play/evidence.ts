@@ -91,6 +91,7 @@ export async function recall(
   { ctx, by, ids, calendar }: Stage,
   { batch, band, reason, dueOn }: Extract<Deed, { do: 'recall' }>,
 ): Promise<void> {
-  const asked = { batchId: ids.of(named.batch(batch)), band, reason, dueOn: calendar.day(dueOn) }
+  const batchId = ids.of(named.batch(batch))
+  const asked = { batchId, procedure: 'heat-test', band, reason, dueOn: calendar.day(dueOn) } as const
   await inGroup(ctx, by, (tx) => raiseRecall(tx, asked))
 }

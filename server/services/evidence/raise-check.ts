@@ -60,7 +60,7 @@ export interface NewRaisedCheck extends Pick<
 > {
   readonly id: string
   readonly band?: Body['band']
-  readonly subject: TestSubject
+  readonly subject: Pick<TestSubject, 'type' | 'id' | 'designation' | 'kitId'>
 }
 
 /** The row and its entry in the history; the caller rewrites the kits. */

@@ -1,14 +1,19 @@
 import { v7 as uuidv7 } from 'uuid'
+import type { RecallProcedure } from '#shared/engine/builds/matching.ts'
+import { unitsToRecall } from '#shared/engine/builds/recall-units.ts'
+import { canBeTested } from '#shared/engine/procedures/subjects.ts'
 import type { Band } from '#shared/engine/vocabulary.ts'
-import { notFound } from '../../errors.ts'
+import { invalidField, notFound } from '../../errors.ts'
 import type { GroupTx, Statement } from '../../group-transaction.ts'
+import { loadBuildState } from '../builds/build-state.ts'
+import type { BuiltCategory } from '../builds/sheet-rows.ts'
 import { rewriteReadiness } from '../rewrite-readiness.ts'
 import { insertRaisedCheck } from './raise-check.ts'
 import { readRaisedChecks, type RaisedCheckAnswer } from './raised-check-rows.ts'
-import { readItemSubject } from './test-subject.ts'
 
 export interface Recall {
   readonly batchId: string
+  readonly procedure: RecallProcedure
   /** Null: the whole unit. */
   readonly band: Band | null
   readonly reason: string
@@ -16,55 +21,50 @@ export interface Recall {
   readonly dueOn: string
 }
 
-const BATCH: Statement = { name: 'recalled-batch', text: 'SELECT id FROM batch WHERE id = $1' }
-
-/**
- * Units that work, were not asked already, and are not known to fail on that band themselves: a failure stands until a
- * later test at the same power or more passes; one that passes at less power only says what is left.
- */
-const UNITS: Statement = {
-  name: 'units-to-recall',
-  text: `WITH heat AS (
-      SELECT t.item_id, t.performed_at, t.finding, t.inputs ->> 'band' AS band, (t.inputs ->> 'powerW')::numeric AS watts
-      FROM item i JOIN test t ON t.item_id = i.id AND t.procedure = 'heat-test'
-      WHERE i.batch_id = $1 AND ($2::text IS NULL OR t.inputs ->> 'band' = $2)
-        AND NOT EXISTS (SELECT FROM test s WHERE s.supersedes_id = t.id))
-    SELECT i.id FROM item i
-    WHERE i.batch_id = $1 AND i.retired_at IS NULL AND i.condition <> 'unserviceable'
-      AND NOT EXISTS (SELECT FROM raised_check r WHERE r.item_id = i.id AND r.procedure = 'heat-test'
-        AND r.cause = 'recall' AND r.band IS NOT DISTINCT FROM $2 AND r.withdrawn_at IS NULL
-        AND NOT EXISTS (SELECT FROM heat a WHERE a.item_id = i.id AND a.performed_at > r.raised_at))
-      AND NOT EXISTS (SELECT FROM heat f WHERE f.item_id = i.id AND f.finding = 'fail'
-        AND NOT EXISTS (SELECT FROM heat p WHERE p.item_id = i.id AND p.finding <> 'fail' AND p.band = f.band
-          AND p.performed_at > f.performed_at AND p.watts >= f.watts))
-    ORDER BY i.designation, i.id`,
+/** Locked, so that two people who recall at once raise nothing twice. */
+const BATCH: Statement = {
+  name: 'recalled-batch',
+  text: `SELECT s.id AS sheet_id, s.category FROM batch b JOIN build_sheet s ON s.id = b.build_sheet_id
+    WHERE b.group_id = $1 AND b.id = $2 FOR UPDATE OF b`,
 }
 
 /**
- * Recalls a batch: every unit in use gets a heat test to do, and what was found of it before on that band is in doubt
- * until then. Calling it twice raises nothing twice.
+ * Recalls a batch: every unit in use gets a test to do, and what was found of it before on that band is in doubt until
+ * then. Calling it twice raises nothing twice.
  */
-export async function raiseRecall(
-  tx: GroupTx,
-  { batchId, band, reason, dueOn }: Recall,
-): Promise<RaisedCheckAnswer[]> {
-  const [batch] = await tx.sql(BATCH, [batchId])
+export async function raiseRecall(tx: GroupTx, recall: Recall): Promise<RaisedCheckAnswer[]> {
+  const { batchId, procedure, band, reason, dueOn } = recall
+  const [batch] = await tx.sql<{ sheet_id: string; category: BuiltCategory }>(BATCH, [tx.groupId, batchId])
   if (!batch) throw notFound('batch')
-  const units = await tx.sql<{ id: string }>(UNITS, [batchId, band])
-  const raised: { id: string; kitId: string | null }[] = []
-  for (const unit of units) {
+  requireSubject(procedure, batch.category)
+  const { moment, units } = await loadBuildState(tx, [batch.sheet_id])
+  const own = units.filter((unit) => unit.batch?.id === batchId)
+  const recalled = unitsToRecall(moment, own, { procedure, band })
+  const ids = new Set(recalled.map(({ id }) => id))
+  const raised: string[] = []
+  for (const unit of own.filter(({ id }) => ids.has(id))) {
     const id = uuidv7()
-    const subject = await readItemSubject(tx, unit.id)
-    const check = { procedure: 'heat-test', cause: 'recall', doubtsEarlier: true, reason, dueOn } as const
+    const subject = {
+      type: 'item',
+      id: unit.id,
+      designation: unit.designation,
+      kitId: unit.kit?.id ?? null,
+    } as const
+    const check = { procedure, cause: 'recall', doubtsEarlier: true, reason, dueOn } as const
     await insertRaisedCheck(tx, { id, subject, ...check, ...(band !== null && { band }) })
-    raised.push({ id, kitId: subject.kitId })
+    raised.push(id)
   }
   await rewriteReadiness(
     tx,
-    raised.flatMap(({ kitId }) => kitId ?? []),
+    own.filter(({ id }) => ids.has(id)).flatMap(({ kit }) => kit?.id ?? []),
   )
-  return readRaisedChecks(
-    tx,
-    raised.map(({ id }) => id),
+  return readRaisedChecks(tx, raised)
+}
+
+function requireSubject(procedure: RecallProcedure, category: BuiltCategory): void {
+  if (canBeTested(category, procedure)) return
+  throw invalidField(
+    '#/procedure',
+    `That test is not made of ${category === 'antenna' ? 'an antenna' : 'a transformer'}.`,
   )
 }

@@ -2,7 +2,7 @@ import type { StoredTest, TestEffect } from '#shared/contracts/test-shapes.ts'
 import { notFound } from '../../errors.ts'
 import type { GroupTx, Statement } from '../../group-transaction.ts'
 import { filesOfTest } from './named-files.ts'
-import { proposedRecall } from './proposed-recall.ts'
+import { proposedRecalls } from './proposed-recalls.ts'
 import { summaryOf, SUMMARY_COLUMNS, SUMMARY_JOINS, type SummaryRow } from './test-rows.ts'
 
 interface TestRow extends SummaryRow {
@@ -55,11 +55,11 @@ export async function storedHash(tx: GroupTx, testId: string): Promise<Buffer | 
 
 /** A test as it is answered; 404 when it is not in the group. */
 export async function readStoredTest(tx: GroupTx, testId: string): Promise<StoredTest> {
-  const [[row], effects, attachments, recall] = await Promise.all([
+  const [[row], effects, attachments, recalls] = await Promise.all([
     tx.sql<TestRow>(TEST, [testId]),
     tx.sql<TestEffect & Record<string, unknown>>(EFFECTS, [testId]),
     filesOfTest(tx, testId),
-    proposedRecall(tx, testId),
+    proposedRecalls(tx, testId),
   ])
   if (!row) throw notFound('test')
   return {
@@ -78,7 +78,7 @@ export async function readStoredTest(tx: GroupTx, testId: string): Promise<Store
     supersededBy: linkOf(row.superseded_by_id, row.superseded_reason),
     attachments,
     effects,
-    proposedRecall: recall,
+    proposedRecalls: recalls,
   }
 }
 

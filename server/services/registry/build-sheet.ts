@@ -21,7 +21,7 @@ const BATCHES = `(SELECT count(*)::int FROM batch b
 const ITEMS = `(SELECT count(*)::int FROM item i LEFT JOIN batch b ON b.id = i.batch_id
     WHERE i.group_id = t.group_id AND coalesce(i.build_sheet_id, b.build_sheet_id) = t.id
       AND i.retired_at IS NULL)`
-const COLUMNS = `t.id, t.name, t.category, t.details, t.notes, ${RECORD_COLUMNS},
+const COLUMNS = `t.id, t.name, t.category, t.details, t.winding, t.notes, ${RECORD_COLUMNS},
   ${BATCHES} AS batches, ${ITEMS} AS items`
 
 interface BuildSheetRow extends RecordColumns {
@@ -29,6 +29,7 @@ interface BuildSheetRow extends RecordColumns {
   name: string
   category: Answer['category']
   details: object
+  winding: Answer['winding']
   notes: string
   batches: number
   items: number
@@ -52,6 +53,7 @@ function buildSheetOf(row: BuildSheetRow): Answer {
     name: row.name,
     category: row.category,
     details: { ...row.details, category: row.category },
+    winding: row.winding,
     notes: row.notes,
     batches: row.batches,
     items: row.items,
@@ -64,7 +66,13 @@ export const buildSheet: Thing<BuildSheet, Body, Answer> = {
   subject: 'build-sheet',
   word: 'build sheet',
   nameOf: (row) => row.name,
-  columns: ({ name, notes, details: { category, ...details } }) => ({ name, notes, category, details }),
+  columns: ({ name, notes, winding, details: { category, ...details } }) => ({
+    name,
+    notes,
+    winding,
+    category,
+    details,
+  }),
   read: async (tx, id) => {
     const [row] = await tx.sql<BuildSheetRow>(READ, [tx.groupId, id])
     return row && buildSheetOf(row)

@@ -9,9 +9,19 @@ export type Doubt =
   | { readonly kind: 'calibration-lapsed' | 'calibration-failed'; readonly instrument: string }
   | { readonly kind: 'recall'; readonly check: RaisedCheck }
 
+/** Two ways to measure how much a transformer loses: each answers for the other. */
+const LOSS_TESTS: readonly Procedure[] = ['pair-loss', 'open-short-load']
+
 /** A recall of a transformer doubts everything that spoke for its match and loss on that band. */
 const DOUBTED_BY_RECALL: Readonly<Partial<Record<Procedure, readonly Procedure[]>>> = {
-  'heat-test': ['heat-test', 'pair-loss', 'open-short-load'],
+  'heat-test': ['heat-test', ...LOSS_TESTS],
+  'pair-loss': LOSS_TESTS,
+  'open-short-load': LOSS_TESTS,
+}
+
+/** The procedures that answer a check of one: the usual one first. */
+export function answeringProcedures(procedure: Procedure): readonly Procedure[] {
+  return LOSS_TESTS.includes(procedure) ? LOSS_TESTS : [procedure]
 }
 
 /** The doubt about a test on a band, if any: its instrument's calibration, or a recall since. */
@@ -67,14 +77,23 @@ export function openRecall(
  * or for a check of all bands on the band asked about.
  */
 export function isAnswered(moment: Moment, check: RaisedCheck, band: Band | null): boolean {
+  return answerOf(moment, check, band) !== undefined
+}
+
+/** The first test that answered a raised check; of two procedures that do, the usual one's. */
+export function answerOf(moment: Moment, check: RaisedCheck, band: Band | null): Evidence | undefined {
   const on = check.band ?? band
-  return moment
-    .tests(check.subjectId, check.procedure)
-    .some(
-      (test) =>
-        test.performedAt > check.raisedAt &&
-        test.recordedAt <= moment.at &&
-        (on === null || test.findings.some((finding) => finding.band === null || finding.band === on)) &&
-        calibrationDoubt(moment, test) === undefined,
-    )
+  for (const procedure of answeringProcedures(check.procedure)) {
+    const answer = moment
+      .tests(check.subjectId, procedure)
+      .findLast(
+        (test) =>
+          test.performedAt > check.raisedAt &&
+          test.recordedAt <= moment.at &&
+          (on === null || test.findings.some((finding) => finding.band === null || finding.band === on)) &&
+          calibrationDoubt(moment, test) === undefined,
+      )
+    if (answer) return answer
+  }
+  return undefined
 }

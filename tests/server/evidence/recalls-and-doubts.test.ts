@@ -57,7 +57,15 @@ describe('a failed unit of a batch', () => {
     await recorded(member, heatTest(good.id, common()))
     app.clock.advance(10, 'seconds')
     const failed = await recorded(member, stoppedHeatTest(bad.id, common()))
-    expect(failed.proposedRecall).toMatchObject({ batchId, band: '10 m', siblings: 1 })
+    expect(failed.proposedRecalls).toMatchObject([
+      {
+        batch: { id: batchId },
+        procedure: 'heat-test',
+        band: '10 m',
+        causes: [{ unit: { id: bad.id }, kind: 'failed', text: 'reached 85 °C after 8.2 min at 50 W' }],
+        siblings: [{ id: good.id, kit: null }],
+      },
+    ])
 
     const body = { band: '10 m', reason: 'a sibling reached 85 °C', dueOn: '2026-08-01' }
     const answer = await keeper.post(`/api/v1/batches/${batchId}/recall`, body)
@@ -70,7 +78,7 @@ describe('a failed unit of a batch', () => {
       state: 'in-doubt',
       dueOn: '2026-08-01',
     })
-    expect((await member.get(`/api/v1/tests/${failed.id}`)).body.proposedRecall).toBeNull()
+    expect((await member.get(`/api/v1/tests/${failed.id}`)).body.proposedRecalls).toEqual([])
     expect((await keeper.post(`/api/v1/batches/${batchId}/recall`, body)).body.raised).toEqual([])
   })
 

@@ -51,7 +51,7 @@ describe('recording a heat test', () => {
       claimedAhead: false,
       judgedBy: { policyNumber: 1, rule: { limits: { maxC: 85, powerW: 50 } } },
       supersededBy: null,
-      proposedRecall: null,
+      proposedRecalls: [],
     })
     expect(test.effects).toHaveLength(1)
     expect(test.effects[0]).toMatchObject({ kitId: station.kit.id, designation: station.kit.designation })
