@@ -1,9 +1,9 @@
 import type { z } from 'zod'
-import type { buildDetails } from '#shared/contracts/item-details.ts'
+import type { buildSheetBody } from '#shared/contracts/build-sheets.ts'
 import type { PlainDate } from '#shared/engine/plain-date.ts'
 import { HF_BANDS } from './kit-kinds.ts'
 
-type Details = z.input<typeof buildDetails>
+type SheetBody = z.input<typeof buildSheetBody>
 
 /** How the transformers and the wires are made. */
 export const BUILD_SHEETS = {
@@ -23,7 +23,43 @@ export const BUILD_SHEETS = {
       ratedWatts: 100,
       connector: 'UHF socket',
     },
+    winding: {
+      construction: 'bifilar',
+      awg: 18,
+      meanTurnMm: 66,
+      tailMm: 120,
+      tap: 'Two turns twisted with the first two of fourteen',
+      materialsCost: 18.5,
+      currency: 'USD',
+      cautions: 'The core is brittle and its edge cuts enamel: wrap it with tape first.',
+    },
     notes: 'Two turns bifilar with the first two of fourteen; capacitor across the primary.',
+  },
+  former: {
+    name: '49:1 on two stacked 140-size toroids',
+    details: {
+      category: 'transformer',
+      core: '140-size ferrite toroid',
+      cores: 2,
+      mix: 'DEMO',
+      turnsPrimary: 2,
+      turnsSecondary: 14,
+      wire: 'enamelled copper, 1 mm',
+      capacitorPf: 100,
+      capacitorV: 2000,
+      bands: [...HF_BANDS],
+      ratedWatts: 100,
+      connector: 'UHF socket',
+    },
+    winding: {
+      construction: 'tapped',
+      awg: 18,
+      meanTurnMm: 74,
+      tailMm: 120,
+      materialsCost: 21,
+      currency: 'USD',
+    },
+    notes: 'The first ones, of 2019. Winding is slow: the stack slips.',
   },
   wire: {
     name: 'End-fed half-wave wire for 40 m',
@@ -38,7 +74,7 @@ export const BUILD_SHEETS = {
     },
     notes: 'Strain relief at the insulator: a knot slips when the wire is iced.',
   },
-} as const satisfies Record<string, { name: string; details: Details; notes: string }>
+} as const satisfies Record<string, SheetBody>
 
 export type BuildKey = keyof typeof BUILD_SHEETS
 

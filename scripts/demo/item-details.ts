@@ -45,6 +45,8 @@ export function antenna(kind: KindCode): ItemDetails {
   return { category: 'antenna', design, bands: bandsOf(kind), feedOhms: 50, ratedWatts: 100, connector: 'N' }
 }
 
+export const formerTransformer = (): ItemDetails => ({ ...BUILD_SHEETS.former.details, bands: [...HF_BANDS] })
+
 export const transformer = (): ItemDetails => ({ ...BUILD_SHEETS.transformer.details, bands: [...HF_BANDS] })
 
 export function feedline(kind: KindCode): ItemDetails {

@@ -102,7 +102,7 @@ function ofBatch(designation: string, batch: BatchKey): DemoItem {
 function transformerAtFirst(kit: string): DemoItem {
   const former = FORMER_TRANSFORMERS[kit]
   if (former)
-    return item(former, details.transformer(), { buildSheet: 'transformer', acquiredOn: '2019-06-15' })
+    return item(former, details.formerTransformer(), { buildSheet: 'former', acquiredOn: '2019-06-15' })
   const [designation, { batch }] = Object.entries(TRANSFORMERS).find(([, one]) => one.kit === kit)!
   return ofBatch(designation, batch)
 }

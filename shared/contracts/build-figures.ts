@@ -6,7 +6,7 @@ import { BUILT_CATEGORIES } from './item-details.ts'
 import { named } from './registry-fields.ts'
 import { batchRecall, batchUnit, recallProposal } from './recall-shapes.ts'
 import { CREW } from './roles.ts'
-import { band, findingWord } from './words.ts'
+import { band, findingWord, procedure } from './words.ts'
 
 /** What the tests of all units made to a build sheet say about it, and about each unit among its siblings. */
 
@@ -60,6 +60,8 @@ export const buildFigures = z.object({
   bands: z.array(bandFigures),
   departures: z.array(departure),
   proposals: z.array(recallProposal),
+  /** What a new unit must pass, band by band, before it goes into its first kit. */
+  acceptance: z.array(z.object({ band, procedure, asks: z.string() })),
 })
 
 export type BuildFiguresAnswer = z.output<typeof buildFigures>

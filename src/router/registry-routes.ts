@@ -120,6 +120,13 @@ export const registryRoutes: RouteRecordRaw[] = [
     meta: { title: 'Build sheet', roles: CREW, light: true },
   },
   {
+    path: '/build-sheets/:buildSheetId/card',
+    name: 'winding-card',
+    component: () => import('@/views/WindingCardView.vue'),
+    props: true,
+    meta: { title: 'Card of a build sheet', roles: CREW, light: true },
+  },
+  {
     path: '/build-sheets/:buildSheetId/edit',
     name: 'edit-build-sheet',
     component: () => import('@/views/BuildSheetFormView.vue'),

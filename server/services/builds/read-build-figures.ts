@@ -1,4 +1,5 @@
 import type { BuildFiguresAnswer } from '#shared/contracts/build-figures.ts'
+import { acceptanceTests } from '#shared/engine/builds/acceptance.ts'
 import type { UnitFigure } from '#shared/engine/builds/unit-figures.ts'
 import type { GroupTx } from '../../group-transaction.ts'
 import { loadBuildState, type Unit } from './build-state.ts'
@@ -11,7 +12,7 @@ export async function readBuildFigures(tx: GroupTx, buildSheetId: string): Promi
     readSheets(tx, [buildSheetId]),
     loadBuildState(tx, [buildSheetId]),
   ])
-  const { id, name, category } = sheet!
+  const { id, name, category, bands } = sheet!
   const record = recordOf(state, { id, category })
   const figuresOf = new Map(record.units.map(({ unitId, figures }) => [unitId, figures]))
   return {
@@ -23,6 +24,7 @@ export async function readBuildFigures(tx: GroupTx, buildSheetId: string): Promi
       return { unit: { id: unitId, designation }, band, measure, value, median, score, isWorse, testId, text }
     }),
     proposals: proposalsOf(state, record),
+    acceptance: acceptanceTests(state.moment, { category, bands: bands ?? [] }),
   }
 }
 

@@ -1,4 +1,5 @@
 import type { BUILT_CATEGORIES } from '#shared/contracts/item-details.ts'
+import type { Band } from '#shared/engine/vocabulary.ts'
 import { notFound } from '../../errors.ts'
 import type { GroupTx, Statement } from '../../group-transaction.ts'
 
@@ -9,13 +10,14 @@ export interface SheetRow {
   id: string
   name: string
   category: BuiltCategory
+  bands: Band[] | null
   materials_cost: number | null
   currency: string | null
 }
 
 const SHEETS: Statement = {
   name: 'build-sheets-by-id',
-  text: `SELECT id, name, category, (winding ->> 'materialsCost')::float8 AS materials_cost,
+  text: `SELECT id, name, category, details -> 'bands' AS bands, (winding ->> 'materialsCost')::float8 AS materials_cost,
       winding ->> 'currency' AS currency
     FROM build_sheet WHERE group_id = $1 AND id = ANY($2::uuid[]) ORDER BY lower(name), id`,
 }

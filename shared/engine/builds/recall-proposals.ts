@@ -1,4 +1,5 @@
 import { groupBy } from '../group-by.ts'
+import { addDays } from '../plain-date.ts'
 import type { Moment } from '../readiness/moment.ts'
 import type { EpochMs, RaisedCheck } from '../readiness/types.ts'
 import { BANDS, type Band } from '../vocabulary.ts'
@@ -44,7 +45,7 @@ export function recallProposals(moment: Moment, input: Input): RecallProposal[] 
       if (!first) return []
       const { procedure, band } = first
       const siblingIds = unitsToRecall(moment, input.units, { procedure, band })
-        .filter(({ id }) => seeds.some((seed) => asksFor(moment, seed, { id, asked: input.asked })))
+        .filter(({ id }) => seeds.some((seed) => asksFor(moment, seed, { id, ...input })))
         .map(({ id }) => id)
       const causes = seeds.map(({ cause }) => cause)
       return siblingIds.length > 0 ? [{ procedure, band, causes, siblingIds }] : []
@@ -88,8 +89,10 @@ function departing(moment: Moment, { units, departures }: Input): Seed[] {
 function asksFor(
   moment: Moment,
   { procedure, band, cause }: Seed,
-  { id, asked }: { id: string; asked: readonly RaisedCheck[] },
+  { id, asked, departures }: Pick<Input, 'asked' | 'departures'> & { id: string },
 ): boolean {
+  if (cause.kind === 'departs' && hasOwnAnswer(moment, { procedure, band, cause }, { id, departures }))
+    return false
   const since = cause.performedAt
   const isAsked = asked.some(
     (check) =>
@@ -99,4 +102,21 @@ function asksFor(
       check.raisedAt >= since,
   )
   return id !== cause.unitId && !isAsked && !isTestedSince(moment, id, { procedure, band, since })
+}
+
+/**
+ * A unit that departs is no failure: a sibling that stands apart on the same band as well is known already, and one
+ * that was measured on the same day, at the same bench, has shown what it does.
+ */
+function hasOwnAnswer(
+  moment: Moment,
+  { procedure, band, cause }: Seed,
+  { id, departures }: { id: string; departures: readonly Departure[] },
+): boolean {
+  const departs = departures.some(
+    (one) => one.unitId === id && one.band === band && PROCEDURE_OF_MEASURE[one.measure] === procedure,
+  )
+  if (departs) return true
+  const since = moment.passedAt(addDays(moment.dayOf(cause.performedAt), -1)) - 1
+  return isTestedSince(moment, id, { procedure, band, since })
 }

@@ -80,22 +80,15 @@ describe('the figures of a build sheet', () => {
     expect(bands).toMatchObject([{ band: '10 m', measure: 'kPerW', units: 2, lowest: 0.8, highest: 1.5 }])
   })
 
-  it('name a unit that departs from its siblings and propose the recall of its batch', async () => {
-    const { sheetId, batchId, units } = await givenMeasured([0.9, 0.9, 0.89, 0.91, 0.82])
+  it('name a unit that departs from its siblings, and propose nothing where all were measured together', async () => {
+    const { sheetId, units } = await givenMeasured([0.9, 0.9, 0.89, 0.91, 0.82])
     const bad = units[4]!
     const { departures, proposals } = await figuresOf(sheetId)
     expect(departures).toMatchObject([
       { unit: { id: bad.id }, band: '10 m', measure: 'lossDb', isWorse: true },
     ])
     expect(departures[0]?.text).toMatch(/^loses 0\.86 dB on 10 m; the median of 5 units is 0\.46 dB/)
-    expect(proposals).toMatchObject([
-      {
-        batch: { id: batchId },
-        procedure: 'pair-loss',
-        band: '10 m',
-        causes: [{ unit: { id: bad.id }, kind: 'departs' }],
-      },
-    ])
+    expect(proposals).toEqual([])
   })
 
   it('are those of the group alone', async () => {
@@ -163,5 +156,24 @@ describe('build sheets side by side', () => {
     const path = `/api/v1/build-sheets/${sheetId}/comparison`
     await keeper.get(`${path}?with=none`).expect(400)
     await keeper.get(`${path}?with=${Array.from({ length: 6 }, () => uuidv7()).join(',')}`).expect(400)
+  })
+})
+
+describe('a unit that departs later than its siblings were measured', () => {
+  it('proposes the recall of its batch', async () => {
+    const { sheetId, batchId, units } = await givenMeasured([0.9, 0.9, 0.89, 0.91, 0.9])
+    const bad = units[4]!
+    app.clock.advance(2, 'days')
+    keeper = await app.givenMember({ id: keeper.groupId, name: '' }, { roles: ['quartermaster'] })
+    await pairLoss(keeper, bad.id, { ...metered(), efficiency: { '10 m': 0.82 } })
+    expect((await figuresOf(sheetId)).proposals).toMatchObject([
+      {
+        batch: { id: batchId },
+        procedure: 'pair-loss',
+        band: '10 m',
+        causes: [{ unit: { id: bad.id }, kind: 'departs' }],
+        siblings: units.slice(0, 4).map(({ id }) => ({ id })),
+      },
+    ])
   })
 })

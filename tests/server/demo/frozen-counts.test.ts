@@ -25,7 +25,7 @@ const TESTS = {
 
 const ROWS = {
   batch: 3,
-  build_sheet: 2,
+  build_sheet: 3,
   consumable: 14,
   consumable_lot: 15,
   item: 268,
