@@ -9,7 +9,7 @@ export function usePrintPage(size: MaybeRefOrGetter<string>): void {
   document.head.append(style)
   watchEffect(() => {
     style.textContent = `@page { size: ${toValue(size)}; margin: 8mm }
-      @media print { header:has(+ main) { display: none } main { padding: 0 !important } }`
+      @media print { header:has(+ main) { display: none !important } main { padding: 0 !important } }`
   })
   onScopeDispose(() => style.remove())
 }

@@ -4,6 +4,8 @@ import { numberText } from './quantity.ts'
 /** How the measures of a build are called and written. */
 interface MeasureWords {
   readonly label: string
+  /** Inside a sentence. */
+  readonly word: string
   /** As it stands behind a number; empty for SWR. */
   readonly unit: string
   readonly digits: number
@@ -13,17 +15,19 @@ interface MeasureWords {
 export const MEASURE_WORDS: Readonly<Record<BuildMeasure, MeasureWords>> = {
   lossDb: {
     label: 'Loss',
+    word: 'loss',
     unit: 'dB',
     digits: 2,
     about: 'what a unit loses, and the share that it passes on',
   },
   kPerW: {
     label: 'Heat',
+    word: 'heat',
     unit: 'K/W',
     digits: 2,
     about: 'rise of the hottest surface for each watt sent in, over runs of one length',
   },
-  swr: { label: 'SWR', unit: '', digits: 2, about: 'the worst working point of each band' },
+  swr: { label: 'SWR', word: 'SWR', unit: '', digits: 2, about: 'the worst working point of each band' },
 }
 
 export interface MeasureWriter {
