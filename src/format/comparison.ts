@@ -22,7 +22,7 @@ function firstOf(builds: Comparison['builds']): string[] {
   if (!best) return []
   const names = first.map(({ sheet }) => sheet.name).join(' and ')
   return [
-    `First overall: ${names}, ${numberText(best.meanLossDb, 2, true)}\u00a0dB lost on the mean of the bands.`,
+    `First overall: ${names}, ${db(best.meanLossDb)} lost on the mean of the bands.`,
   ]
 }
 

@@ -54,7 +54,7 @@ export function storedTest(
     supersededBy: null,
     attachments: [],
     effects: [],
-    proposedRecall: null,
+    proposedRecalls: [],
     ...more,
   }
 }

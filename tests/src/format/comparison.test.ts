@@ -52,7 +52,7 @@ const plain = (sentences: string[]) => sentences.map((sentence) => sentence.repl
 describe('what a comparison says', () => {
   it('names the first, what is unusable with both means, and whether heat agrees', () => {
     expect(plain(comparisonSentences(comparison()))).toEqual([
-      'First overall: 49:1 on a compact core, 0.83 dB lost on the mean of the bands.',
+      'First overall: 49:1 on a compact core, 0.825 dB lost on the mean of the bands.',
       '64:1 on a 61 mm core is unusable on 10 m: more than 3 dB is lost there. Its mean is 2.075 dB, and 0.767 dB without 10 m.',
       'By the rise after 2 min at 95 W on 20 m, the build that loses less also warms less, which is what one should see. It says nothing about the end temperature.',
     ])
