@@ -21,9 +21,7 @@ function firstOf(builds: Comparison['builds']): string[] {
   const [best] = first
   if (!best) return []
   const names = first.map(({ sheet }) => sheet.name).join(' and ')
-  return [
-    `First overall: ${names}, ${db(best.meanLossDb)} lost on the mean of the bands.`,
-  ]
+  return [`First overall: ${names}, ${db(best.meanLossDb)} lost on the mean of the bands.`]
 }
 
 function unusableOf(
