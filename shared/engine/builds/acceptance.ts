@@ -21,19 +21,28 @@ export function acceptanceTests(
   moment: Moment,
   { category, bands }: { category: Category; bands: readonly Band[] },
 ): AcceptanceTest[] {
-  const rule = (procedure: Procedure) =>
-    ruleFor(moment.policy, { category, facts: {} }, procedure, moment.today)
+  const subject = { category, facts: {} }
+  const rule = (procedure: Procedure, band: Band) =>
+    ruleFor(moment.policy, subject, procedure, moment.today, band) ??
+    ruleFor(moment.policy, subject, procedure, moment.today)
   const inOrder = BANDS.filter((band) => bands.includes(band))
   if (category === 'antenna') {
-    const { maxSwr } = limitsOf('antenna-sweep', rule('antenna-sweep'))
-    const asks = `SWR ${figure(maxSwr, 2)} at most at the working points`
-    return inOrder.map((band) => ({ band, procedure: 'antenna-sweep', asks }))
+    return inOrder.map((band) => {
+      const { maxSwr } = limitsOf('antenna-sweep', rule('antenna-sweep', band))
+      return {
+        band,
+        procedure: 'antenna-sweep',
+        asks: `SWR ${figure(maxSwr, 2)} at most at the working points`,
+      }
+    })
   }
-  const { minEfficiency } = limitsOf('pair-loss', rule('pair-loss'))
-  const { powerW, minutes, maxC } = limitsOf('heat-test', rule('heat-test'))
-  const heat = `${figure(powerW, 1)} W for ${figure(minutes, 1)} min, below ${figure(maxC, 1)} °C`
-  return inOrder.flatMap((band): AcceptanceTest[] => [
-    { band, procedure: 'pair-loss', asks: `${percent(minEfficiency)} passed on, at least` },
-    { band, procedure: 'heat-test', asks: heat },
-  ])
+  return inOrder.flatMap((band): AcceptanceTest[] => {
+    const { minEfficiency } = limitsOf('pair-loss', rule('pair-loss', band))
+    const { powerW, minutes, maxC } = limitsOf('heat-test', rule('heat-test', band))
+    const heat = `${figure(powerW, 1)} W for ${figure(minutes, 1)} min, below ${figure(maxC, 1)} °C`
+    return [
+      { band, procedure: 'pair-loss', asks: `${percent(minEfficiency)} passed on, at least` },
+      { band, procedure: 'heat-test', asks: heat },
+    ]
+  })
 }
