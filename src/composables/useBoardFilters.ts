@@ -13,6 +13,8 @@ export interface BoardFilters {
   readonly place: string | null
   readonly stationsOnly: boolean
   readonly search: string
+  /** What is needed, see `format/need.ts`; it ranks the rows and narrows none. Null: nobody asked. */
+  readonly need: string | null
 }
 
 const NO_FILTERS: BoardFilters = {
@@ -23,6 +25,7 @@ const NO_FILTERS: BoardFilters = {
   place: null,
   stationsOnly: false,
   search: '',
+  need: null,
 }
 
 /** Reads and writes the filters of the board in the address, so that a view of it can be sent to somebody. */
@@ -36,8 +39,8 @@ export function useBoardFilters() {
     void router.replace({ query: writeFilters({ ...filters.value, ...part }) })
   }
 
-  /** Keeps the date: it is no filter. */
-  const clear = () => change({ ...NO_FILTERS, asOf: filters.value.asOf })
+  /** Keeps the date and the need: they are no filters. */
+  const clear = () => change({ ...NO_FILTERS, asOf: filters.value.asOf, need: filters.value.need })
 
   return { filters, count, change, clear }
 }
@@ -52,11 +55,12 @@ export function readFilters(query: LocationQuery): BoardFilters {
     place: one(query.place) || null,
     stationsOnly: one(query.station) === 'true',
     search: one(query.search).slice(0, 80),
+    need: one(query.need) || null,
   }
 }
 
 export function writeFilters(filters: BoardFilters): LocationQueryRaw {
-  const { asOf, verdict, availability, kind, place, stationsOnly, search } = filters
+  const { asOf, verdict, availability, kind, place, stationsOnly, search, need } = filters
   return {
     ...(asOf && { asOf }),
     ...(verdict.length > 0 && { verdict: verdict.join(',') }),
@@ -65,12 +69,13 @@ export function writeFilters(filters: BoardFilters): LocationQueryRaw {
     ...(place && { place }),
     ...(stationsOnly && { station: 'true' }),
     ...(search && { search }),
+    ...(need && { need }),
   }
 }
 
-/** The filters as the endpoint takes them; `writeFilters` uses its names already. */
+/** The filters as the endpoint takes them; `writeFilters` uses its names already. The need is another endpoint's. */
 export function boardQuery(filters: BoardFilters): QueryInputOf<typeof readBoard> {
-  return { ...writeFilters(filters), size: 200 } as QueryInputOf<typeof readBoard>
+  return { ...writeFilters({ ...filters, need: null }), size: 200 } as QueryInputOf<typeof readBoard>
 }
 
 function countFilters({ verdict, availability, kind, place, stationsOnly, search }: BoardFilters): number {

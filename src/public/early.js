@@ -31,6 +31,7 @@
   /** The filters in the page's address carry the names of the endpoint; see `boardQuery`. */
   function boardPath() {
     var query = new URLSearchParams(location.search)
+    query.delete('need')
     query.append('size', '200')
     return '/api/v1/board?' + query
   }

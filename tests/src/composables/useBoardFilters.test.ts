@@ -10,6 +10,7 @@ describe('the filters of the board in the address', () => {
     place: 'p',
     station: 'true',
     search: 'K-0',
+    need: '40m,60W',
   }
 
   it('come back as they were written', () => {
@@ -29,6 +30,6 @@ describe('the filters of the board in the address', () => {
   })
 
   it('ask for the largest page in the words of the endpoint', () => {
-    expect(boardQuery(readFilters({ station: 'true' }))).toEqual({ station: 'true', size: 200 })
+    expect(boardQuery(readFilters({ station: 'true', need: '40m' }))).toEqual({ station: 'true', size: 200 })
   })
 })

@@ -1,0 +1,118 @@
+import type { Mode } from '../vocabulary.ts'
+import { causesOf } from './need-nearness.ts'
+import type { Need, Shortfall } from './need.ts'
+import { amountText, shortText } from './words.ts'
+
+/** The words of the answer to a need, all in one place. */
+
+export type NeedTense = 'now' | 'past' | 'future'
+
+const MODE_WORDS: Readonly<Record<Mode, string>> = {
+  voice: 'voice',
+  digital: 'digital modes',
+  relay: 'relay work',
+}
+
+interface Lacking {
+  readonly shortfalls: readonly Shortfall[]
+  readonly need: Need
+  /** The reason that weighs most on the kit's verdict, empty when there is none. */
+  readonly reasonTop: string
+  readonly tense: NeedTense
+}
+
+/** What would have to be so, and what is: `it gave 60 W on 40 m: 42 W now`. It follows the words "could if". */
+export function missingText({ shortfalls, need, reasonTop, tense }: Lacking): string {
+  const causes = causesOf(shortfalls)
+  const [first] = causes
+  if (!first) return ''
+  const now = tense === 'now' ? 'now' : 'then'
+  switch (first.kind) {
+    case 'watts':
+    case 'hours':
+      return amountsText(causes.filter((one) => one.kind === first.kind) as Amount[], now)
+    case 'band':
+      return `${bandsText(causes, need)}: ${first.state === 'out' ? 'out' : 'not proven'} ${now}`
+    case 'verdict':
+      return `it were ${first.verdict === 'not-fit' ? 'fit' : 'proven'}${alsoText(shortfalls, need)}${because(reasonTop)}`
+    case 'availability':
+      return first.availability === 'assigned'
+        ? `it were back: out on issue ${now}`
+        : `it were in service: out of service ${now}`
+    case 'mode':
+      return `it could do ${MODE_WORDS[first.mode]}: it cannot ${now}`
+    case 'place':
+      return 'it were at the place asked for'
+    case 'not-built':
+      return 'it were built for that'
+  }
+}
+
+type Amount = Extract<Shortfall, { readonly kind: 'watts' | 'hours' }>
+
+function amountsText(amounts: readonly Amount[], now: string): string {
+  const [first] = amounts
+  if (!first) return ''
+  const has = [...new Set(amounts.map(hasText))]
+  if (first.kind === 'hours')
+    return `it ran ${amountText(first.needed)} h on its own batteries: ${has[0]} ${now}`
+  return `it gave ${amountText(first.needed)} W${onBands(amounts)}: ${listText(has)} ${now}`
+}
+
+function hasText({ kind, has, needed }: Amount): string {
+  if (has === null) return kind === 'hours' ? 'no hours are proven' : 'not measured'
+  // A figure that misses must not be rounded onto what is asked for.
+  const rounded = Number(amountText(has)) < needed ? amountText(has) : shortText(has)
+  return `${rounded} ${kind === 'hours' ? 'h' : 'W'}`
+}
+
+/** Where a band does not stand nobody can say its watts: they are part of the condition. */
+function bandsText(shortfalls: readonly Shortfall[], { watts }: Need): string {
+  const power = watts === null ? '' : ` and gave ${amountText(watts)} W there`
+  return `it worked${onBands(shortfalls) || ' on a band'}${power}`
+}
+
+function alsoText(shortfalls: readonly Shortfall[], need: Need): string {
+  const bands = shortfalls.filter(({ kind }) => kind === 'band')
+  return bands.length === 0 ? '' : ` and ${bandsText(bands, need).slice('it '.length)}`
+}
+
+function onBands(shortfalls: readonly Shortfall[]): string {
+  const bands = shortfalls.flatMap((one) => ('band' in one && one.band !== null ? [one.band] : []))
+  return bands.length === 0 ? '' : ` on ${listText(bands)}`
+}
+
+const because = (reason: string) => (reason === '' ? '' : `: ${reason}`)
+
+function listText(parts: readonly string[]): string {
+  const last = parts.at(-1) ?? ''
+  return parts.length < 2 ? last : `${parts.slice(0, -1).join(', ')} and ${last}`
+}
+
+interface Answered {
+  readonly stations: number
+  readonly others: number
+  /** Nearest first. */
+  readonly near: readonly { readonly designation: string; readonly missing: string }[]
+  readonly tense: NeedTense
+}
+
+const CAN: Readonly<Record<NeedTense, string>> = {
+  now: 'can do that',
+  past: 'could do that',
+  future: 'will be able to do that',
+}
+
+/** The answer in one sentence, its weighty part apart: `4 stations can do that;` `K-03 could if it gave ...` */
+export function needSentence({ stations, others, near, tense }: Answered): { lead: string; rest: string } {
+  const counts = [
+    stations > 0 && `${stations} ${stations === 1 ? 'station' : 'stations'}`,
+    others > 0 && `${others} other ${others === 1 ? 'kit' : 'kits'}`,
+  ].filter((part) => part !== false)
+  const lead = `${counts.length === 0 ? 'None' : listText(counts)} ${CAN[tense]}`
+  const [nearest, ...more] = near
+  if (!nearest) return { lead: `${lead}.`, rest: '' }
+  const could = tense === 'past' ? 'could have if' : 'could if'
+  const also = more.length === 0 ? '' : ` ${more.length} more nearly ${tense === 'past' ? 'could' : 'can'}.`
+  return { lead: `${lead};`, rest: `${nearest.designation} ${could} ${nearest.missing}.${also}` }
+}
