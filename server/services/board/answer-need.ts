@@ -24,7 +24,7 @@ export async function needAnswerAt(
   { at, computedFor }: { at: Date; computedFor: NeedAnswer['computedFor'] },
 ): Promise<NeedAnswer> {
   const [rows, [state]] = await Promise.all([
-    tx.sql<NeedRow>(NEED_AT, [tx.groupId, at]),
+    tx.sql<NeedRow>(NEED_AT, [tx.groupId, at, query.at ?? null]),
     tx.sql<{ revision: number }>(REVISION, [tx.groupId, at]),
   ])
   const need = needOf(query)
@@ -71,11 +71,12 @@ function nearestFirst(judged: readonly Judged[]): Judged[] {
 
 function nearKit({ row, shortfalls }: Judged, need: Need, tense: NeedAnswer['computedFor']) {
   const reasonTop = row.reasons[0]?.text ?? ''
+  const places = { asked: row.asked_place, has: row.place }
   const [cause] = causesOf(shortfalls)
   return {
     kitId: row.kit_id,
     designation: row.designation,
-    missing: missingText({ shortfalls, need, reasonTop, tense }),
+    missing: missingText({ shortfalls, need, reasonTop, places, tense }),
     testId: cause ? evidenceOf(cause, row) : null,
   }
 }

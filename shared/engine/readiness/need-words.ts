@@ -18,11 +18,13 @@ interface Lacking {
   readonly need: Need
   /** The reason that weighs most on the kit's verdict, empty when there is none. */
   readonly reasonTop: string
+  /** Names of the place asked for and of the kit's own, where they are known. */
+  readonly places: { readonly asked: string | null; readonly has: string | null }
   readonly tense: NeedTense
 }
 
 /** What would have to be so, and what is: `it gave 60 W on 40 m: 42 W now`. It follows the words "could if". */
-export function missingText({ shortfalls, need, reasonTop, tense }: Lacking): string {
+export function missingText({ shortfalls, need, reasonTop, places, tense }: Lacking): string {
   const causes = causesOf(shortfalls)
   const [first] = causes
   if (!first) return ''
@@ -42,7 +44,7 @@ export function missingText({ shortfalls, need, reasonTop, tense }: Lacking): st
     case 'mode':
       return `it could do ${MODE_WORDS[first.mode]}: it cannot ${now}`
     case 'place':
-      return 'it were at the place asked for'
+      return `it were at ${places.asked ?? 'that place'}: ${places.has === null ? 'place not known' : `at ${places.has} ${now}`}`
     case 'not-built':
       return 'it were built for that'
   }
@@ -55,8 +57,8 @@ function amountsText(amounts: readonly Amount[], now: string): string {
   if (!first) return ''
   const has = [...new Set(amounts.map(hasText))]
   if (first.kind === 'hours')
-    return `it ran ${amountText(first.needed)} h on its own batteries: ${has[0]} ${now}`
-  return `it gave ${amountText(first.needed)} W${onBands(amounts)}: ${listText(has)} ${now}`
+    return `it ran ${first.needed} h on its own batteries: ${has[0]} ${now}`
+  return `it gave ${first.needed} W${onBands(amounts)}: ${listText(has)} ${now}`
 }
 
 function hasText({ kind, has, needed }: Amount): string {
@@ -68,7 +70,7 @@ function hasText({ kind, has, needed }: Amount): string {
 
 /** Where a band does not stand nobody can say its watts: they are part of the condition. */
 function bandsText(shortfalls: readonly Shortfall[], { watts }: Need): string {
-  const power = watts === null ? '' : ` and gave ${amountText(watts)} W there`
+  const power = watts === null ? '' : ` and gave ${watts} W there`
   return `it worked${onBands(shortfalls) || ' on a band'}${power}`
 }
 

@@ -63,7 +63,7 @@ describe('the answer to a need', () => {
     const elsewhere = await givenPlace(keeper, { name: 'Elsewhere' })
     const { can, near } = await answer({ at: elsewhere.id })
     expect(can).toEqual([])
-    expect(near.map(({ missing }) => missing)).toContain('it were at the place asked for')
+    expect(near.map(({ missing }) => missing)).toContain('it were at Elsewhere: at Cage now')
   })
 
   it('is what was known at a past instant, and what holds at a coming one if nobody does anything', async () => {

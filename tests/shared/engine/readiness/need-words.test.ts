@@ -11,6 +11,7 @@ const said = (kit: NeedKit, need: Partial<Need>, reasonTop = '', tense: 'now' | 
     shortfalls: shortfallsOf(kit, { ...NO_NEED, ...need }),
     need: { ...NO_NEED, ...need },
     reasonTop,
+    places: { asked: 'North store', has: kit.placeId === null ? null : 'Cage' },
     tense,
   })
 const nearness = (kit: NeedKit, need: Partial<Need>) => nearnessOf(shortfallsOf(kit, { ...NO_NEED, ...need }))
@@ -27,7 +28,8 @@ describe('what is missing, in words', () => {
     [{ bands: ['40 m'], watts: 60 }, 'it gave 60 W on 40 m: 42 W now'],
     [{ bands: ['80 m', '40 m'], watts: 60 }, 'it gave 60 W on 80 m and 40 m: 38 W and 42 W now'],
     [{ hours: 12 }, 'it ran 12 h on its own batteries: 9.4 h now'],
-    [{ placeId: 'north' }, 'it were at the place asked for'],
+    [{ hours: 12.5 }, 'it ran 12.5 h on its own batteries: 9.4 h now'],
+    [{ placeId: 'north' }, 'it were at North store: at Cage now'],
     [{ watts: 60 }, 'it gave 60 W on 40 m: 42 W now'],
   ])('says %o', (need, text) => expect(said(weak, need)).toBe(text))
 
