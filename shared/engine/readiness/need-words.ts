@@ -56,8 +56,7 @@ function amountsText(amounts: readonly Amount[], now: string): string {
   const [first] = amounts
   if (!first) return ''
   const has = [...new Set(amounts.map(hasText))]
-  if (first.kind === 'hours')
-    return `it ran ${first.needed} h on its own batteries: ${has[0]} ${now}`
+  if (first.kind === 'hours') return `it ran ${first.needed} h on its own batteries: ${has[0]} ${now}`
   return `it gave ${first.needed} W${onBands(amounts)}: ${listText(has)} ${now}`
 }
 
