@@ -8,9 +8,9 @@ import { amountText, shortText } from './words.ts'
 export type NeedTense = 'now' | 'past' | 'future'
 
 const MODE_WORDS: Readonly<Record<Mode, string>> = {
-  voice: 'voice',
-  digital: 'digital modes',
-  relay: 'relay work',
+  voice: 'by voice',
+  digital: 'in digital modes',
+  relay: 'as a relay',
 }
 
 interface Lacking {
@@ -42,7 +42,7 @@ export function missingText({ shortfalls, need, reasonTop, places, tense }: Lack
         ? `it were back: out on issue ${now}`
         : `it were in service: out of service ${now}`
     case 'mode':
-      return `it could do ${MODE_WORDS[first.mode]}: it cannot ${now}`
+      return `it worked ${MODE_WORDS[first.mode]}: it does not ${now}`
     case 'place':
       return `it were at ${places.asked ?? 'that place'}: ${places.has === null ? 'place not known' : `at ${places.has} ${now}`}`
     case 'not-built':
@@ -75,7 +75,8 @@ function bandsText(shortfalls: readonly Shortfall[], { watts }: Need): string {
 
 function alsoText(shortfalls: readonly Shortfall[], need: Need): string {
   const bands = shortfalls.filter(({ kind }) => kind === 'band')
-  return bands.length === 0 ? '' : ` and ${bandsText(bands, need).slice('it '.length)}`
+  if (bands.length === 0) return ''
+  return `${need.watts === null ? ' and' : ','} ${bandsText(bands, need).slice('it '.length)}`
 }
 
 function onBands(shortfalls: readonly Shortfall[]): string {

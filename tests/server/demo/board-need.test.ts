@@ -29,10 +29,38 @@ const named = (kitIds: readonly string[]) =>
   kitIds.map((kitId) => board.rows.find((row) => row.kitId === kitId)?.designation).sort()
 
 describe('40 m by voice, 60 W at the antenna, 12 h on own batteries', () => {
-  it('debug', async () => {
-    for (const need of [FULL, {...FULL, hours: ''}, {...FULL, mains: 'true'}, {mode:'digital'}, {bands:'2 m'}, {...FULL, asOf: '2027-06-01T00:00:00Z'}]) {
-    const a = await answer(Object.fromEntries(Object.entries(need).filter(([,v])=>v)))
-    console.log(JSON.stringify(need), named(a.can), JSON.stringify(a, null, 1)) }
-    console.log(board.rows.map(r=>[r.designation,r.verdict,r.availability,r.bandCodes,r.hours].join(' ')).join('\n'))
+  it('is for four stations, and K-03 needs the watts that its lead withholds', async () => {
+    const said = await answer(FULL)
+    expect(`${said.lead} ${said.rest}`).toBe(
+      '4 stations can do that; K-03 could if it gave 60 W on 40 m: 42 W now. 3 more nearly can.',
+    )
+    expect(named(said.can)).toEqual(['K-01', 'K-02', 'K-04', 'K-05'])
+    expect(named(said.near.map(({ kitId }) => kitId))).toEqual(['K-03', 'K-06', 'K-16', 'K-17'])
+  })
+
+  it('goes from a near miss to the test behind it', async () => {
+    const [nearest] = (await answer(FULL)).near
+    const test = await ines.get(`/api/v1/tests/${nearest?.testId}`)
+    expect(test.status).toBe(200)
+  })
+
+  it('is for K-06 as well where mains or a vehicle is at hand', async () => {
+    expect(named((await answer({ ...FULL, mains: 'true' })).can)).toContain('K-06')
+  })
+
+  it('is for nobody next summer if nobody does anything', async () => {
+    const said = await answer({ ...FULL, asOf: '2027-06-01T00:00:00Z' })
+    expect(said.lead).toBe('None will be able to do that;')
+    expect(said.rest).toMatch(
+      /^K-01 could if it were proven, worked on 40 m and gave 60 W there: K-01: last count/,
+    )
+  })
+})
+
+describe('digital modes', () => {
+  it('are left to K-16; K-17 lacks them for its computer', async () => {
+    const said = await answer({ mode: 'digital' })
+    expect(said.rest).toBe('K-17 could if it worked in digital modes: it does not now.')
+    expect(named(said.can)).toEqual(['K-16'])
   })
 })

@@ -1,6 +1,7 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { answerNeed, type NeedAnswer } from '#shared/contracts/board-need.ts'
 import { fullCount, givenStation, recorded, type Station } from '../../support/evidence.ts'
+import { givenKitKind, givenPlace, moved, position, type Place } from '../../support/registry.ts'
 import { startTestApp, type TestApp, type TestMember } from '../../support/test-app.ts'
 
 let app: TestApp

@@ -50,7 +50,7 @@ describe('what is missing, in words', () => {
     expect(said(kit, { bands: ['40 m'] })).toBe('it worked on 40 m: out now')
     expect(said(kit, { bands: ['40 m'], watts: 60 })).toBe('it worked on 40 m and gave 60 W there: out now')
     expect(said({ ...kit, verdict: 'not-fit' }, { bands: ['40 m'], watts: 60 }, 'ANT-07 is missing')).toBe(
-      'it were fit and worked on 40 m and gave 60 W there: ANT-07 is missing',
+      'it were fit, worked on 40 m and gave 60 W there: ANT-07 is missing',
     )
   })
 
@@ -66,7 +66,7 @@ describe('what is missing, in words', () => {
       'it ran 4 h on its own batteries: no hours are proven now',
     )
     expect(said(needKit({ promisedModes: ['digital'] }), { mode: 'digital' })).toBe(
-      'it could do digital modes: it cannot now',
+      'it worked in digital modes: it does not now',
     )
     const unknown = needKit({ capability: { bands: [onBand('40 m', { wattsAtAntenna: null })] } })
     expect(said(unknown, { bands: ['40 m'], watts: 60 })).toBe('it gave 60 W on 40 m: not measured now')

@@ -21,7 +21,9 @@ export function onBand(band: Band, fields: Partial<BandCapability> = {}): BandCa
 }
 
 /** A station that stands on 80 m and 40 m with 84.8 W at the antenna, by voice, for 17 h. */
-export function needKit(fields: Partial<NeedKit> & { capability?: Partial<NeedKit['capability']> } = {}) {
+export function needKit(
+  fields: Partial<Omit<NeedKit, 'capability'>> & { capability?: Partial<NeedKit['capability']> } = {},
+) {
   const { capability, ...rest } = fields
   return {
     verdict: 'proven',
