@@ -1,6 +1,6 @@
 import { computed, shallowRef, watch } from 'vue'
 import type { NeedAnswer } from '#shared/contracts/board-need.ts'
-import { sameLayout, type SectionLayout } from '@/format/board-layout.ts'
+import type { SectionLayout } from '@/format/board-layout.ts'
 import { needLayout } from '@/format/need-layout.ts'
 
 interface Placed {
@@ -38,7 +38,7 @@ export function useNeedLayout(
   )
 
   const outOfOrder = computed(
-    () => fresh.value !== null && !sameLayout(placed.value?.layout ?? [], fresh.value.layout),
+    () => fresh.value !== null && JSON.stringify(placed.value) !== JSON.stringify(fresh.value),
   )
   return { layout: computed(() => placed.value?.layout ?? []), outOfOrder, sortAgain }
 }
