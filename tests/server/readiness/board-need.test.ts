@@ -1,7 +1,7 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { answerNeed, type NeedAnswer } from '#shared/contracts/board-need.ts'
 import { fullCount, givenStation, recorded, type Station } from '../../support/evidence.ts'
-import { givenKitKind, givenPlace, moved, position, type Place } from '../../support/registry.ts'
+import { givenKitKind, givenPlace, into, moved, position, to, type Place } from '../../support/registry.ts'
 import { startTestApp, type TestApp, type TestMember } from '../../support/test-app.ts'
 
 let app: TestApp
@@ -88,7 +88,8 @@ describe('the answer to a need', () => {
   it('follows the board to its next revision', async () => {
     const before = await observer.get('/api/v1/board/need?mode=voice')
     const pouch = uncounted.items['adapter-pouch']!
-    await moved(keeper, pouch, { kind: 'place', placeId: cage.id })
+    const from = into(uncounted.kit, 'adapter-pouch')
+    await moved(keeper, pouch, to(cage), { from })
     const after = await observer
       .get('/api/v1/board/need?mode=voice')
       .set('If-None-Match', before.headers.etag!)
