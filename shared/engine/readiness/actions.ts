@@ -22,7 +22,7 @@ export const MINUTES: Readonly<Record<Procedure, number>> = {
 /** Common practice, no source. */
 export const SWAP_MINUTES = 15
 export const FETCH_MINUTES = 120
-const REPAIR_MINUTES = 45
+export const REPAIR_MINUTES = 45
 
 const KINDS: Readonly<Partial<Record<Procedure, Action['kind']>>> = {
   count: 'count',
