@@ -1,4 +1,5 @@
 import type { AppContext } from '../context.ts'
+import { adviceRoutes } from './advice.ts'
 import { attachmentRoutes } from './attachments.ts'
 import { batchRoutes } from './batches.ts'
 import { boardRoutes } from './board.ts'
@@ -48,6 +49,7 @@ const routes: readonly ((endpoints: EndpointRouter, ctx: AppContext) => void)[] 
   attachmentRoutes,
   boardRoutes,
   readinessRoutes,
+  adviceRoutes,
   policyRoutes,
   raisedCheckRoutes,
   liveRoutes,

@@ -3,6 +3,7 @@ import type { Ids } from './operations.ts'
 
 /** Bodies where the schema alone does not tell what is valid. */
 export const BODIES: Readonly<Record<string, (ids: Ids) => object>> = {
+  'ask-what-if': (ids) => ({ steps: [{ kind: 'count', kitId: ids('kitId') }] }),
   'change-stock': () => ({ difference: '1', reason: 'Bought' }),
   'move-item': (ids) => ({
     moveId: ids('moveId'),
