@@ -31,6 +31,7 @@ export const NAVIGATION: readonly NavigationEntry[] = [
   { name: 'items', label: 'Items', roles: CREW, about: 'Every tagged thing and where it is', sign: 'item' },
   { name: 'find', label: 'Find', roles: CREW, about: 'A thing by its tag', sign: 'find' },
   { name: 'forecast', label: 'Forecast', roles: CREW, about: 'What lapses in the coming year, and when' },
+  { name: 'advice', label: 'What to do', roles: CREW, about: 'Most readiness for an hour of work' },
   { name: 'tests', label: 'Tests', roles: CREW, about: 'What was measured, and what is due' },
   {
     name: 'consumables',

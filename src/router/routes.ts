@@ -54,6 +54,12 @@ export const routes: RouteRecordRaw[] = [
     meta: { title: 'Forecast', roles: CREW, light: true },
   },
   {
+    path: '/advice',
+    name: 'advice',
+    component: () => import('@/views/AdviceView.vue'),
+    meta: { title: 'What to do', roles: CREW, light: true },
+  },
+  {
     path: '/policy',
     name: 'policy',
     component: () => import('@/views/PolicyView.vue'),

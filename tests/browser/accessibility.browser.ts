@@ -13,6 +13,7 @@ const PAGES = [
   '/consumables',
   '/due',
   '/forecast',
+  '/advice',
   '/policy',
   '/policy/new',
   '/people',
