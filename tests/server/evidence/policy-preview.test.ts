@@ -58,8 +58,6 @@ describe('the preview of a policy', () => {
     await ines
       .post('/api/v1/policy/preview', { effectiveOn: '2026-01-01', settings, rules: rules() })
       .expect(422)
-    await ines
-      .post('/api/v1/policy/preview', { effectiveOn: '2026-12-01', settings, rules: [] })
-      .expect(422)
+    await ines.post('/api/v1/policy/preview', { effectiveOn: '2026-12-01', settings, rules: [] }).expect(422)
   })
 })
