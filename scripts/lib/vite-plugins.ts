@@ -1,4 +1,5 @@
 // Plugins of the client build: what the first screen does not need is left out, what it does need is named early.
+import { existsSync } from 'node:fs'
 import { readdir, readFile, writeFile } from 'node:fs/promises'
 import { join, resolve } from 'node:path'
 import { promisify } from 'node:util'
@@ -92,9 +93,10 @@ export function packFiles(): Plugin {
   return {
     name: 'halyard-pack-files',
     apply: 'build',
-    async closeBundle(error) {
-      if (error) return
+    async closeBundle() {
       const folder = resolve(this.environment.config.root, this.environment.config.build.outDir)
+      // A build that failed has written nothing, and says itself why.
+      if (!existsSync(folder)) return
       const names = await readdir(folder, { recursive: true, withFileTypes: true })
       const files = names.filter((entry) => entry.isFile() && PACKABLE.test(entry.name))
       await Promise.all(files.map((entry) => packFile(join(entry.parentPath, entry.name))))
