@@ -33,6 +33,7 @@ test('a forgotten password is set anew by a mailed link that works once', async 
   const { address } = DEMO_SIGN_INS.find(({ person }) => person === 'dana')!
   await page.goto('/sign-in')
   await page.getByRole('link', { name: 'Forgot your password?' }).click()
+  await expect(page.getByRole('heading', { level: 1 })).toHaveText('Forgot your password')
   await page.getByLabel('E-mail address').fill(address)
   await page.getByRole('button', { name: 'Send the link' }).click()
   await expect(page.getByText('a link is on its way')).toBeVisible()
