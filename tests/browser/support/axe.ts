@@ -6,7 +6,7 @@ import type { AxeResults } from 'axe-core'
 const axe = readFileSync(createRequire(import.meta.url).resolve('axe-core/axe.min.js'), 'utf8')
 
 /** Scripts are strict, so axe is injected by the debugger, which the page's own policy does not bind. */
-export async function violations(page: Page): Promise<string[]> {
+async function violations(page: Page): Promise<string[]> {
   await page.evaluate(axe)
   const results = await page.evaluate(
     () =>
