@@ -58,7 +58,7 @@ const ITEMS = [
 ] as const
 
 test('every picture says its answer, and axe finds nothing by day and night', async ({ page }) => {
-  test.setTimeout(180_000)
+  test.setTimeout(300_000)
   await openAs(page, 'tobin')
   for (const [designation, procedure, finding, answer] of TESTS) {
     await page.goto(await testPath(page, designation, procedure, finding))
