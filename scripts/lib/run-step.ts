@@ -18,7 +18,7 @@ export interface Tally {
 }
 
 /** No step may take longer: then it hangs. */
-const STEP_LIMIT_MS = 10 * 60_000
+const STEP_LIMIT_MS = 25 * 60_000
 
 /** Runs one step, says in one line how it went, and prints what it said when something failed. */
 export async function runStep(step: Step, run: Run): Promise<Tally> {
