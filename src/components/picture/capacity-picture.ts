@@ -5,7 +5,7 @@ import { quantityText } from '@/format/quantity.ts'
 import { FINDING_WORDS } from '@/words.ts'
 import { MARGINAL_MEANS } from './band-picture.ts'
 import { NO_ACCURACY } from './efficiency-picture.ts'
-import { withUncertainty } from './figure-text.ts'
+import { withUncertainty } from '@/format/figure-text.ts'
 import { figureLimit } from './finding-limit.ts'
 import type { UnitText } from './heat-words.ts'
 

@@ -2,7 +2,7 @@ import type { StoredTest } from '#shared/contracts/test-shapes.ts'
 import { numberText, quantityText } from '@/format/quantity.ts'
 import { FINDING_WORDS } from '@/words.ts'
 import { bandFigures, marginalNote, worstFirst, type BandFigure, type BandPicture } from './band-picture.ts'
-import { withUncertainty } from './figure-text.ts'
+import { withUncertainty } from '@/format/figure-text.ts'
 
 /** How much comes through a transformer on each band, against the least that the rule takes. */
 export function efficiencyPicture(test: StoredTest): BandPicture | null {

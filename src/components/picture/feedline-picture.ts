@@ -3,7 +3,7 @@ import type { Band } from '#shared/engine/vocabulary.ts'
 import { numberText, quantityText } from '@/format/quantity.ts'
 import { FINDING_WORDS } from '@/words.ts'
 import { bandFigures, marginalNote, worstFirst, type BandPicture } from './band-picture.ts'
-import { withUncertainty } from './figure-text.ts'
+import { withUncertainty } from '@/format/figure-text.ts'
 
 interface Reading {
   readonly band: Band

@@ -2,7 +2,7 @@ import type { StoredTest } from '#shared/contracts/test-shapes.ts'
 import { numberText, quantityText } from '@/format/quantity.ts'
 import { FINDING_WORDS } from '@/words.ts'
 import { bandFigures, marginalNote, worstFirst, type BandPicture } from './band-picture.ts'
-import { withUncertainty } from './figure-text.ts'
+import { withUncertainty } from '@/format/figure-text.ts'
 
 /** The power of a radio on each band against what its setting promises. */
 export function radioPicture(test: StoredTest): BandPicture | null {

@@ -3,7 +3,7 @@ import { dayText } from '@/format/day.ts'
 import { numberText, quantityText } from '@/format/quantity.ts'
 import { FINDING_WORDS } from '@/words.ts'
 import { worstFirst } from './band-picture.ts'
-import { withUncertainty } from './figure-text.ts'
+import { withUncertainty } from '@/format/figure-text.ts'
 import type { SweepPanel, SweepPicture } from './sweep-picture.ts'
 
 export const swrText = (swr: number) => (swr === Infinity ? 'beyond all measure' : numberText(swr, 2))
