@@ -70,7 +70,7 @@ test('shows how far the recall of the hot batch has come, and its control chart'
     /in\s*K-08.*waits for its test/,
   )
   await expect(page.getByText(/The batch as a whole stands apart/)).toBeVisible()
-  await expect(page.getByRole('img', { name: /^Loss of each unit on 10 m/ })).toBeVisible()
+  await expect(page.getByRole('img', { name: /^4 of 4 units are over the limit/ })).toBeVisible()
   await page.getByText('The same numbers as a table').click()
   await expect(page.getByRole('row', { name: /^XFM-11/ })).toContainText(/1\.37.*over the limit.*Fail/)
 })

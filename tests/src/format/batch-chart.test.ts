@@ -1,34 +1,9 @@
 import { describe, expect, it } from 'vitest'
 import { controlChart } from '#shared/engine/builds/control-chart.ts'
-import { batchChartLayout, type ChartUnitFigure } from '@/format/batch-chart.ts'
+import { batchAnswer, batchChartLayout, batchTable, type ChartUnitFigure } from '@/format/batch-chart.ts'
 import { measureWriter } from '@/format/build.ts'
-import { apartLabels, axisFromZero } from '@/format/chart-scale.ts'
 
-describe('an axis from zero', () => {
-  it.each([
-    [0.97, 1, 0.2],
-    [1.37, 1.5, 0.5],
-    [3, 4, 1],
-    [0, 1.2, 0.2],
-  ])('reaches past %s in round steps', (largest, top, step) => {
-    const axis = axisFromZero(largest)
-    expect(axis.top).toBeCloseTo(top, 9)
-    expect(axis.ticks[1]).toBeCloseTo(step, 9)
-  })
-})
-
-describe('labels beside a chart', () => {
-  it('are moved up until each has its own room', () => {
-    const moved = apartLabels([{ y: 100 }, { y: 110 }, { y: 40 }], { gap: 30, bottom: 200 })
-    expect(moved.map(({ y, textY }) => [y, textY])).toEqual([
-      [110, 110],
-      [100, 80],
-      [40, 40],
-    ])
-  })
-})
-
-describe('the layout of a control chart', () => {
+describe('the picture of a control chart', () => {
   const units = (count: number): ChartUnitFigure[] =>
     Array.from({ length: count }, (_none, at) => ({
       unit: { id: `u${at}`, designation: `XFM-${at}` },
@@ -44,7 +19,7 @@ describe('the layout of a control chart', () => {
         run: null,
       },
     }))
-  const layout = (count: number, narrow: boolean) => {
+  const given = (count: number) => {
     const drawn = units(count)
     const chart = controlChart({
       measure: 'lossDb',
@@ -53,8 +28,10 @@ describe('the layout of a control chart', () => {
       limit: 0.97,
     })
     const write = measureWriter('lossDb', { shown: (value) => value, unitOf: (unit) => unit })
-    return batchChartLayout({ chart, units: drawn, write, narrow })
+    return { chart, units: drawn, write }
   }
+  const layout = (count: number, narrow: boolean) =>
+    batchChartLayout(given(count), { width: narrow ? 358 : 900, height: 340, narrow })
 
   it('writes names upright where they have no room beside each other', () => {
     expect(layout(5, false).upright).toBe(false)
@@ -70,5 +47,20 @@ describe('the layout of a control chart', () => {
       expect(at.y(0)).toBe(at.bottom)
       expect(at.lines.map(({ key }) => key).sort()).toEqual(['limit', 'median', 'upper'])
     }
+  })
+
+  it('answers in a sentence, and in a table with the lines under the units', () => {
+    const input = given(5)
+    expect(batchAnswer(input.chart)).toBe('All units are in line with their siblings and under the limit.')
+    const { columns, rows } = batchTable(input)
+    expect(columns[1]).toBe('dB')
+    expect(rows[0]).toEqual({ cells: ['XFM-0', '0.60', '0.0', 'in line', 'Pass', '1 Jun 2026'], testId: 't' })
+    expect(rows.slice(5).map(({ cells }) => cells.slice(0, 2))).toEqual([
+      ['Median of the batch', '0.60'],
+      ['Median of the siblings', '0.60'],
+      ['Robust limits', '0.42 to 0.78'],
+      ['Limit of the policy', '0.97'],
+      ['Early warning from', '0.87'],
+    ])
   })
 })
