@@ -28,7 +28,7 @@ test('leads from a piece of work to the form that records it, and the board is a
   page,
 }) => {
   await openAs(page, 'ines', '/advice')
-  await page.getByRole('link', { name: /^Record it.*Boot and update of CMP-17 \(K-17\)$/ }).click()
+  await page.getByRole('link', { name: 'Record it: Boot and update of CMP-17 (K-17)' }).click()
   await expect(page.getByRole('heading', { level: 1 })).toContainText('CMP-17')
   await page.goto('/')
   await expect(page.getByRole('heading', { level: 1 })).toContainText('12 of 20 stations can go')

@@ -29,7 +29,6 @@ async function signIn(page: Page, address: string): Promise<void> {
 }
 
 test('a forgotten password is set anew by a mailed link that works once', async ({ page, product }) => {
-  // Nobody else's test signs in as her, whose password changes here.
   const { address } = DEMO_SIGN_INS.find(({ person }) => person === 'dana')!
   await page.goto('/sign-in')
   await page.getByRole('link', { name: 'Forgot your password?' }).click()
