@@ -37,6 +37,9 @@ export default defineConfig({
   },
   server: { proxy: { '/api': 'http://127.0.0.1:8080' } },
   test: {
+    // Modules are read once for each worker, not once for each file: more than half of the time went there. No module
+    // of ours keeps state; what a test changes it puts back.
+    isolate: false,
     projects: [
       {
         extends: true,

@@ -15,28 +15,30 @@ export interface Run {
 export interface Tally {
   passed: number
   failed: number
+  /** What to look for further up, a line each. */
+  failures: string[]
 }
 
 /** No step may take longer: then it hangs. */
-const STEP_LIMIT_MS = 25 * 60_000
+const STEP_LIMIT_MS = 10 * 60_000
 
 /** Runs one step, says in one line how it went, and prints what it said when something failed. */
 export async function runStep(step: Step, run: Run): Promise<Tally> {
-  if (run.ending.hasBegun) return { passed: 0, failed: 0 }
+  if (run.ending.hasBegun) return { passed: 0, failed: 0, failures: [] }
   const slug = step.name.toLowerCase().replace(/\W+/g, '-')
   const reportPath = join(run.folder, `${slug}.json`)
   const logPath = join(run.folder, `${slug}.log`)
   const startedAt = Date.now()
   const exitCode = await runCommand({ step, run, reportPath, logPath })
-  if (run.ending.hasBegun) return { passed: 0, failed: 0 }
-  const { passed, failed, remark } = step.count({ exitCode, report: readReport(reportPath) })
+  if (run.ending.hasBegun) return { passed: 0, failed: 0, failures: [] }
+  const { passed, failed, remark, failures = [] } = step.count({ exitCode, report: readReport(reportPath) })
   const seconds = ((Date.now() - startedAt) / 1000).toFixed(1)
   console.log(
     `${failed === 0 ? 'ok    ' : 'FAILED'} ${step.name}: ${passed} passed, ${failed} failed (${seconds} s)`,
   )
   if (failed > 0) console.log(indent(readFileSync(logPath, 'utf8')))
   if (remark) console.log(indent(remark))
-  return { passed, failed }
+  return { passed, failed, failures: failed > 0 ? failures.map((name) => `${step.name}: ${name}`) : [] }
 }
 
 interface Command {

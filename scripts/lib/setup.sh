@@ -21,7 +21,6 @@ make_state_folder() {
 is_there() {
   case $1 in
     postgresql) ls /usr/lib/postgresql/*/bin/initdb >/dev/null 2>&1 ;;
-    chromium) [ -x /usr/bin/chromium ] ;;
     zbar-tools) command -v zbarimg >/dev/null ;;
     poppler-utils) command -v pdftoppm >/dev/null ;;
     *) command -v "$1" >/dev/null ;;

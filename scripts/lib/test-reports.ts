@@ -10,6 +10,8 @@ export interface Counts {
   failed: number
   /** Why it counts as failed, where the command's own output does not say it. */
   remark?: string
+  /** The names of what failed, where the report has them. */
+  failures?: string[]
 }
 
 export type ReadReport = (outcome: Outcome) => Counts
@@ -24,7 +26,7 @@ interface VitestReport {
   numFailedTests: number
   numPendingTests: number
   numTodoTests: number
-  testResults: { status: string; assertionResults: { status: string }[] }[]
+  testResults: { name: string; status: string; assertionResults: { status: string; fullName: string }[] }[]
 }
 
 export function countVitest({ exitCode, report }: Outcome): Counts {
@@ -35,21 +37,45 @@ export function countVitest({ exitCode, report }: Outcome): Counts {
   const brokenFiles = testResults.filter(
     ({ status, assertionResults }) =>
       status === 'failed' && assertionResults.every((assertion) => assertion.status !== 'failed'),
-  ).length
-  const failed = numFailedTests + brokenFiles
-  return strict({ exitCode, passed: numPassedTests, failed, skipped: numPendingTests + numTodoTests })
+  )
+  const failures = testResults.flatMap(({ assertionResults }) =>
+    assertionResults.filter(({ status }) => status === 'failed').map(({ fullName }) => fullName),
+  )
+  return strict({
+    exitCode,
+    passed: numPassedTests,
+    failed: numFailedTests + brokenFiles.length,
+    skipped: numPendingTests + numTodoTests,
+    failures: [...failures, ...brokenFiles.map(({ name }) => name)],
+  })
+}
+
+interface PlaywrightSuite {
+  suites?: PlaywrightSuite[]
+  specs: { title: string; file: string; ok: boolean; tests: { projectName: string }[] }[]
 }
 
 interface PlaywrightReport {
   errors: unknown[]
+  suites?: PlaywrightSuite[]
   stats: { expected: number; unexpected: number; flaky: number; skipped: number }
 }
 
 export function countPlaywright({ exitCode, report }: Outcome): Counts {
   if (!report) return noReport()
-  const { errors, stats } = report as PlaywrightReport
+  const { errors, suites = [], stats } = report as PlaywrightReport
   const failed = stats.unexpected + stats.flaky + errors.length
-  return strict({ exitCode, passed: stats.expected, failed, skipped: stats.skipped })
+  const failures = suites.flatMap(failedSpecs)
+  return strict({ exitCode, passed: stats.expected, failed, skipped: stats.skipped, failures })
+}
+
+function failedSpecs({ suites = [], specs }: PlaywrightSuite): string[] {
+  const own = specs
+    .filter(({ ok }) => !ok)
+    .map(
+      ({ file, title, tests }) => `${file}, ${tests.map(({ projectName }) => projectName).join()}: ${title}`,
+    )
+  return [...own, ...suites.flatMap(failedSpecs)]
 }
 
 interface Tests {
@@ -57,11 +83,13 @@ interface Tests {
   passed: number
   failed: number
   skipped: number
+  failures: string[]
 }
 
 /** A test that does not run proves nothing; neither does a runner that failed and says of nothing that it did. */
-function strict({ exitCode, passed, failed, skipped }: Tests): Counts {
-  if (skipped > 0) return { passed, failed: failed + skipped, remark: `${skipped} tests were skipped.` }
+function strict({ exitCode, passed, failed, skipped, failures }: Tests): Counts {
+  if (skipped > 0)
+    return { passed, failed: failed + skipped, remark: `${skipped} tests were skipped.`, failures }
   if (passed + failed === 0) return { passed, failed: 1, remark: 'No test ran.' }
   if (exitCode !== 0 && failed === 0) {
     return {
@@ -70,7 +98,7 @@ function strict({ exitCode, passed, failed, skipped }: Tests): Counts {
       remark: `Every test passed, but the runner failed with exit code ${exitCode}.`,
     }
   }
-  return { passed, failed }
+  return { passed, failed, failures }
 }
 
 function noReport(): Counts {

@@ -44,8 +44,8 @@ export const STEPS: readonly Step[] = [
   check('Formatting', bin('prettier'), ['--check', '.']),
   check('Production build and its size', 'node', script('size-check.ts')),
   check('Licences', 'node', script('licence-check.ts')),
-  vitest('unit', 'Unit tests'),
   vitest('api', 'API tests on PostgreSQL'),
+  vitest('unit', 'Unit tests'),
   {
     part: 'browser',
     name: 'Browser tests',

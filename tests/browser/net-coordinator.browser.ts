@@ -1,11 +1,12 @@
 import { expect, test } from './support/test.ts'
-import { openAs } from './support/sign-in.ts'
+import { enter, openAs } from './support/sign-in.ts'
 
 /** The net coordinator's central task: which kits can go, and why. */
 test('reads in one sentence how many stations can go, with every kit and its verdict below', async ({
   page,
 }) => {
-  await openAs(page, 'ines')
+  await page.goto('/')
+  await enter(page, 'ines')
   await expect(page.getByRole('heading', { level: 1 })).toHaveText(
     /12 of 20 stations can go,\s+7 of them with limits\.\s+2 are out on issue\.\s+6 cannot be used now\./,
   )

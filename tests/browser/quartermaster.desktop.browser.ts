@@ -1,6 +1,6 @@
 import { readFileSync } from 'node:fs'
 import type { APIResponse, Page } from '@playwright/test'
-import { openAs } from './support/sign-in.ts'
+import { enter, openAs } from './support/sign-in.ts'
 import { expect, test } from './support/test.ts'
 
 /** The quartermaster's central tasks: what exists, where it is, and the tags on it. */
@@ -124,7 +124,8 @@ test('plans a kind of kit: positions are added, put in order and removed by butt
 })
 
 test('prints the tags of chosen kits and items from the first free cell on', async ({ page }) => {
-  await openAs(page, 'maren', '/tags')
+  await page.goto('/tags')
+  await enter(page, 'maren')
   await page.getByLabel('Those that I choose').check()
   await page.getByLabel('Choose K-01').check()
   await page.getByRole('navigation', { name: 'Lists to choose from' }).getByText('Items').click()

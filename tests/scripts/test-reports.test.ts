@@ -33,6 +33,19 @@ describe('countVitest', () => {
     expect(countVitest({ exitCode: 1, report })).toMatchObject({ passed: 3, failed: 1 })
   })
 
+  it('names the tests that failed and the files that do not load', () => {
+    const assertionResults = [
+      { status: 'passed', fullName: 'a kit opens' },
+      { status: 'failed', fullName: 'a kit closes' },
+    ]
+    const testResults = [
+      { name: 'kit.test.ts', status: 'failed', assertionResults },
+      { name: 'item.test.ts', status: 'failed', assertionResults: [] },
+    ]
+    const report = vitestReport({ numFailedTests: 1, testResults })
+    expect(countVitest({ exitCode: 1, report }).failures).toEqual(['a kit closes', 'item.test.ts'])
+  })
+
   it('counts a skipped test as a failure', () => {
     const report = vitestReport({ numPendingTests: 1, numTodoTests: 1 })
     expect(countVitest({ exitCode: 0, report })).toMatchObject({ passed: 3, failed: 2 })
@@ -50,7 +63,23 @@ describe('countVitest', () => {
 
 describe('countPlaywright', () => {
   it('counts tests', () => {
-    expect(countPlaywright({ exitCode: 0, report: playwrightReport() })).toEqual({ passed: 4, failed: 0 })
+    expect(countPlaywright({ exitCode: 0, report: playwrightReport() })).toMatchObject({
+      passed: 4,
+      failed: 0,
+    })
+  })
+
+  it('names what failed, on which screen', () => {
+    const spec = (title: string, ok: boolean) => ({
+      file: 'kit.ts',
+      title,
+      ok,
+      tests: [{ projectName: 'phone' }],
+    })
+    const inner = { specs: [spec('opens a kit', false)] }
+    const suites = [{ specs: [spec('closes a kit', true)], suites: [inner] }]
+    const report = { ...playwrightReport({ unexpected: 1 }), suites }
+    expect(countPlaywright({ exitCode: 1, report }).failures).toEqual(['kit.ts, phone: opens a kit'])
   })
 
   it('counts flaky, skipped and broken ones as failures', () => {
