@@ -6,8 +6,8 @@ import type { AppContext } from '#server/context.ts'
 import { createDataSource } from '#server/data-source.ts'
 import { inGroup } from '#server/group-transaction.ts'
 import { createLog } from '#server/log.ts'
-import { poolOf } from '#server/pool.ts'
 import { recomputeTests, type Difference } from '#server/services/evidence/recompute-tests.ts'
+import { listGroups } from '#server/services/list-groups.ts'
 
 async function run(): Promise<void> {
   const config = readConfig(process.env)
@@ -23,10 +23,9 @@ async function run(): Promise<void> {
 
 /** True when there are any. */
 async function listDifferences(ctx: AppContext): Promise<boolean> {
-  const { rows } = await poolOf(ctx.db).query<{ id: string }>('SELECT id FROM list_groups()')
   const startedAt = performance.now()
   let [tests, without, different] = [0, 0, 0]
-  for (const { id: groupId } of rows) {
+  for (const { id: groupId } of await listGroups(ctx)) {
     const scope = { groupId, actor: systemActor('recompute-tests') }
     const found = await inGroup(ctx, scope, recomputeTests)
     tests += found.tests

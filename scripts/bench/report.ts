@@ -11,6 +11,10 @@ export interface BenchRow {
 /** Of the columns: the rows of each bench are printed as soon as they are there. */
 const WIDTHS = [4, 38, 12, 12, 8, 0]
 
+export function printHead(): void {
+  printCells(['', '', 'measured', 'floor', 'ratio', 'goal'])
+}
+
 export function printRows(rows: readonly BenchRow[]): void {
   const cells = rows.map(({ id, what, measured, floor, ratio, goal }) => [
     id,
@@ -20,7 +24,11 @@ export function printRows(rows: readonly BenchRow[]): void {
     ratio === null ? '' : `${ratio.toFixed(2)}x`,
     goal,
   ])
-  for (const row of cells) console.log(row.map((cell, column) => cell.padEnd(WIDTHS[column]!)).join('  '))
+  cells.forEach(printCells)
+}
+
+function printCells(cells: readonly string[]): void {
+  console.log(cells.map((cell, column) => cell.padEnd(WIDTHS[column]!)).join('  '))
 }
 
 export function median(values: readonly number[]): number {

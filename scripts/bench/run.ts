@@ -7,7 +7,7 @@ import { startBenchProduct } from './bench-product.ts'
 import { benchJobs } from './jobs.ts'
 import { benchLive } from './live.ts'
 import { benchRecording } from './recording.ts'
-import { printRows } from './report.ts'
+import { printHead, printRows } from './report.ts'
 import { benchSignIn } from './sign-in.ts'
 import { benchTags } from './tags.ts'
 import { givenThousandKits } from './thousand-kits.ts'
@@ -18,6 +18,7 @@ try {
   await givenThousandKits(database.ownerUrl)
   const product = await startBenchProduct(database)
   try {
+    printHead()
     for (const bench of [benchBoard, benchRecording, benchSignIn, benchLive, benchJobs, benchTags]) {
       printRows(await bench(product))
     }

@@ -17,7 +17,7 @@ const FORMAT_METHOD =
   /^ {4}\w+\(params\) \{\n {8}return this\.check\(core\._\w+\(Zod\w+, params\)\);\n {4}\},\n/gm
 
 /**
- * Zod without what the client never asks of it, two fifths of its size: writing schemas as JSON Schema, which only
+ * Zod without what the client never asks of it: writing schemas as JSON Schema, which only
  * the server does; formats as methods of a string (`z.string().email()`; contracts write `z.email()`); parsers made
  * from text, which the page's security policy forbids and the browser would report as a breach; its English sentences,
  * where forms have their own; and answers that hold themselves, which JSON cannot say.

@@ -1,7 +1,7 @@
 import { systemActor } from '../../caller.ts'
 import type { AppContext } from '../../context.ts'
 import { inGroup, type Statement } from '../../group-transaction.ts'
-import { poolOf } from '../../pool.ts'
+import { listGroups } from '../list-groups.ts'
 
 const KEPT_MS = 24 * 60 * 60_000
 
@@ -13,8 +13,7 @@ const UNUSED: Statement = {
 
 /** Removes files that no test has named within a day. Safe at any time and twice at once. */
 export async function sweepAttachments(ctx: AppContext): Promise<void> {
-  const { rows } = await poolOf(ctx.db).query<{ id: string }>('SELECT id FROM list_groups()')
   const before = new Date(ctx.clock.now().getTime() - KEPT_MS)
-  for (const { id: groupId } of rows)
+  for (const { id: groupId } of await listGroups(ctx))
     await inGroup(ctx, { groupId, actor: systemActor('sweep-attachments') }, (tx) => tx.sql(UNUSED, [before]))
 }

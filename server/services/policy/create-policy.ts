@@ -4,6 +4,7 @@ import { AppError, invalidField } from '../../errors.ts'
 import type { GroupTx, Statement } from '../../group-transaction.ts'
 import { record } from '../audit.ts'
 import { createdBefore } from '../created-before.ts'
+import { kitsInUse } from '../kits-in-use.ts'
 import { insertRules } from '../policy-rules.ts'
 import { namingDuplicates } from '../registry/duplicates.ts'
 import { lockNewId } from '../registry/locks.ts'
@@ -20,11 +21,6 @@ const INSERT: Statement = {
   text: `INSERT INTO policy (id, group_id, number, name, effective_on, reason, settings, created_by, created_at)
     VALUES ($1, $2, $3, $4, $5, $6, $7, $8, $9)`,
 }
-const KITS: Statement = {
-  name: 'kits-in-use',
-  text: 'SELECT id FROM kit WHERE group_id = $1 AND retired_at IS NULL ORDER BY id',
-}
-
 /**
  * Puts a new version into force from its day on and rewrites every kit's periods. A version is never edited, and none
  * may take effect before today or before the one that it follows: what was judged stays judged.
@@ -55,11 +51,6 @@ export async function createPolicy(
   })
   await rewriteReadiness(tx, await kitsInUse(tx))
   return readPolicy(tx, policyId)
-}
-
-export async function kitsInUse(tx: GroupTx): Promise<string[]> {
-  const kits = await tx.sql<{ id: string }>(KITS, [tx.groupId])
-  return kits.map((kit) => kit.id)
 }
 
 interface LastVersion {

@@ -8,8 +8,9 @@ import { VERDICTS } from '#shared/engine/vocabulary.ts'
 import { invalidField } from '../../errors.ts'
 import type { GroupTx } from '../../group-transaction.ts'
 import { policiesOrFirst } from '../first-policy.ts'
+import { kitsInUse } from '../kits-in-use.ts'
 import { loadKitStates } from '../load-kit-states.ts'
-import { checkDay, kitsInUse } from './create-policy.ts'
+import { checkDay } from './create-policy.ts'
 
 type Body = BodyOf<typeof contract>
 type Preview = ResponseOf<typeof contract>

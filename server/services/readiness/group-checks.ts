@@ -1,17 +1,13 @@
 import { checksAt, checksOfItem } from '#shared/engine/readiness/checks.ts'
 import { dossierOf, momentOf } from '#shared/engine/readiness/moment.ts'
 import type { CheckState, KitState } from '#shared/engine/readiness/types.ts'
-import type { GroupTx, Statement } from '../../group-transaction.ts'
+import type { GroupTx } from '../../group-transaction.ts'
+import { kitsInUse } from '../kits-in-use.ts'
 import { loadKitStates } from '../load-kit-states.ts'
 import { loadSpares } from './spare-states.ts'
 
 /** Kits whose states are in memory at once. */
 const STEP = 200
-
-const KITS: Statement = {
-  name: 'checked-kits',
-  text: `SELECT id FROM kit WHERE group_id = $1 AND retired_at IS NULL AND ($2::uuid IS NULL OR id = $2) ORDER BY id`,
-}
 
 /** The checks of one kit with all that is in it, or of the spares of one place (`kit` is then null). */
 export interface CheckedPart {
@@ -23,11 +19,10 @@ export interface CheckedPart {
 
 /** Every check that the policy asks for in the group today, in kits and on shelves; of one kit only, when named. */
 export async function checksOfGroup(tx: GroupTx, kitId: string | null = null): Promise<CheckedPart[]> {
-  const kits = await tx.sql<{ id: string }>(KITS, [tx.groupId, kitId])
+  const kits = await kitsInUse(tx, kitId)
   const parts: CheckedPart[] = []
   for (let at = 0; at < kits.length; at += STEP) {
-    const ids = kits.slice(at, at + STEP).map((kit) => kit.id)
-    for (const { state, placeId } of await loadKitStates(tx, ids))
+    for (const { state, placeId } of await loadKitStates(tx, kits.slice(at, at + STEP)))
       parts.push({ kit: state.kit, state, placeId, checks: checksAt(state, tx.now.getTime()) })
   }
   return kitId === null ? [...parts, ...(await checksOfSpares(tx))] : parts

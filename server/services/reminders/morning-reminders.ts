@@ -2,7 +2,7 @@ import type { DueCheck } from '#shared/contracts/due-checks.ts'
 import { systemActor } from '../../caller.ts'
 import type { AppContext } from '../../context.ts'
 import { inGroup, type GroupTx, type Statement } from '../../group-transaction.ts'
-import { poolOf } from '../../pool.ts'
+import { listGroups } from '../list-groups.ts'
 import { dueChecksOf } from '../readiness/due-checks.ts'
 import { queueMail } from '../queue-mail.ts'
 import { outlooks, type Outlook } from './outlook.ts'
@@ -27,10 +27,7 @@ const GROUP_NAME: Statement = { name: 'reminder-group-name', text: 'SELECT name 
 
 /** Makes today's reminders in every group whose morning has come. A morning missed while nothing ran is made up once. */
 export async function remindAllGroups(ctx: AppContext): Promise<void> {
-  const { rows } = await poolOf(ctx.db).query<{ id: string; time_zone: string }>(
-    'SELECT id, time_zone FROM list_groups()',
-  )
-  for (const { id: groupId, time_zone: zone } of rows) {
+  for (const { id: groupId, time_zone: zone } of await listGroups(ctx)) {
     if (localHour(ctx.clock.now(), zone) < MORNING_HOUR) continue
     await inGroup(ctx, { groupId, actor: systemActor('morning-reminders') }, (tx) => remindGroup(ctx, tx))
   }
