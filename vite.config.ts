@@ -31,7 +31,9 @@ export default defineConfig({
     rolldownOptions: {
       treeshake: { propertyReadSideEffects: false, unknownGlobalSideEffects: false },
       output: {
-        codeSplitting: { groups: chunkGroups({ first: FIRST_SCREEN, field: FIELD_PAGES.map(view) }) },
+        codeSplitting: {
+          groups: chunkGroups({ first: FIRST_SCREEN, door: [view('SignIn')], field: FIELD_PAGES.map(view) }),
+        },
       },
     },
   },

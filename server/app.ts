@@ -4,6 +4,7 @@ import type { AppContext } from './context.ts'
 import { AppError } from './errors.ts'
 import { auditRefusals } from './middleware/audit-refusals.ts'
 import { problemHandler } from './middleware/problem-handler.ts'
+import { earlyLinks } from './middleware/early-links.ts'
 import { requestId } from './middleware/request-id.ts'
 import { requireSameOrigin } from './middleware/require-same-origin.ts'
 import { securityHeaders } from './middleware/security-headers.ts'
@@ -38,7 +39,7 @@ export function createApp(ctx: AppContext): Express {
   const document = JSON.stringify(openApiDocument(endpoints.endpoints))
   app.get('/api/v1/openapi.json', (_req, res) => void res.type('json').send(document))
   app.use(methodGuard(endpoints.endpoints))
-  app.use(staticFiles(BUILT_CLIENT))
+  app.use(earlyLinks(), staticFiles(BUILT_CLIENT))
   app.use((req) => {
     throw new AppError('not-found', `Nothing answers at ${req.path.slice(0, 200)}.`)
   })

@@ -9,17 +9,21 @@ const OURS = /[\\/](?:src|shared)[\\/]/
 export interface Screens {
   /** The entry and the view of the first screen. */
   readonly first: readonly string[]
+  /** Views of somebody who is not signed in yet. */
+  readonly door: readonly string[]
   /** Views that are opened in the field, by a printed code or from the first screen. */
   readonly field: readonly string[]
 }
 
 /**
- * A visit over a slow line pays for every request and for every byte, so what pages share lies in four files, each
- * needed by nearly all that load it: `core`, the libraries; `common`, what the first screen shares with others;
- * `field`, what the pages of the field share beyond it; `desk`, what only forms and lists share.
+ * A visit over a slow line pays for every request and for every byte, so what pages share lies in five files, each
+ * needed by nearly all that load it: `core`, the libraries; `common`, what the first screen shares with others; `door`,
+ * what signing in shares beyond it; `field`, what the pages of the field share beyond both; `desk`, what only forms and
+ * lists share.
  */
-export function chunkGroups({ first, field }: Screens): Rolldown.CodeSplittingGroup[] {
+export function chunkGroups({ first, door, field }: Screens): Rolldown.CodeSplittingGroup[] {
   const inFirst = loadedWith(first)
+  const inDoor = loadedWith(door)
   const inField = loadedWith(field)
   const shared = (name: string, has: (id: string, context: Context) => boolean) => ({
     name: (id: string, context: Context) => (has(id, context) ? name : null),
@@ -30,6 +34,7 @@ export function chunkGroups({ first, field }: Screens): Rolldown.CodeSplittingGr
   return [
     { name: 'core', test: LIBRARIES },
     shared('common', inFirst),
+    shared('door', inDoor),
     shared('field', inField),
     shared('desk', () => true),
   ]

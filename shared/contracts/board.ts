@@ -52,6 +52,8 @@ export const boardAnswer = z.object({
   next: z.string().nullable(),
   /** Of the whole group, whatever is filtered. */
   counts: z.array(boardCount),
+  /** Which stations can go, in a sentence: its weighty part, then the rest. */
+  sentence: z.object({ lead: z.string(), rest: z.string() }),
   revision: z.int(),
   asOf: answeredAt,
   computedFor,

@@ -1,4 +1,4 @@
-import { computed, shallowRef } from 'vue'
+import { computed, shallowRef, watch } from 'vue'
 import type { ResponseOf } from '#shared/contracts/endpoint.ts'
 import type { getRegistryOptions } from '#shared/contracts/registry-options.ts'
 import { CREW } from '#shared/contracts/roles.ts'
@@ -14,9 +14,10 @@ let kept: { readonly memberId: string; readonly options: RegistryOptions; readon
 
 /**
  * The short lists that forms and filters choose from: kinds with their positions, places, build sheets, batches,
- * members. Crew only; `null` until they are there. Kept for a minute, since many screens ask.
+ * members. Crew only; `null` until they are there. Kept for a minute, since many screens ask. Nothing is loaded before
+ * it is `wanted`.
  */
-export function useRegistryOptions() {
+export function useRegistryOptions(wanted: () => boolean = () => true) {
   const member = useSessionStore().member
   const options = shallowRef<RegistryOptions | null>(null)
   const error = shallowRef<unknown>(null)
@@ -31,7 +32,7 @@ export function useRegistryOptions() {
     }
   }
 
-  void load()
+  watch(wanted, (now) => void (now && load()), { immediate: true })
   return { options: computed(() => options.value), error, reload: load }
 }
 

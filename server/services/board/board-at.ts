@@ -1,4 +1,5 @@
 import type { BoardAnswer, BoardRow, HorizonStep } from '#shared/contracts/board.ts'
+import { sayTally, tallyOf } from '#shared/engine/readiness/board-sentence.ts'
 import type { Period } from '#shared/engine/readiness/types.ts'
 import type { GroupTx } from '../../group-transaction.ts'
 import { boardRowOf } from '../board-rows.ts'
@@ -52,6 +53,7 @@ export async function boardAt(tx: GroupTx, query: BoardQuery, asked: Asked): Pro
     total: counted?.n ?? 0,
     next: rows.length > query.size ? keyOf(page.at(-1)) : null,
     counts,
+    sentence: sayTally(tallyOf(counts), asked.computedFor),
     revision: state?.revision ?? 0,
     asOf: asked.at.toISOString(),
     computedFor: asked.computedFor,

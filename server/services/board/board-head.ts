@@ -1,4 +1,5 @@
 import type { BoardAnswer, HorizonStep } from '#shared/contracts/board.ts'
+import { sayTally, tallyOf } from '#shared/engine/readiness/board-sentence.ts'
 import type { AppContext } from '../../context.ts'
 import { readInGroup } from '../../group-read.ts'
 import { KEPT_COUNTS, KEPT_NEXT, KEPT_OLDEST, REVISION } from './board-statements.ts'
@@ -7,7 +8,7 @@ import { KEPT_COUNTS, KEPT_NEXT, KEPT_OLDEST, REVISION } from './board-statement
 export interface BoardHead {
   readonly revision: number
   readonly total: number
-  readonly answer: Pick<BoardAnswer, 'counts' | 'revision' | 'oldestVital' | 'nextChange'>
+  readonly answer: Pick<BoardAnswer, 'counts' | 'sentence' | 'revision' | 'oldestVital' | 'nextChange'>
 }
 
 const kept = new Map<string, BoardHead>()
@@ -34,7 +35,13 @@ async function readHead(ctx: AppContext, groupId: string): Promise<BoardHead> {
   return {
     revision,
     total: counts.reduce((sum, { n }) => sum + n, 0),
-    answer: { counts, revision, oldestVital: oldestOf(oldest), nextChange: nextOf(next) },
+    answer: {
+      counts,
+      sentence: sayTally(tallyOf(counts), 'now'),
+      revision,
+      oldestVital: oldestOf(oldest),
+      nextChange: nextOf(next),
+    },
   }
 }
 
