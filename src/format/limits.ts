@@ -1,18 +1,18 @@
-import { numberText } from './quantity.ts'
+import { numberText, quantityText } from './quantity.ts'
 
 type UnitText = (value: number, unit: string, digits?: number) => string
 
 const LINES: Readonly<Record<string, (value: number, text: UnitText) => string>> = {
-  powerW: (value) => `${numberText(value)} W`,
-  minutes: (value) => `${numberText(value)} min`,
+  powerW: (value) => quantityText(value, 'W'),
+  minutes: (value) => quantityText(value, 'min'),
   maxC: (value, text) => `${text(value, '°C', 0)} at most`,
   maxSwrChange: (value) => `SWR moving no more than ${numberText(value)}`,
-  minEfficiency: (value) => `${numberText(value * 100)}% efficiency or more`,
+  minEfficiency: (value) => `${quantityText(value * 100, '%')} efficiency or more`,
   maxSwr: (value) => `SWR ${numberText(value)} or less`,
-  maxRiseDb: (value) => `no more than ${numberText(value)} dB over its baseline`,
-  minCapacityFraction: (value) => `${numberText(value * 100)}% of the rating or more`,
-  minPowerFraction: (value) => `${numberText(value * 100)}% of the power setting or more`,
-  voiceOnlyAfterMonths: (value) => `voice only after ${numberText(value)} months`,
+  maxRiseDb: (value) => `no more than ${quantityText(value, 'dB')} over its baseline`,
+  minCapacityFraction: (value) => `${quantityText(value * 100, '%')} of the rating or more`,
+  minPowerFraction: (value) => `${quantityText(value * 100, '%')} of the power setting or more`,
+  voiceOnlyAfterMonths: (value) => `voice only after ${quantityText(value, 'months')}`,
 }
 
 /** The limits of a rule in words, in the order in which the rule gives them. */

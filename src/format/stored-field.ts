@@ -10,6 +10,9 @@ export interface FieldName {
 }
 
 const UNITS: readonly (readonly [RegExp, string, number])[] = [
+  [/KPerW$/, 'K/W', 1],
+  [/KPerMin$/, 'K/min', 1],
+  [/KPerS$/, 'K/s', 1],
   [/MHz$/, 'MHz', 1],
   [/KHz$/, 'kHz', 1],
   [/Hz$/, 'Hz', 1],
@@ -42,11 +45,24 @@ const WHOLE: Readonly<Record<string, FieldName>> = {
   atS: { label: 'At', unit: 's', factor: 1 },
   swr: { label: 'SWR', unit: '', factor: 1 },
   watts: { label: 'Power', unit: 'W', factor: 1 },
+  fit: { label: 'Fitted curve', unit: '', factor: 1 },
+  firstC: { label: 'First reading', unit: '°C', factor: 1 },
+  lastC: { label: 'Last reading', unit: '°C', factor: 1 },
+  curveStartC: { label: 'Curve begins at', unit: '°C', factor: 1 },
+  start: { label: 'Begins at', unit: '', factor: 1 },
+  identifiable: { label: 'Log long enough', unit: '', factor: 1 },
+  rmseK: { label: 'Scatter about the curve', unit: 'K', factor: 1 },
+  tauS: { label: 'Time constant', unit: 's', factor: 1 },
+  tauLowS: { label: 'Time constant, low', unit: 's', factor: 1 },
+  tauHighS: { label: 'Time constant, high', unit: 's', factor: 1 },
+  resistance: { label: 'Thermal resistance', unit: '', factor: 1 },
+  kPerW: { label: 'Value', unit: 'K/W', factor: 1 },
 }
 
 const SPELLINGS: readonly (readonly [RegExp, string])[] = [
   [/\bswr\b/gi, 'SWR'],
   [/\brf\b/gi, 'RF'],
+  [/\brms\b/gi, 'RMS'],
   [/^max\b/i, 'Most'],
   [/^min\b/i, 'Least'],
 ]

@@ -39,6 +39,10 @@ describe('stored fields by their names', () => {
     ['updatesDone', 'Updates done', '', 1],
     ['riseK', 'Rise', 'K', 1],
     ['keyUpAtS', 'Key up', 's', 1],
+    ['kPerW', 'Value', 'K/W', 1],
+    ['lowKPerW', 'Low', 'K/W', 1],
+    ['initialSlopeKPerS', 'Initial slope', 'K/s', 1],
+    ['rateKPerMin', 'Rate', 'K/min', 1],
   ])('%s is "%s" in %s', (name, label, unit, factor) => {
     expect(fieldName(name)).toEqual({ label, unit, factor })
   })
