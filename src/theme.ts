@@ -117,6 +117,7 @@ export const preset = definePreset(
         headerCell: { padding: '0.5rem 0.9rem', focusRing: { offset: '-3px' } },
         bodyCell: { padding: '0.3rem 0.9rem' },
         paginatorBottom: { borderWidth: '0' },
+        colorScheme: { dark: { root: { borderColor: '{content.border.color}' } } },
       },
       paginator: { root: { padding: '0.5rem 0' }, navButton: { borderRadius: '3px' } },
     },
