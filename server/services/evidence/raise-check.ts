@@ -1,6 +1,6 @@
 import type { z } from 'zod'
 import type { raiseCheck as contract } from '#shared/contracts/raised-checks.ts'
-import { dayText } from '#shared/engine/readiness/sentences.ts'
+import { dayText, withArticle } from '#shared/engine/readiness/words.ts'
 import { canBeTested, SUBJECTS } from '#shared/engine/procedures/subjects.ts'
 import { invalidField } from '../../errors.ts'
 import type { GroupTx, Statement } from '../../group-transaction.ts'
@@ -51,7 +51,7 @@ async function subjectOf(tx: GroupTx, { itemId, kitId, procedure }: Body): Promi
   }
   const item = await readItemSubject(tx, itemId ?? '')
   if (item.category !== 'kit' && canBeTested(item.category, procedure)) return item
-  throw invalidField('#/procedure', `This procedure is not done to a ${item.category}.`)
+  throw invalidField('#/procedure', `This procedure is not done to ${withArticle(item.category)}.`)
 }
 
 export interface NewRaisedCheck extends Pick<
@@ -77,6 +77,6 @@ export async function insertRaisedCheck(tx: GroupTx, check: NewRaisedCheck): Pro
     subjectType: subject.type,
     subjectId: subject.id,
     kitId: subject.kitId,
-    summary: `asked for a ${name} of ${subject.designation} by ${dayText(dueOn)}: ${reason}`,
+    summary: `asked for ${withArticle(name)} of ${subject.designation} by ${dayText(dueOn)}: ${reason}`,
   })
 }

@@ -9,6 +9,7 @@ import {
 import { canBeTested } from '#shared/engine/procedures/subjects.ts'
 import { policyAt } from '#shared/engine/readiness/rules-in-force.ts'
 import type { Rule } from '#shared/engine/readiness/types.ts'
+import { withArticle } from '#shared/engine/readiness/words.ts'
 import { BANDS, type Band, type Procedure } from '#shared/engine/vocabulary.ts'
 import { AppError } from '../../errors.ts'
 import type { GroupTx, Statement } from '../../group-transaction.ts'
@@ -60,7 +61,7 @@ export async function readTestForm(tx: GroupTx, wanted: Asked): Promise<TestForm
   ])
   const { category } = subject
   if (!face || category === 'kit' || !canBeTested(category, procedure))
-    throw new AppError('request-invalid', `This procedure is not done to a ${category}.`)
+    throw new AppError('request-invalid', `This procedure is not done to ${withArticle(category)}.`)
   const policy = policyAt({ policies }, tx.now.getTime())
   if (!policy) throw new Error('A group without a policy')
   const ruleOn = (band: Band | null) => ruleOfTest(policy, { subject, procedure, on: today, band })

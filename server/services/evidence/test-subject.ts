@@ -1,6 +1,7 @@
 import type { RecordTestBody } from '#shared/contracts/record-test.ts'
 import { canBeTested, SUBJECTS } from '#shared/engine/procedures/subjects.ts'
 import type { ItemFacts } from '#shared/engine/readiness/types.ts'
+import { withArticle } from '#shared/engine/readiness/words.ts'
 import type { Category } from '#shared/engine/vocabulary.ts'
 import { AppError, invalidField, notFound } from '../../errors.ts'
 import type { GroupTx, Statement } from '../../group-transaction.ts'
@@ -43,7 +44,7 @@ export async function readSubject(tx: GroupTx, body: RecordTestBody): Promise<Te
   const fitting = Array.isArray(subjects) ? subjects.join(', ') : 'kits'
   throw invalidField(
     '#/itemId',
-    `${item.designation} is a ${item.category}; this procedure is for: ${fitting}.`,
+    `${item.designation} is ${withArticle(item.category)}; this procedure is for: ${fitting}.`,
   )
 }
 

@@ -1,5 +1,6 @@
 import type { z } from 'zod'
 import type { setKitAvailability as contract } from '#shared/contracts/kits.ts'
+import { dayText } from '#shared/engine/readiness/words.ts'
 import type { AppContext } from '../../context.ts'
 import { inGroup } from '../../group-transaction.ts'
 import { record } from '../audit.ts'
@@ -43,9 +44,9 @@ export function setKitAvailability(
   })
 }
 
-/** "set K-10 to assigned until 2026-11-05: training" */
+/** "set K-10 to assigned until 5 Nov 2026: training" */
 function summaryOf(designation: string, { availability, reason, expectedReturnOn }: Body): string {
-  const until = expectedReturnOn ? ` until ${expectedReturnOn}` : ''
+  const until = expectedReturnOn ? ` until ${dayText(expectedReturnOn)}` : ''
   const because = reason ? `: ${reason}` : ''
   return `set ${designation} to ${availability.replaceAll('-', ' ')}${until}${because}`
 }

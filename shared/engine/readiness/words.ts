@@ -10,6 +10,11 @@ export function dayText(day: PlainDate): string {
   return `${Number(day.slice(8))} ${MONTHS[Number(day.slice(5, 7)) - 1]} ${day.slice(0, 4)}`
 }
 
+/** "a heat test", "an antenna": by the first letter, which decides for every word of ours. */
+export function withArticle(noun: string): string {
+  return `${/^[aeiou]/i.test(noun) ? 'an' : 'a'} ${noun}`
+}
+
 /** No more digits than mean something: 84.8 is "85", 12.03 "12", 4.12 "4.1". */
 export function amountText(value: number): string {
   return value >= 10 ? String(Math.round(value)) : String(Math.round(value * 10) / 10)

@@ -173,7 +173,7 @@ describe('availability', () => {
       version: 2,
     })
     const { rows } = (await keeper.get(`/api/v1/history/kit/${kit.id}`)).body
-    expect(rows[0].summary).toBe(`set ${kit.designation} to assigned until 2026-11-05: Training`)
+    expect(rows[0].summary).toBe(`set ${kit.designation} to assigned until 5 Nov 2026: Training`)
     const free = await set(coordinator, answer.body, { availability: 'available' })
     expect(free.body).toMatchObject({ holder: null, expectedReturnOn: null, availabilityReason: '' })
   })
