@@ -106,7 +106,7 @@ function allowance(tested: Tested): Readonly<Record<string, unknown>> {
     allowance: {
       ambientC,
       modes: modes.map(({ mode, allowed }) => ({ mode, ...allowed })),
-      sentence: `At ${figure(ambientC, 0)} °C and ${figure(maxC, 0)} °C at most: ${said.join('; ')}.`,
+      sentence: `On a day of ${figure(ambientC, 0)} °C, to get no hotter than ${figure(maxC, 0)} °C: ${said.join('; ')}.`,
     },
   }
 }

@@ -52,7 +52,7 @@ describe('the model of a heat test', () => {
     // (85 - 35) / (3.41058 x 0.17) = 86.2369 W (sheet, section 6).
     expect(modes[1]?.withoutBreakW).toBeCloseTo(86.2369, 1)
     expect(sentence).toMatch(
-      /^At 35 °C and 85 °C at most: voice at 100 W without a break; digital at 86 W without a break, or full power for \d+\.\d min at a time\.$/,
+      /^On a day of 35 °C, to get no hotter than 85 °C: voice at 100 W without a break; digital at 86 W without a break, or full power for \d+\.\d min at a time\.$/,
     )
   })
 
