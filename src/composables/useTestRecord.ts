@@ -65,7 +65,7 @@ export function useTestRecord({ subject, procedure, corrects, common: start }: R
       procedure,
       ...subject,
       ...words,
-      performedAt: new Date(performedAt).toISOString(),
+      performedAt: instantOf(performedAt),
       ...(instrumentId && { instrumentId }),
       ...(corrects && { supersedes: corrects }),
       ...(attached && { attachmentIds: soundFiles(attached).map(({ id }) => id) }),
@@ -89,6 +89,12 @@ export function commonFrom(form: TestForm): Partial<CommonFields> {
     method: form.lastMethod ?? form.methods[0]?.name ?? '',
     instrumentId: form.lastInstrument?.id ?? form.instruments[0]?.id ?? '',
   }
+}
+
+/** The instant of what a `datetime-local` holds; what is no moment goes out as typed, and the service names the field. */
+export function instantOf(local: string): string {
+  const at = new Date(local)
+  return Number.isNaN(at.getTime()) ? local : at.toISOString()
 }
 
 export function localInput(at: Date): string {
