@@ -63,7 +63,9 @@ export function readThermometerLog(
     )
   const column = columns.temperatures.find(({ place }) => place === answers.column) ?? columns.temperatures[0]
   if (!column) return failure('E_LOG_COLUMNS', 'There is no column of temperatures.')
-  return readRows(rows.slice(columns.from), { columns, column, answers })
+  const read = readRows(rows.slice(columns.from), { columns, column, answers })
+  // Another column may be the right one: the choice stays where this one cannot be read.
+  return isFailure(read) ? { ...read, columns: columns.temperatures } : read
 }
 
 interface Row {
@@ -132,7 +134,10 @@ function readRows(rows: readonly Row[], plan: Plan): ThermometerLog | LogFailure
   }
   if (faults.length > 0) return faulty(faults)
   if (read.length < 2)
-    return failure('E_TOO_FEW', `The log holds ${read.length} reading(s); a heat test needs two.`)
+    return failure(
+      'E_TOO_FEW',
+      `The log holds ${read.length === 1 ? 'one reading' : 'no reading'}; a heat test needs two.`,
+    )
   const at = sinceFirst(read.map(({ time }) => time))
   const back = at.findIndex((seconds, place) => place > 0 && seconds <= (at[place - 1] ?? 0))
   if (back > 0) {
@@ -141,7 +146,7 @@ function readRows(rows: readonly Row[], plan: Plan): ThermometerLog | LogFailure
   }
   const unit = plan.answers.unit ?? plan.column.unit ?? unitIn(rows[0]?.cells[plan.column.place] ?? '')
   const { temperatures } = plan.columns
-  if (unit === null) return { ...failure('E_UNIT', 'The log does not say °C or °F.'), columns: temperatures }
+  if (unit === null) return failure('E_UNIT', 'The log does not say °C or °F.')
   const celsius = (figure: number) => (unit === 'F' ? celsiusFromFahrenheit(figure) : figure)
   const readings = read.map(({ figure }, place) => ({
     atS: at[place] ?? 0,
@@ -176,7 +181,8 @@ function readRow(
 
 function faulty(faults: readonly LogFault[]): LogFailure {
   const [first] = faults
-  const more = faults.length > 1 ? ` ${faults.length - 1} more line(s) have a fault.` : ''
+  const others = faults.length - 1
+  const more = others > 0 ? ` ${others} more ${others === 1 ? 'line has' : 'lines have'} a fault.` : ''
   const message = `Line ${first?.line}, ${first?.column}: ${first?.message}${more}`
   return { code: 'E_LOG_LINE', message, line: first?.line ?? 0, faults: faults.slice(0, MOST_FAULTS) }
 }

@@ -103,6 +103,13 @@ describe('a log with a fault', () => {
     expect(readThermometerLog(source)).toMatchObject({ code, ...(line && { line }) })
   })
 
+  it('leave the choice of another column open', () => {
+    const source = 'Time s,Probe 1 °C,Probe 2 °C\n0,22,---\n60,31,---'
+    const log = readThermometerLog(source, { column: 2 })
+    expect(log).toMatchObject({ code: 'E_LOG_LINE', columns: [{ place: 1 }, { place: 2 }] })
+    expect(log).toMatchObject({ message: expect.stringMatching(/ 1 more line has a fault\.$/) })
+  })
+
   it('of bytes that are no text, or too many, is refused', () => {
     expect(readThermometerLog(new Uint8Array([0xff, 0xfe, 0x41, 0]))).toMatchObject({
       code: 'E_LOG_ENCODING',
