@@ -123,9 +123,10 @@ function lowest({ inputs }: HeatPicture, shown: (celsius: number) => number): nu
 }
 
 /** The limit, every reading and the best curve, with room over it for the words of its end. */
-function highest({ peakC, limits, curve }: HeatPicture, shown: (celsius: number) => number): number {
+function highest({ inputs, limits, curve }: HeatPicture, shown: (celsius: number) => number): number {
   const ends = (curve ?? []).map(({ bestC }) => bestC).filter((celsius) => celsius < limits.maxC * 1.4)
-  const range = extentOf([peakC, limits.maxC * 1.06, ...ends].map(shown)) ?? { low: 0, high: 100 }
+  const read = inputs.readings.map(({ temperatureC }) => temperatureC)
+  const range = extentOf([...read, limits.maxC * 1.06, ...ends].map(shown)) ?? { low: 0, high: 100 }
   return range.high + (curve ? (range.high - range.low) * 0.12 : 0)
 }
 

@@ -16,6 +16,7 @@ export interface HeatPicture {
   readonly curve: readonly HeatCurvePoint[] | null
   /** Where the time axis ends. */
   readonly untilS: number
+  /** Highest while keyed, which is judged; a surface may go on warming once the key is up. */
   readonly peakC: number
   /** The power that each mode allows, as the engine said it then; null where it could not. */
   readonly allowed: string | null
@@ -42,7 +43,10 @@ export function heatPicture(test: StoredTest): HeatPicture {
     curve: isFailure(curve) ? null : curve,
     untilS,
     allowed: (test.results as { allowance?: { sentence?: string } }).allowance?.sentence ?? null,
-    peakC: readings.reduce((peak, { temperatureC }) => Math.max(peak, temperatureC), -Infinity),
+    peakC: readings.reduce(
+      (peak, { atS, temperatureC }) => (atS <= keyUpAtS ? Math.max(peak, temperatureC) : peak),
+      -Infinity,
+    ),
   }
 }
 

@@ -19,7 +19,7 @@ export function heatAnswer({ inputs, limits, peakC }: HeatPicture, text: UnitTex
     return `It reached ${limit} after ${after} at ${at}; the rule asks for ${quantityText(limits.minutes, 'min', 1)} below that.`
   }
   return (
-    `${text(peakC, '°C', 1)} at most in ${minutes(keyUpAtS)} at ${at}: ` +
+    `It got to ${text(peakC, '°C', 1)} in ${minutes(keyUpAtS)} at ${at}, ` +
     `${text(limits.maxC - peakC, 'K', 1)} below the limit of ${limit}.`
   )
 }

@@ -29,8 +29,17 @@ function run(riseK: number, fields: Partial<HeatTestInputs> & { at?: readonly nu
 describe('what a heat test says', () => {
   it('is how hot it got and what is left to the limit', () => {
     expect(plain(heatAnswer(run(100), text))).toBe(
-      '61.3 °C at most in 10 min at 50 W on 10 m: 23.7 K below the limit of 85 °C.',
+      'It got to 61.3 °C in 10 min at 50 W on 10 m, 23.7 K below the limit of 85 °C.',
     )
+  })
+
+  it('counts what was read while keyed, as the judgement does, and draws what came after it', () => {
+    const picture = run(100, { at: [0, 1, 2, 3, 5, 8, 10, 12], keyUpAtS: 600 })
+    expect(picture.peakC).toBe(61.3)
+    const hotter = picture.inputs.readings.with(-1, { atS: 720, temperatureC: 140 })
+    const later = { ...picture, curve: null, inputs: { ...picture.inputs, readings: hotter } }
+    const { marks } = heatLayout(later, { width: 358, height: 380, narrow: true }, (celsius) => celsius)
+    expect(marks.at(-1)!.y).toBeGreaterThan(0)
   })
 
   it('is when it reached the limit, and for how long the rule asks', () => {
