@@ -19,9 +19,12 @@ export function sweepAnswer({ panels, limit }: SweepPicture): string {
   const worst = figures.reduce((a, b) => (b.value > a.value ? b : a), first)
   const asked = limit === null ? '' : ` where at most ${swrText(limit)} is allowed`
   const where = worst.frequencyMHz === null ? '' : ` at ${mhz(worst.frequencyMHz)}`
-  const value =
-    worst.value === Infinity ? swrText(Infinity) : withUncertainty(worst.value, worst.uncertainty, '', 2)
-  return worstFirst(figures, worst.band, `SWR ${value}${where}${asked}`)
+  return worstFirst(figures, worst.band, `SWR ${judgedText(worst)}${where}${asked}`)
+}
+
+/** The judged SWR of a band with its uncertainty; a total reflection is no number. */
+function judgedText({ value, uncertainty }: SweepPanel['worst']): string {
+  return value === Infinity ? swrText(value) : withUncertainty(value, uncertainty, '', 2)
 }
 
 /** How far it has wandered since the baseline: the resonances, or the SWR where no resonance was noted. */
@@ -42,7 +45,9 @@ function largestChange(panels: readonly SweepPanel[]): string | null {
       return was ? [Math.abs(swr - was.swr)] : []
     }),
   )
-  return changes.length === 0 ? null : numberText(Math.max(...changes), 2)
+  const most = Math.max(...changes)
+  // To or from a total reflection is no change in figures; the answer says what it is now.
+  return Number.isFinite(most) ? numberText(most, 2) : null
 }
 
 function movedText({ band, resonanceMHz, before }: SweepPanel): string[] {
@@ -64,9 +69,7 @@ export function sweepTable({ panels, limit, baselineOn }: SweepPicture): ChartTa
         cells: [
           panel.band,
           mhz(point.frequencyMHz),
-          point.frequencyMHz === panel.worst.frequencyMHz
-            ? withUncertainty(point.swr, panel.worst.uncertainty, '', 2)
-            : swrText(point.swr),
+          point.frequencyMHz === panel.worst.frequencyMHz ? judgedText(panel.worst) : swrText(point.swr),
           limit === null ? '' : `${swrText(limit)} at most`,
           point.frequencyMHz === panel.worst.frequencyMHz ? FINDING_WORDS[panel.worst.finding] : '',
           ...first.map(() => earlierText(panel, point.frequencyMHz)),

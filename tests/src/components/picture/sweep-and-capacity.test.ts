@@ -86,6 +86,9 @@ describe('the picture of an antenna sweep', () => {
     const [forty] = sweepLayout(picture, { width: 358, narrow: true })
     expect(forty!.points[0]!.y).toBeCloseTo(forty!.top)
     expect(forty!.yTicks.at(-1)!.label).toBe('all')
+    expect(plain(sweepTable(picture).rows[0]!.cells.join(' | '))).toContain('7.2 MHz | beyond all measure | ')
+    const noted = before({ figures: [{ band: '40 m', measure: 'swr', value: 1.3, frequencyMHz: 7.2 }] })
+    expect(sweepDrift(sweepPicture({ ...total, findings, inputs: { points } }, [noted]))).toEqual([])
   })
 
   it('compares the SWR where no resonance was noted', () => {
