@@ -1,6 +1,7 @@
 import { daysBetween } from '#shared/engine/plain-date.ts'
 import { dayText } from '@/format/day.ts'
 import { numberText, quantityText } from '@/format/quantity.ts'
+import { counted } from '@/words.ts'
 import type { UnitText } from './heat-words.ts'
 import type { TrendPoint, TrendSeries } from './trend-series.ts'
 
@@ -55,9 +56,9 @@ function wetLine(series: readonly TrendSeries[]): string | null {
     const [swrThen, swrNow] = swr ? endsOf(swr) : []
     if (!lossThen || !lossNow || !swrThen || !swrNow) continue
     if (lossNow.value - lossThen.value < LOSS_STEP_DB || swrThen.value - swrNow.value < SWR_STEP) continue
-    const months = Math.round(daysBetween(lossThen.on, lossNow.on) / 30.44)
+    const months = Math.max(1, Math.round(daysBetween(lossThen.on, lossNow.on) / 30.44))
     return (
-      `In ${months} months the loss on ${loss.band} grew from ${quantityText(lossThen.value, 'dB', 2)} to ` +
+      `In ${counted(months, 'month')} the loss on ${loss.band} grew from ${quantityText(lossThen.value, 'dB', 2)} to ` +
       `${quantityText(lossNow.value, 'dB', 2)} while the SWR at the radio fell from ${numberText(swrThen.value, 2)} to ` +
       `${numberText(swrNow.value, 2)}: the line swallows the reflection. Look for water.`
     )

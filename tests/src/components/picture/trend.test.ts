@@ -84,6 +84,11 @@ describe('the history of an item', () => {
     ])
   })
 
+  it('says one month of tests that lie close together', () => {
+    const tests = [line('2026-08-29', 1.4, 1.52), line('2026-09-12', 3.1, 1.33, 1.4)]
+    expect(trendsOf(tests, text)[0]!.answer).toMatch(/^In 1 month the loss on 2 m grew/)
+  })
+
   it('leaves a corrected test out of what it says and draws it crossed', () => {
     const wrong = capacity('2026-09-01', 0.31, { supersededBy: { testId: 'x', reason: 'Wrong battery' } })
     const [trend] = trendsOf([FADING[0]!, wrong, FADING[2]!], text)
