@@ -1,5 +1,6 @@
 import type { compareBuildSheets } from '#shared/contracts/build-figures.ts'
 import type { ResponseOf } from '#shared/contracts/endpoint.ts'
+import { listText } from './figure-text.ts'
 import { numberText, quantityText } from './quantity.ts'
 
 type Comparison = ResponseOf<typeof compareBuildSheets>
@@ -20,7 +21,7 @@ function firstOf(builds: Comparison['builds']): string[] {
   const first = builds.filter(({ rank }) => rank === 1)
   const [best] = first
   if (!best) return []
-  const names = first.map(({ sheet }) => sheet.name).join(' and ')
+  const names = listText(first.map(({ sheet }) => sheet.name))
   return [`First overall: ${names}, ${db(best.meanLossDb)} lost on the mean of the bands.`]
 }
 
@@ -34,7 +35,7 @@ function unusableOf(
       ? ''
       : ` Its mean is ${db(meanLossDb)}, and ${db(meanWithoutWorstDb)} without ${worstBand}.`
   return [
-    `${sheet.name} is unusable on ${unusableBands.join(' and ')}: more than ${quantityText(limitDb, 'dB', 1)} is lost there.${without}`,
+    `${sheet.name} is unusable on ${listText(unusableBands)}: more than ${quantityText(limitDb, 'dB', 1)} is lost there.${without}`,
   ]
 }
 

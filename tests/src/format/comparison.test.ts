@@ -58,6 +58,16 @@ describe('what a comparison says', () => {
     ])
   })
 
+  it('lists several bands as one says them', () => {
+    const given = comparison()
+    const builds = given.builds.map((build) =>
+      build.unusableBands.length > 0
+        ? { ...build, unusableBands: ['20 m', '15 m', '10 m'] satisfies Band[] }
+        : build,
+    )
+    expect(comparisonSentences({ ...given, builds }).join()).toContain('unusable on 20 m, 15 m and 10 m:')
+  })
+
   it('says that heat is not compared, and what was left out', () => {
     const given = { ...comparison(), heat: { verdict: 'not-compared' as const, run: null } }
     const sentences = comparisonSentences({
