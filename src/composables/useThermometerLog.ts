@@ -28,11 +28,14 @@ export function useThermometerLog() {
       message: 'This browser could not read the log: enter it by hand.',
     }
     const found = await askEngine('read-log', asked).catch(() => away)
+    // Another log or another answer came meanwhile, or the log was taken over.
+    if (asked.source !== source || asked.answers !== answers.value) return
     log.value = isFailure(found) ? null : found
     failure.value = isFailure(found) ? found : null
   }
 
   function forget(): void {
+    source = ''
     log.value = null
     failure.value = null
   }
