@@ -33,6 +33,7 @@ export interface HeldFiles {
  */
 export function useHeldFiles(usualKind: AttachmentKind, most: number): HeldFiles {
   const list = shallowRef<readonly HeldFile[]>([])
+  let isGone = false
 
   const change = (id: string, changes: Partial<HeldFile>) =>
     void (list.value = list.value.map((held) => (held.id === id ? { ...held, ...changes } : held)))
@@ -47,6 +48,8 @@ export function useHeldFiles(usualKind: AttachmentKind, most: number): HeldFiles
 
   async function read({ id, name, content }: HeldFile): Promise<void> {
     const bytes = new Uint8Array(await content.arrayBuffer())
+    // Taken out meanwhile: what the worker gets now nobody would take back from it.
+    if (isGone || !list.value.some((held) => held.id === id)) return
     try {
       const facts = await askEngine('read-file', { id, fileName: name, bytes })
       if (isFailure(facts)) change(id, { state: 'refused', failure: facts })
@@ -63,11 +66,14 @@ export function useHeldFiles(usualKind: AttachmentKind, most: number): HeldFiles
   }
 
   function forget(id: string): void {
-    if (list.value.some((held) => held.id === id && held.facts))
+    if (list.value.some((held) => held.id === id && held.kind === 'touchstone' && held.content.size > 0))
       void askEngine('forget-file', { id }).catch(() => undefined)
   }
 
-  onScopeDispose(() => list.value.forEach(({ id }) => forget(id)))
+  onScopeDispose(() => {
+    isGone = true
+    list.value.forEach(({ id }) => forget(id))
+  })
 
   return { list, add, remove, markUploaded: (id) => change(id, { uploaded: true }) }
 }
