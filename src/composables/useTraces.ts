@@ -1,4 +1,4 @@
-import { onScopeDispose, shallowRef } from 'vue'
+import { shallowRef } from 'vue'
 import { downloadAttachment, type TestAttachment } from '#shared/contracts/attachments.ts'
 import type { StoredTest } from '#shared/contracts/test-shapes.ts'
 import { isFailure } from '#shared/engine/outcome.ts'
@@ -29,16 +29,16 @@ export function useTraces(test: StoredTest, roles: readonly TestAttachment['role
   }
 
   void read()
-  onScopeDispose(() => {
-    for (const { id } of files) void askEngine('forget-file', { id }).catch(() => undefined)
-  })
   return state
 }
 
 async function traceOf({ id, name, role }: TestAttachment): Promise<RoleTrace[]> {
   const file = await callForFile(downloadAttachment, { params: { attachmentId: id } })
   const bytes = new Uint8Array(await file.arrayBuffer())
-  await askEngine('read-file', { id, fileName: name, bytes })
-  const trace = await askEngine('swr-trace', { id })
+  const reading = askEngine('read-file', { id, fileName: name, bytes })
+  const tracing = askEngine('swr-trace', { id })
+  // Asked in order: the worker keeps no file beyond its trace, also where the page is left before it has come.
+  void askEngine('forget-file', { id }).catch(() => undefined)
+  const [, trace] = await Promise.all([reading, tracing])
   return trace === null || isFailure(trace) ? [] : [{ role, ...trace }]
 }
