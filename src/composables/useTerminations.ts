@@ -29,7 +29,7 @@ export function useTerminations(held: HeldFiles) {
     failure.value = null
     if (asked.length !== 3) return
     const answer = await askEngine('recognise', { ids: asked }).catch(() => null)
-    if (!answer || asked !== ids.value) return
+    if (!answer || asked.join() !== ids.value.join()) return
     if (isFailure(answer)) return void (failure.value = answer)
     const { assignment, by, warnings, suggestion } = answer
     roles.value = rolesOf(assignment, asked)
