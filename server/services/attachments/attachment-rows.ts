@@ -17,15 +17,15 @@ export const ATTACHMENT_COLUMNS = 'a.id, a.kind, a.name, a.media_type, a.size, a
 
 const READ: Statement = {
   name: 'read-attachment',
-  text: `SELECT ${ATTACHMENT_COLUMNS} FROM attachment a WHERE a.id = $1`,
+  text: `SELECT ${ATTACHMENT_COLUMNS} FROM attachment a WHERE a.group_id = $1 AND a.id = $2`,
 }
 const CONTENT: Statement = {
   name: 'attachment-content',
-  text: `SELECT ${ATTACHMENT_COLUMNS}, a.content FROM attachment a WHERE a.id = $1`,
+  text: `SELECT ${ATTACHMENT_COLUMNS}, a.content FROM attachment a WHERE a.group_id = $1 AND a.id = $2`,
 }
 
 export async function findAttachment(tx: GroupTx, id: string): Promise<AttachmentRow | undefined> {
-  return (await tx.sql<AttachmentRow>(READ, [id]))[0]
+  return (await tx.sql<AttachmentRow>(READ, [tx.groupId, id]))[0]
 }
 
 export async function readAttachmentOf(tx: GroupTx, id: string): Promise<AttachmentRecord> {
@@ -38,7 +38,7 @@ export async function readContent(
   tx: GroupTx,
   id: string,
 ): Promise<AttachmentRow & { readonly content: Buffer }> {
-  const [row] = await tx.sql<AttachmentRow & { content: Buffer }>(CONTENT, [id])
+  const [row] = await tx.sql<AttachmentRow & { content: Buffer }>(CONTENT, [tx.groupId, id])
   if (!row) throw notFound('file')
   return row
 }

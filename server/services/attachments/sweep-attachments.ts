@@ -7,7 +7,7 @@ const KEPT_MS = 24 * 60 * 60_000
 
 const UNUSED: Statement = {
   name: 'sweep-attachments',
-  text: `DELETE FROM attachment a WHERE a.uploaded_at < $1
+  text: `DELETE FROM attachment a WHERE a.group_id = $1 AND a.uploaded_at < $2
     AND NOT EXISTS (SELECT FROM test_attachment t WHERE t.attachment_id = a.id)`,
 }
 
@@ -15,5 +15,7 @@ const UNUSED: Statement = {
 export async function sweepAttachments(ctx: AppContext): Promise<void> {
   const before = new Date(ctx.clock.now().getTime() - KEPT_MS)
   for (const { id: groupId } of await listGroups(ctx))
-    await inGroup(ctx, { groupId, actor: systemActor('sweep-attachments') }, (tx) => tx.sql(UNUSED, [before]))
+    await inGroup(ctx, { groupId, actor: systemActor('sweep-attachments') }, (tx) =>
+      tx.sql(UNUSED, [groupId, before]),
+    )
 }

@@ -27,8 +27,8 @@ interface FileRow {
 
 const NAMED: Statement = {
   name: 'files-of-new-test',
-  text: `SELECT id, kind, name, CASE WHEN id = ANY($2::uuid[]) THEN content END AS content
-    FROM attachment WHERE id = ANY($1::uuid[])`,
+  text: `SELECT id, kind, name, CASE WHEN id = ANY($3::uuid[]) THEN content END AS content
+    FROM attachment WHERE group_id = $1 AND id = ANY($2::uuid[])`,
 }
 
 /** The files that a test names; a fault of the field when one is not in the group or of the wrong kind. */
@@ -37,7 +37,7 @@ export async function namedFiles(tx: GroupTx, body: RecordTestBody): Promise<Nam
   const readIds = read.map(({ id }) => id)
   const beside = (body.attachmentIds ?? []).filter((id) => !readIds.includes(id))
   if (read.length + beside.length === 0) return { links: [], sources: {} }
-  const rows = await tx.sql<FileRow>(NAMED, [[...readIds, ...beside], readIds])
+  const rows = await tx.sql<FileRow>(NAMED, [tx.groupId, [...readIds, ...beside], readIds])
   const byId = new Map(rows.map((row) => [row.id, row]))
   const faults = [
     ...read.flatMap(({ id, role }) => fault(`#/inputs/${role}`, byId.get(id), true)),
@@ -71,7 +71,7 @@ const sourceOf = ({ id, name, content }: FileRow): [string, FileSource][] =>
 /** The bytes of files by their ids, such as those of a baseline. */
 export async function fileSources(tx: GroupTx, ids: readonly string[]): Promise<FileSources> {
   if (ids.length === 0) return {}
-  return Object.fromEntries((await tx.sql<FileRow>(NAMED, [ids, ids])).flatMap(sourceOf))
+  return Object.fromEntries((await tx.sql<FileRow>(NAMED, [tx.groupId, ids, ids])).flatMap(sourceOf))
 }
 
 const LINK: Statement = {
@@ -92,10 +92,10 @@ interface LinkedRow extends AttachmentRow {
 const OF_TEST: Statement = {
   name: 'files-of-test',
   text: `SELECT ${ATTACHMENT_COLUMNS}, t.role FROM test_attachment t JOIN attachment a ON a.id = t.attachment_id
-    WHERE t.test_id = $1 ORDER BY t.ordinal`,
+    WHERE t.group_id = $1 AND t.test_id = $2 ORDER BY t.ordinal`,
 }
 
 export async function filesOfTest(tx: GroupTx, testId: string): Promise<TestAttachment[]> {
-  const rows = await tx.sql<LinkedRow>(OF_TEST, [testId])
+  const rows = await tx.sql<LinkedRow>(OF_TEST, [tx.groupId, testId])
   return rows.map((row) => ({ ...attachmentOf(row), role: row.role }))
 }
