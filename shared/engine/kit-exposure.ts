@@ -71,8 +71,17 @@ function bandExposure(place: Place, use: ExposureUse): Outcome<BandExposure> {
   if (isFailure(general)) return general
   const feedPoint = voltageAt(place, use)
   if (isFailure(feedPoint)) return feedPoint
-  const { warnings, ...distance } = general
-  return { ...place, controlled: withoutWarnings(controlled), general: distance, feedPoint, warnings }
+  // The nearer of two distances may lie in the near field alone; where both do they say the same.
+  const warnings = [
+    ...new Map([...general.warnings, ...controlled.warnings].map((one) => [one.code, one])).values(),
+  ]
+  return {
+    ...place,
+    controlled: withoutWarnings(controlled),
+    general: withoutWarnings(general),
+    feedPoint,
+    warnings,
+  }
 }
 
 const withoutWarnings = ({ averageW, distanceM, covered }: TierDistance): TierDistance => ({

@@ -15,6 +15,13 @@ describe('the exposure record of a kit', () => {
     expect(row?.warnings.map(({ code }) => code)).toEqual(['W_NEAR_FIELD'])
   })
 
+  it('warns of the near field where only the shorter of the two distances lies within it (section 11)', () => {
+    // Within wavelength/(2 pi), 1.61 m at 29.7 MHz: 1.57 m for the controlled tier, 3.5 m for everybody.
+    const [row] = valueOf(kitExposure([{ band: '10 m', pepAtAntennaW: 75 }], USE, 'itu-2'))
+    expect([row?.controlled.distanceM, row?.general.distanceM].map((m) => m! < 1.61)).toEqual([true, false])
+    expect(row?.warnings.map(({ code }) => code)).toEqual(['W_NEAR_FIELD'])
+  })
+
   it('averages over the window of each tier (sheet: 5 minutes of 10 in 30 are half)', () => {
     const use = { ...USE, emission: 'ssb-conversational', onMinutes: 5, offMinutes: 5 } as const
     const [row] = valueOf(kitExposure([{ band: '20 m', pepAtAntennaW: 100 }], use, 'itu-2'))
