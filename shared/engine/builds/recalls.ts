@@ -3,7 +3,7 @@ import type { PlainDate } from '../plain-date.ts'
 import { answerOf } from '../readiness/doubt.ts'
 import type { Moment } from '../readiness/moment.ts'
 import type { EpochMs, Evidence, RaisedCheck } from '../readiness/types.ts'
-import type { Band, FindingWord, Procedure } from '../vocabulary.ts'
+import { FINDINGS, type Band, type FindingWord, type Procedure } from '../vocabulary.ts'
 import { isInUse, type BatchUnit } from './recall-units.ts'
 
 /** The check of one unit that a recall raised. */
@@ -60,12 +60,15 @@ function recalledUnit(moment: Moment, check: RecallCheck, unit: BatchUnit | unde
   }
 }
 
-/** A recall of the whole unit waits for a test on every band that the unit is for. */
+/** A recall of the whole unit waits for a test on every band that the unit is for; the worst of them is its answer. */
 function answerOnAll(moment: Moment, check: RecallCheck, unit: BatchUnit | undefined): Evidence | undefined {
   const bands = check.band === null && unit?.bands?.length ? unit.bands : [null]
   const answers = bands.map((band) => answerOf(moment, check, band))
-  return answers.every((answer) => answer !== undefined) ? answers[0] : undefined
+  return answers.every((answer) => answer !== undefined) ? answers.reduce(worse) : undefined
 }
+
+const worse = (a: Evidence, b: Evidence) =>
+  FINDINGS.indexOf(b.finding) > FINDINGS.indexOf(a.finding) ? b : a
 
 function stateOf(
   { withdrawnAt }: RecallCheck,

@@ -170,6 +170,19 @@ describe('a recall', () => {
     expect((await recallsOf(batchId)).recalls[0]?.waiting).toBe(0)
   })
 
+  it('of the whole unit has found what the worst of its bands showed', async () => {
+    const batchId = await givenBatchOf(keeper, await givenBuildSheet(keeper))
+    const details = { category: 'transformer', bands: ['40 m', '10 m'] }
+    const unit = await givenItem(keeper, 'transformer', { batchId, details })
+    await recall(batchId, { band: null }).expect(200)
+    later()
+    await recorded(keeper, heatTest(unit.id, common(), { band: '40 m' }))
+    const failed = await recorded(keeper, stoppedHeatTest(unit.id, common(), '10 m'))
+    expect((await recallsOf(batchId)).recalls[0]?.units).toMatchObject([
+      { state: 'tested', finding: 'fail', testId: failed.id },
+    ])
+  })
+
   it('does not wait for a unit whose check was taken back, and is not proposed for it again', async () => {
     const { batchId, units } = await givenBatch(2)
     await recorded(keeper, stoppedHeatTest(units[0]!.id, common()))
