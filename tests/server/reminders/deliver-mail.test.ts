@@ -107,6 +107,21 @@ describe('the mail outbox', () => {
     }
   })
 
+  it('goes out without a pause when one transaction queues more than a worker takes at a time', async () => {
+    const count = 120
+    const jobs = await startJobs(app.ctx, smtpTransport(fake.smtpUrl))
+    try {
+      await app.inGroup(group, async (tx) => {
+        for (let at = 0; at < count; at += 1)
+          await queueMail(tx, { recipient: 'lupe@example.org', subject: 'a crowd', text: 'x', html: 'x' })
+      })
+      const sent = () => fake.mails().filter(({ subject }) => subject === 'a crowd').length
+      await expect.poll(sent, { timeout: 4000 }).toBe(count)
+    } finally {
+      await jobs.stop()
+    }
+  }, 20_000)
+
   it('is not sent when its transaction fails', async () => {
     const failing = app.inGroup(group, async (tx) => {
       await queueMail(tx, { recipient: 'lupe@example.org', subject: 'never', text: 'x', html: 'x' })
