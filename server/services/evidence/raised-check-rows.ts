@@ -31,7 +31,8 @@ export const RAISED_CHECK_SELECT = `SELECT r.id, r.procedure, r.item_id, r.kit_i
 
 const READ: Statement = {
   name: 'read-raised-checks',
-  text: `${RAISED_CHECK_SELECT} WHERE r.id = ANY($1::uuid[]) ORDER BY designation, r.id`,
+  text: `${RAISED_CHECK_SELECT} WHERE r.group_id = $1 AND r.id = ANY($2::uuid[])
+    ORDER BY designation, r.id`,
 }
 const OPEN: Statement = {
   name: 'raised-checks-of-kit',
@@ -40,7 +41,7 @@ const OPEN: Statement = {
 }
 
 export async function readRaisedChecks(tx: GroupTx, ids: readonly string[]): Promise<RaisedCheckAnswer[]> {
-  return (await tx.sql<RaisedCheckRow>(READ, [[...ids]])).map(raisedCheckOf)
+  return (await tx.sql<RaisedCheckRow>(READ, [tx.groupId, [...ids]])).map(raisedCheckOf)
 }
 
 export async function readRaisedCheck(tx: GroupTx, id: string): Promise<RaisedCheckAnswer> {

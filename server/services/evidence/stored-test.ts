@@ -38,26 +38,30 @@ const TEST: Statement = {
       t.supersedes_reason, s.supersedes_reason AS superseded_reason
     FROM test t ${SUMMARY_JOINS}
     JOIN member m ON m.id = t.recorded_by JOIN policy p ON p.id = t.policy_id LEFT JOIN rule r ON r.id = t.rule_id
-    WHERE t.id = $1`,
+    WHERE t.group_id = $1 AND t.id = $2`,
 }
 const EFFECTS: Statement = {
   name: 'stored-test-effects',
   text: `SELECT e.kit_id AS "kitId", k.designation, e.verdict_before AS before, e.verdict_after AS after, e.sentences
-    FROM test_effect e JOIN kit k ON k.id = e.kit_id WHERE e.test_id = $1 ORDER BY k.designation`,
+    FROM test_effect e JOIN kit k ON k.id = e.kit_id WHERE e.group_id = $1 AND e.test_id = $2
+    ORDER BY k.designation`,
 }
-const HASH: Statement = { name: 'stored-test-hash', text: 'SELECT content_hash FROM test WHERE id = $1' }
+const HASH: Statement = {
+  name: 'stored-test-hash',
+  text: 'SELECT content_hash FROM test WHERE group_id = $1 AND id = $2',
+}
 
 /** The hash of what was sent under this id, or null when the id is free in the group. */
 export async function storedHash(tx: GroupTx, testId: string): Promise<Buffer | null> {
-  const [row] = await tx.sql<{ content_hash: Buffer }>(HASH, [testId])
+  const [row] = await tx.sql<{ content_hash: Buffer }>(HASH, [tx.groupId, testId])
   return row?.content_hash ?? null
 }
 
 /** A test as it is answered; 404 when it is not in the group. */
 export async function readStoredTest(tx: GroupTx, testId: string): Promise<StoredTest> {
   const [[row], effects, attachments, recalls] = await Promise.all([
-    tx.sql<TestRow>(TEST, [testId]),
-    tx.sql<TestEffect & Record<string, unknown>>(EFFECTS, [testId]),
+    tx.sql<TestRow>(TEST, [tx.groupId, testId]),
+    tx.sql<TestEffect & Record<string, unknown>>(EFFECTS, [tx.groupId, testId]),
     filesOfTest(tx, testId),
     proposedRecalls(tx, testId),
   ])

@@ -31,9 +31,13 @@ interface ItemRow {
 
 const ITEM: Statement = {
   name: 'test-item',
-  text: `SELECT id, designation, category, details, acquired_on::text, kit_id FROM item WHERE id = $1`,
+  text: `SELECT id, designation, category, details, acquired_on::text, kit_id FROM item
+    WHERE group_id = $1 AND id = $2`,
 }
-const KIT: Statement = { name: 'test-kit', text: 'SELECT id, designation FROM kit WHERE id = $1' }
+const KIT: Statement = {
+  name: 'test-kit',
+  text: 'SELECT id, designation FROM kit WHERE group_id = $1 AND id = $2',
+}
 
 /** 404 when it is not in the group, a fault of the field when the procedure is not done to such a thing. */
 export async function readSubject(tx: GroupTx, body: RecordTestBody): Promise<TestSubject> {
@@ -49,7 +53,7 @@ export async function readSubject(tx: GroupTx, body: RecordTestBody): Promise<Te
 }
 
 export async function readItemSubject(tx: GroupTx, itemId: string): Promise<TestSubject> {
-  const [row] = await tx.sql<ItemRow>(ITEM, [itemId])
+  const [row] = await tx.sql<ItemRow>(ITEM, [tx.groupId, itemId])
   if (!row) throw notFound('item')
   return {
     type: 'item',
@@ -63,7 +67,7 @@ export async function readItemSubject(tx: GroupTx, itemId: string): Promise<Test
 }
 
 export async function readKitSubject(tx: GroupTx, kitId: string): Promise<TestSubject> {
-  const [row] = await tx.sql<{ id: string; designation: string }>(KIT, [kitId])
+  const [row] = await tx.sql<{ id: string; designation: string }>(KIT, [tx.groupId, kitId])
   if (!row) throw notFound('kit')
   return { type: 'kit', ...row, category: 'kit', facts: {}, details: {}, kitId: row.id }
 }
@@ -78,22 +82,25 @@ interface InstrumentRow {
 
 const INSTRUMENT: Statement = {
   name: 'test-instrument',
-  text: 'SELECT id, designation, category, details FROM item WHERE id = $1',
+  text: 'SELECT id, designation, category, details FROM item WHERE group_id = $1 AND id = $2',
 }
-const OPERATOR: Statement = { name: 'test-operator', text: 'SELECT id, name FROM member WHERE id = $1' }
+const OPERATOR: Statement = {
+  name: 'test-operator',
+  text: 'SELECT id, name FROM member WHERE group_id = $1 AND id = $2',
+}
 
 /** The instrument named, or null where none is. Faults name the field. */
 export async function readInstrument(tx: GroupTx, body: RecordTestBody): Promise<InstrumentRow | null> {
   if (body.instrumentId === undefined) return null
   if ('itemId' in body && body.instrumentId === body.itemId)
     throw invalidField('#/instrumentId', 'A thing cannot be measured with itself.')
-  const [row] = await tx.sql<InstrumentRow>(INSTRUMENT, [body.instrumentId])
+  const [row] = await tx.sql<InstrumentRow>(INSTRUMENT, [tx.groupId, body.instrumentId])
   if (!row) throw invalidField('#/instrumentId', 'There is no such instrument in your group.')
   return row
 }
 
 export async function readOperator(tx: GroupTx, operatorId: string): Promise<{ id: string; name: string }> {
-  const [row] = await tx.sql<{ id: string; name: string }>(OPERATOR, [operatorId])
+  const [row] = await tx.sql<{ id: string; name: string }>(OPERATOR, [tx.groupId, operatorId])
   if (!row) throw invalidField('#/operatorId', 'There is no such member in your group.')
   return row
 }
@@ -108,14 +115,14 @@ interface SupersededRow {
 const SUPERSEDED: Statement = {
   name: 'test-superseded',
   text: `SELECT t.procedure, coalesce(t.item_id, t.kit_id) AS subject_id,
-      EXISTS (SELECT FROM test s WHERE s.supersedes_id = t.id AND s.id <> $2) AS taken
-    FROM test t WHERE t.id = $1`,
+      EXISTS (SELECT FROM test s WHERE s.supersedes_id = t.id AND s.id <> $3) AS taken
+    FROM test t WHERE t.group_id = $1 AND t.id = $2`,
 }
 
 /** The test that is corrected must be there, about the same thing, and not corrected before. */
 export async function checkSuperseded(tx: GroupTx, testId: string, body: RecordTestBody): Promise<void> {
   if (!body.supersedes) return
-  const [row] = await tx.sql<SupersededRow>(SUPERSEDED, [body.supersedes.testId, testId])
+  const [row] = await tx.sql<SupersededRow>(SUPERSEDED, [tx.groupId, body.supersedes.testId, testId])
   const subjectId = 'kitId' in body ? body.kitId : body.itemId
   if (!row) throw invalidField('#/supersedes/testId', 'There is no such test in your group.')
   if (row.procedure !== body.procedure || row.subject_id !== subjectId)

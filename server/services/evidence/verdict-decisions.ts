@@ -29,7 +29,10 @@ interface DecisionRow {
 const SELECT = `SELECT d.id, d.kit_id, d.kind, d.to_verdict, d.reason, d.from_at, d.until_at, m.name AS decided_by,
     d.withdrawn_at
   FROM verdict_decision d JOIN member m ON m.id = d.decided_by`
-const READ: Statement = { name: 'read-decision', text: `${SELECT} WHERE d.id = $1` }
+const READ: Statement = {
+  name: 'read-decision',
+  text: `${SELECT} WHERE d.group_id = $1 AND d.id = $2`,
+}
 const OF_KIT: Statement = {
   name: 'decisions-of-kit',
   text: `${SELECT} WHERE d.kit_id = $1 AND d.withdrawn_at IS NULL AND (d.until_at IS NULL OR d.until_at > $2)
@@ -53,7 +56,7 @@ export async function decideVerdict(
 ): Promise<DecisionAnswer> {
   await lockNewId(tx, decisionId)
   const kit = await readKitSubject(tx, kitId)
-  const [known] = await tx.sql<DecisionRow>(READ, [decisionId])
+  const [known] = await tx.sql<DecisionRow>(READ, [tx.groupId, decisionId])
   const toVerdict = body.kind === 'lowered' ? body.toVerdict : null
   const untilAt = body.untilAt === undefined ? null : new Date(body.untilAt)
   if (known) return sameAgain(known, { kitId, kind: body.kind, toVerdict, reason: body.reason, untilAt })
@@ -99,7 +102,7 @@ export async function decisionsOfKit(tx: GroupTx, kitId: string, at: Date): Prom
 }
 
 async function readDecision(tx: GroupTx, decisionId: string): Promise<DecisionAnswer> {
-  const [row] = await tx.sql<DecisionRow>(READ, [decisionId])
+  const [row] = await tx.sql<DecisionRow>(READ, [tx.groupId, decisionId])
   if (!row) throw notFound('decision')
   return decisionOf(row)
 }

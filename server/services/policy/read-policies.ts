@@ -28,7 +28,10 @@ const LIST: Statement = {
   name: 'list-policies',
   text: `SELECT ${COLUMNS} ${FROM} WHERE p.group_id = $1 ORDER BY p.number DESC LIMIT $2 OFFSET $3`,
 }
-const READ: Statement = { name: 'read-policy', text: `SELECT ${COLUMNS} ${FROM} WHERE p.id = $1` }
+const READ: Statement = {
+  name: 'read-policy',
+  text: `SELECT ${COLUMNS} ${FROM} WHERE p.group_id = $1 AND p.id = $2`,
+}
 const RULES: Statement = {
   name: 'read-policy-rules',
   text: `SELECT id, category, procedure, applies, interval_months AS "intervalMonths", warning_days AS "warningDays",
@@ -54,7 +57,7 @@ export async function readCurrentPolicy(tx: GroupTx): Promise<PolicyAnswer> {
 
 export async function readPolicy(tx: GroupTx, policyId: string): Promise<PolicyAnswer> {
   const [[row], rules, versions] = await Promise.all([
-    tx.sql<PolicyRow>(READ, [policyId]),
+    tx.sql<PolicyRow>(READ, [tx.groupId, policyId]),
     tx.sql<PolicyAnswer['rules'][number]>(RULES, [policyId]),
     policiesOrFirst(tx),
   ])

@@ -28,7 +28,7 @@ const FACE: Statement = {
       place.id AS place_id, place.name AS place
     FROM kit k JOIN kit_kind kk ON kk.id = k.kit_kind_id
     LEFT JOIN place home ON home.id = k.home_place_id LEFT JOIN place ON place.id = k.place_id
-    WHERE k.id = $1`,
+    WHERE k.group_id = $1 AND k.id = $2`,
 }
 
 export type KitFace = Pick<
@@ -47,7 +47,7 @@ export type KitFace = Pick<
 
 /** What a kit is, where it is and whether it may go: today. 404 when it is not in the group. */
 export async function readKitFace(tx: GroupTx, kitId: string): Promise<KitFace> {
-  const [row] = await tx.sql<FaceRow>(FACE, [kitId])
+  const [row] = await tx.sql<FaceRow>(FACE, [tx.groupId, kitId])
   if (!row) throw notFound('kit')
   return {
     kitId: row.id,
