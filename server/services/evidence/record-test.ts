@@ -2,6 +2,7 @@ import type { RecordTestBody } from '#shared/contracts/record-test.ts'
 import type { StoredTest } from '#shared/contracts/test-shapes.ts'
 import { isFailure, type Failure } from '#shared/engine/outcome.ts'
 import { filesWanted, judgePerformance } from '#shared/engine/procedures/judge-performance.ts'
+import { INPUT_ROWS } from '#shared/engine/procedures/input-rows.ts'
 import type { Judgement } from '#shared/engine/procedures/judgement.ts'
 import type { KnownForTest } from '#shared/engine/procedures/performance.ts'
 import { filesNamed, type FileSources } from '#shared/engine/procedures/test-files.ts'
@@ -177,14 +178,8 @@ function judgementOf(body: RecordTestBody, sources: FileSources, known: KnownFor
   })
 }
 
-/** Where the rows of a procedure's inputs stand, for a failure that names one by its number. */
-const ROWS: Partial<Record<RecordTestBody['procedure'], string>> = {
-  'heat-test': 'readings',
-  'pair-loss': 'bands',
-}
-
 function pointerTo(procedure: RecordTestBody['procedure'], { field, line }: Failure): string {
-  const rows = ROWS[procedure]
+  const rows = INPUT_ROWS[procedure]
   const row = line === undefined || rows === undefined ? [] : [rows, line - 1]
   return ['#/inputs', ...row, ...(field === undefined ? [] : [field])].join('/')
 }
