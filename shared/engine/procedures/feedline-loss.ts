@@ -84,10 +84,11 @@ function lossFinding(
   }
   // Rounded to a millionth: 1.4 + 0.8 must not fail 2.2 for its binary fraction.
   const max = Number((baselineDb + maxRiseDb).toFixed(6))
+  const side = lossDb < baselineDb ? 'under' : 'over'
   return findingOf({
     ...loss,
     finding: judgeAtMost(lossDb, max, uncertainty),
     limit: `${figure(max, 2)} dB: baseline ${figure(baselineDb, 2)} dB and ${figure(maxRiseDb, 2)} dB`,
-    text: `${text}, ${figure(lossDb - baselineDb, 2)} dB over its baseline`,
+    text: `${text}, ${figure(Math.abs(lossDb - baselineDb), 2)} dB ${side} its baseline`,
   })
 }

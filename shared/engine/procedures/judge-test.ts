@@ -21,7 +21,7 @@ import type { TestFiles } from './test-files.ts'
 export type { KnownForTest, Performance } from './performance.ts'
 
 /** Raised with every change that can change a result or a finding; stored with each test. */
-export const ENGINE_VERSION = '2'
+export const ENGINE_VERSION = '3'
 
 /**
  * `files` holds the parsed files that the inputs name, by their attachment's id, and the baseline's; see

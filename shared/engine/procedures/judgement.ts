@@ -48,9 +48,9 @@ export function judgementOf(
   return { results, findings, finding: worstOf(findings), warnings }
 }
 
-/** A figure for a sentence: fixed digits without trailing zeros. */
+/** A figure for a sentence: fixed digits without trailing zeros, and a minus that is no hyphen. */
 export function figure(value: number, digits: number): string {
-  return String(Number(value.toFixed(digits)))
+  return String(Number(value.toFixed(digits))).replace('-', '−')
 }
 
 /** 0.8125 as "81 %", with a digit more where rounding would reach the limit. */

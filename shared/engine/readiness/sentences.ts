@@ -123,7 +123,7 @@ export function batteryText(name: string, share: BatteryShare, atC: number): str
   const counted = tooGood ? `, counted as ${Math.round(MOST_CAPACITY_FRACTION * 100)} %` : ''
   const measured = `${Math.round(share.capacityFraction * 1000) / 10} % measured${counted}`
   const usable = `${Math.round(share.depth * 100)} % of it usable`
-  const left = `${Math.round(share.temperatureFactor * 100)} % at ${atC} °C`
+  const left = `${Math.round(share.temperatureFactor * 100)} % at ${String(atC).replace('-', '−')} °C`
   return `${name}: ${amountText(share.ratedAh)} Ah, ${measured}, ${usable}, ${left}`
 }
 

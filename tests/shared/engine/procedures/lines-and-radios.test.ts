@@ -45,6 +45,14 @@ describe('a feedline test', () => {
     expect(judge(lossDb, { baselineDb: { '2 m': 1.4 } }).finding).toBe(word)
   })
 
+  it('says on which side of its baseline a line is', () => {
+    const said = (lossDb: number) => judge(lossDb, { baselineDb: { '2 m': 1.4 } }).findings[0]?.text
+    expect([said(1.6), said(1.1)]).toEqual([
+      '1.6 dB, 0.2 dB over its baseline',
+      '1.1 dB, 0.3 dB under its baseline',
+    ])
+  })
+
   it('makes the first test of a line its baseline', () => {
     const [finding] = judge(1.4, { baselineDb: {} }).findings
     expect(finding).toMatchObject({ finding: 'pass', text: '1.4 dB, the baseline for later tests' })

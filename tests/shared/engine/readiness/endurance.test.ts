@@ -45,7 +45,7 @@ describe('a lithium battery', () => {
     const settings = { enduranceC: -10 }
     const cold = endurance({ facts: lithium, percent: 100, loadA: 2, settings })
     expect(cold.usableAh).toBeCloseTo(20 * 0.8 * 0.8, 9)
-    expect(cold.hoursFactors.join()).toContain('80 % at -10 °C')
+    expect(cold.hoursFactors.join()).toContain('80 % at −10 °C')
   })
 
   it('lasts longer at less load in proportion', () => {
