@@ -7,7 +7,15 @@ import { failure, isFailure, type Outcome, type Warning } from '../outcome.ts'
 import { temperatureFactor } from '../readiness/temperature-factor.ts'
 import type { Chemistry } from '../vocabulary.ts'
 import { expandedUncertainty, type Accuracy } from './accuracy.ts'
-import { figure, findingOf, judgeAtLeast, judgementOf, percent, type Judgement } from './judgement.ts'
+import {
+  figure,
+  findingOf,
+  judgeAtLeast,
+  judgementOf,
+  percent,
+  shareText,
+  type Judgement,
+} from './judgement.ts'
 
 export interface BatteryCapacityInputs {
   /** Ah taken out down to the cut-off; or else current times hours. */
@@ -57,7 +65,11 @@ export function judgeBatteryCapacity(inputs: BatteryCapacityInputs, known: Known
     uncertainty,
     finding: judgeAtLeast(fraction, minCapacityFraction, uncertainty),
     limit: `${percent(minCapacityFraction)} of ${figure(ratedAh, 1)} Ah at 25 °C`,
-    text: capacityText({ measuredAh, fraction, temperatureC: inputs.temperatureC, factor }),
+    text: capacityText(shareText(fraction, minCapacityFraction, 1), {
+      measuredAh,
+      temperatureC: inputs.temperatureC,
+      factor,
+    }),
   })
   const results = { measuredAh, referredAh, fraction, measuredFraction: measuredAh / ratedAh, factor }
   return judgementOf(results, [finding], fastDischarge(measuredAh, inputs, chemistry))
@@ -79,15 +91,12 @@ function ampereHours({ measuredAh, currentA, hours }: BatteryCapacityInputs): Ou
   return failure('E_MISSING', `A voltage says nothing about capacity. ${message}`, { field: 'measuredAh' })
 }
 
-function capacityText(found: {
-  measuredAh: number
-  fraction: number
-  temperatureC: number
-  factor: number
-}): string {
-  const { measuredAh, fraction, temperatureC, factor } = found
+function capacityText(
+  held: string,
+  { measuredAh, temperatureC, factor }: { measuredAh: number; temperatureC: number; factor: number },
+): string {
   const measured = `${figure(measuredAh, 1)} Ah at ${figure(temperatureC, 0)} °C`
-  const share = `${percent(fraction, 1)} of its rating`
+  const share = `${held} of its rating`
   return factor === 1 ? `${share}: ${measured}` : `${share} referred to 25 °C: ${measured}`
 }
 

@@ -6,7 +6,7 @@ import type { SweepPoint } from '../sweep-point.ts'
 import type { Band } from '../vocabulary.ts'
 import { COVERAGE_FACTOR } from './accuracy.ts'
 import { bandWarnings, inBand, megahertz, resultAt, type JudgedBand } from './judged-bands.ts'
-import { figure, findingOf, judgeAtLeast, percent } from './judgement.ts'
+import { figure, findingOf, judgeAtLeast, percent, shareText } from './judgement.ts'
 import type { PairLossLimits } from './pair-loss.ts'
 
 type Figures = EfficiencyFigures & { readonly warnings: readonly Warning[] }
@@ -53,7 +53,7 @@ export function fileEfficiencyFinding<T>(
     finding: judgeAtLeast(efficiency, minEfficiency, uncertainty),
     limit: `${percent(minEfficiency)} at least`,
     text:
-      `${percent(efficiency)} efficient (± ${percent(uncertainty, 1)}) at ` +
+      `${shareText(efficiency, minEfficiency)} efficient (± ${percent(uncertainty, 1)}) at ` +
       `${figure(megahertz(frequencyHz), 3)} MHz, ${figure(lossDb, 2)} dB lost`,
   })
 }

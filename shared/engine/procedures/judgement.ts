@@ -53,7 +53,16 @@ export function figure(value: number, digits: number): string {
   return String(Number(value.toFixed(digits))).replace('-', '−')
 }
 
-/** 0.8125 as "81 %", with a digit more where rounding would reach the limit. */
+/** 0.8125 as "81 %". */
 export function percent(fraction: number, digits = 0): string {
   return `${figure(fraction * 100, digits)} %`
+}
+
+/** The same for a share that has to reach a limit: one that misses it is not rounded onto it, 0.796 of 0.8 is "79.6 %". */
+export function shareText(fraction: number, least: number, digits = 0): string {
+  const isRoundedOntoIt =
+    fraction < least && Number((fraction * 100).toFixed(digits)) >= Number((least * 100).toFixed(6))
+  if (!isRoundedOntoIt) return percent(fraction, digits)
+  const scale = 10 ** (digits + 1)
+  return percent(Math.floor(fraction * 100 * scale) / scale / 100, digits + 1)
 }

@@ -7,7 +7,15 @@ import { pairLossFromPowers, type PowerLoss } from '../pair-wattmeter.ts'
 import type { TestFinding } from '../readiness/types.ts'
 import type { Band } from '../vocabulary.ts'
 import { COVERAGE_FACTOR, relativeUncertainty, type Accuracy } from './accuracy.ts'
-import { figure, findingOf, judgeAtLeast, judgementOf, percent, type Judgement } from './judgement.ts'
+import {
+  figure,
+  findingOf,
+  judgeAtLeast,
+  judgementOf,
+  percent,
+  shareText,
+  type Judgement,
+} from './judgement.ts'
 
 export interface PairReading {
   readonly band: Band
@@ -70,6 +78,6 @@ function efficiencyFinding(
     uncertainty,
     finding: judgeAtLeast(efficiency, minEfficiency, uncertainty),
     limit: `${percent(minEfficiency)} at least`,
-    text: `${percent(efficiency)} efficient, ${figure(lossDb, 2)} dB lost`,
+    text: `${shareText(efficiency, minEfficiency)} efficient, ${figure(lossDb, 2)} dB lost`,
   })
 }

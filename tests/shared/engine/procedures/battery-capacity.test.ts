@@ -25,6 +25,11 @@ describe('a capacity test', () => {
     expect(valueOf(judge({ measuredAh })).finding).toBe(word)
   })
 
+  it('is not rounded onto the limit that it misses', () => {
+    expect(valueOf(judge({ measuredAh: 20.79 })).findings[0]?.text).toMatch(/^79\.96 % of its rating: /)
+    expect(valueOf(judge({ measuredAh: 20.8 })).findings[0]?.text).toMatch(/^80 % of its rating: /)
+  })
+
   it('takes current and time in the place of ampere-hours', () => {
     const judged = valueOf(judge({ currentA: 1.3, hours: 16 }))
     expect(judged.results).toMatchObject({ measuredAh: expect.closeTo(20.8, 9) })

@@ -27,6 +27,16 @@ describe('the efficiency of a pair', () => {
     expect(valueOf(judgePairLoss(inputs, LIMITS, null)).finding).toBe('pass')
   })
 
+  it('is not rounded onto the limit that it misses', () => {
+    const inputs = { meters: 'two' as const, bands: [{ band: '40 m' as const, inW: 100, outW: 63.4 }] }
+    const [finding] = valueOf(judgePairLoss(inputs, LIMITS, null)).findings
+    expect([finding?.finding, finding?.text, finding?.limit]).toEqual([
+      'fail',
+      '79.6 % efficient, 0.99 dB lost',
+      '80 % at least',
+    ])
+  })
+
   it('is marginal where the meters cannot tell', () => {
     const wattmeter = { accuracyPercentOfReading: 5 * Math.sqrt(3) }
     const inputs = { meters: 'two' as const, bands: [{ band: '20 m' as const, inW: 100, outW: 66 }] }
