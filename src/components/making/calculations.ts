@@ -45,7 +45,7 @@ export const CALCULATIONS: Readonly<Record<Procedure, Calculation>> = {
       'the 95 % interval holds every curve that the readings cannot tell from the best one',
     ],
     source:
-      'lumped capacitance: Incropera and DeWitt, ch. 5; profile intervals: Bates and Watts 1988, ch. 6 (both from memory, verify)',
+      'lumped capacitance: Incropera and DeWitt, ch. 5; profile intervals: Bates and Watts 1988, ch. 6 (not yet checked against the books)',
   },
   'antenna-sweep': {
     name: 'Sweep of an antenna',
@@ -53,7 +53,7 @@ export const CALCULATIONS: Readonly<Record<Procedure, Calculation>> = {
     formulas: [
       'SWR = (1 + |Γ|) / (1 − |Γ|); the worst working point of a band is judged, else the worst of the band',
     ],
-    source: 'Pozar, Microwave Engineering, 2.3 (from memory, verify)',
+    source: 'Pozar, Microwave Engineering, 2.3 (not yet checked against the book)',
   },
   'feedline-loss': {
     name: 'Loss of a feedline against its baseline',
