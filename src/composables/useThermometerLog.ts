@@ -16,6 +16,16 @@ export function useThermometerLog() {
     await again()
   }
 
+  async function readFile(file: Blob): Promise<void> {
+    const bytes = await file.arrayBuffer().catch(() => null)
+    if (bytes) return read(new Uint8Array(bytes))
+    forget()
+    failure.value = {
+      code: 'E_UNREADABLE',
+      message: 'The device did not hand this file over: choose it again.',
+    }
+  }
+
   async function answer(given: LogAnswers): Promise<void> {
     answers.value = { ...answers.value, ...given }
     await again()
@@ -40,5 +50,5 @@ export function useThermometerLog() {
     failure.value = null
   }
 
-  return { log, failure, answers, read, answer, forget }
+  return { log, failure, answers, read, readFile, answer, forget }
 }

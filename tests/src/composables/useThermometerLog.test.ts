@@ -16,6 +16,14 @@ describe('a thermometer’s log on its way in', () => {
     expect(log.value?.readings).toHaveLength(2)
   })
 
+  it('says so when the device does not hand the file over', async () => {
+    const gone = { arrayBuffer: () => Promise.reject(new Error('gone')) } as unknown as Blob
+    const { log, failure, readFile } = useThermometerLog()
+    await readFile(gone)
+    expect(log.value).toBeNull()
+    expect(failure.value?.message).toContain('choose it again')
+  })
+
   it('does not come back when its answer is late and it was taken over meanwhile', async () => {
     vi.mocked(askEngine).mockResolvedValueOnce(readThermometerLog(LOG))
     const { log, failure, read, forget } = useThermometerLog()
