@@ -1,7 +1,7 @@
 const LONGEST = 120
-/** Controls, halves of surrogate pairs, and marks that turn the direction of what follows. */
+/** Controls, ends of lines, halves of surrogate pairs, and marks that turn the direction of what follows. */
 const UNSHOWN =
-  /[\u0000-\u001F\u007F-\u009F\u200B-\u200F\u202A-\u202E\u2066-\u2069\uFEFF]|[\uD800-\uDBFF](?![\uDC00-\uDFFF])|(?<![\uD800-\uDBFF])[\uDC00-\uDFFF]/g
+  /[\u0000-\u001F\u007F-\u009F\u200B-\u200F\u2028-\u202E\u2066-\u2069\uFEFF]|[\uD800-\uDBFF](?![\uDC00-\uDFFF])|(?<![\uD800-\uDBFF])[\uDC00-\uDFFF]/g
 
 /** A file's name as it can be shown: one line, no folder, at most 120 characters with its ending kept. */
 export function shownName(sent: string): string {
@@ -10,5 +10,6 @@ export function shownName(sent: string): string {
   if (plain === '' || plain === '.' || plain === '..') return 'file'
   if (plain.length <= LONGEST) return plain
   const ending = /\.[^.]{1,8}$/.exec(plain)?.[0] ?? ''
-  return `${plain.slice(0, LONGEST - ending.length - 1)}…${ending}`
+  const kept = plain.slice(0, LONGEST - ending.length - 1).replace(/[\uD800-\uDBFF]$/, '')
+  return `${kept}…${ending}`
 }

@@ -107,6 +107,14 @@ describe('an upload', () => {
     const { body } = await upload(app, member, { kind: 'touchstone', bytes: SWEEP, name })
     expect(body.name).toBe('passwd.s1p')
   })
+
+  it('keeps a name on one line and its characters whole where it is cut', async () => {
+    const broken = await upload(app, member, { kind: 'csv', bytes: CSV, name: 'two\u2028lines\u2029.csv' })
+    expect(broken.body.name).toBe('twolines.csv')
+    const long = `${'a'.repeat(114)}\u{1F4FB}${'b'.repeat(20)}.csv`
+    const { body } = await upload(app, member, { kind: 'csv', bytes: CSV, name: long })
+    expect(body.name).toBe(`${'a'.repeat(114)}….csv`)
+  })
 })
 
 describe('a download', () => {
