@@ -5,7 +5,7 @@ import { ANY_MEMBER } from './roles.ts'
 import { answeredAt, band, computedFor, listOf, mode } from './words.ts'
 
 /** A kit that lacks one kind of thing. */
-export const nearKit = z.object({
+const nearKit = z.object({
   kitId: z.string(),
   designation: z.string(),
   /** What would have to be so, and what is: follows "could if". */
@@ -51,4 +51,3 @@ export const answerNeed = defineEndpoint({
 })
 
 export type NeedAnswer = z.output<typeof answerNeed.response>
-export type NearKit = z.output<typeof nearKit>

@@ -20,7 +20,7 @@ export interface HeatCurvePoint {
 const POINTS = 49
 
 /**
- * From 0 to `untilS` (above 0 to 604,800 s); null where the log is too short, too few or too noisy for a curve.
+ * From 0 to `untilS` (1 to 604,800 s); null where the log is too short, too few or too noisy for a curve.
  * Errors of `fitHeatLog`.
  */
 export function heatCurve(log: HeatLog, untilS: number): Outcome<HeatCurvePoint[] | null> {

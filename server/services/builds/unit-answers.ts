@@ -35,7 +35,7 @@ export function proposalsOf(state: BuildState, { departures }: BuildRecord): Pro
 
 type Units = ReadonlyMap<string, Unit>
 
-export function unitNamed(units: Units, id: string): { id: string; designation: string } {
+function unitNamed(units: Units, id: string): { id: string; designation: string } {
   return { id, designation: units.get(id)?.designation ?? '' }
 }
 
