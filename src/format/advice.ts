@@ -7,7 +7,9 @@ export type AdviceWork = AdvicePlan['works'][number]
 
 /** What is done, as a heading: all of it where it is short, else its first part and how many follow. */
 export function headline({ works }: AdvicePlan): string {
-  const busy = works.filter(({ minutes }) => minutes > 0)
+  const timed = works.filter(({ minutes }) => minutes > 0)
+  // A station that only has to be said available again takes no time, and is told all the same.
+  const busy = timed.length > 0 ? timed : works
   const [first, second] = busy.map(({ text }) => text)
   if (busy.length <= 1) return first ?? ''
   if (busy.length === 2) return `${first}, then ${lowered(second!)}`
