@@ -25,7 +25,7 @@ describe('startChild', () => {
   })
 
   it('tells 127 for a program that is not there', async () => {
-    expect(await startChild('no-such-program', [], { stdio: 'ignore' }).ended).toBe(127)
+    expect(await startChild('/no-such-folder/program', [], { stdio: 'ignore' }).ended).toBe(127)
   })
 
   it('kills the whole group of a child that does not end', async () => {
