@@ -33,8 +33,8 @@ export function heaviestFirst(reasons: readonly KitReason[]): KitReason[] {
 
 /** Attended time as people say it: `15 min`, `2 h`, `1 h 30 min`. */
 export function minutesText(minutes: number): string {
-  const hours = Math.floor(minutes / 60)
-  const rest = Math.round(minutes % 60)
+  const whole = Math.round(minutes)
+  const [hours, rest] = [Math.floor(whole / 60), whole % 60]
   return [hours > 0 && `${hours}\u00a0h`, (rest > 0 || hours === 0) && `${rest}\u00a0min`]
     .filter(Boolean)
     .join(' ')

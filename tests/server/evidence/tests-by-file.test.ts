@@ -241,7 +241,11 @@ describe('a heat test after a loss test', () => {
       fit: { identifiable: true },
       efficiencyUsed: { efficiency: expect.any(Number) as number },
       resistance: { kPerW: expect.any(Number) as number },
-      allowance: { sentence: expect.stringMatching(/^At 35 °C .*voice at 100 W/) as string },
+      allowance: {
+        sentence: expect.stringMatching(
+          /^On a day of 35 °C, to get no hotter than 85 °C: voice at 100 W/,
+        ) as string,
+      },
     })
   })
 })

@@ -7,6 +7,9 @@ const planOf = (...works: [text: string, minutes: number][]): AdvicePlan => ({
   minutes: works.reduce((sum, [, minutes]) => sum + minutes, 0),
   changes: [],
   countAfter: [],
+  deployable: 0,
+  proven: 0,
+  returned: 0,
 })
 
 describe('the heading of an advice', () => {

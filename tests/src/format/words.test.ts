@@ -71,6 +71,7 @@ describe('fixes and reasons', () => {
     expect(minutesText(15)).toBe('15\u00a0min')
     expect(minutesText(60)).toBe('1\u00a0h')
     expect(minutesText(90)).toBe('1\u00a0h 30\u00a0min')
+    expect(minutesText(119.7)).toBe('2\u00a0h')
     expect(minutesText(0)).toBe('0\u00a0min')
   })
 
