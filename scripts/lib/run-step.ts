@@ -20,7 +20,7 @@ export interface Tally {
 }
 
 /** A step that says nothing for so long hangs. How long it may take hangs on what else the machine does. */
-const SILENCE_LIMIT_MS = 10 * 60_000
+const SILENCE_LIMIT_MS = 5 * 60_000
 
 /** Runs one step, says in one line how it went, and prints what it said when something failed. */
 export async function runStep(step: Step, run: Run): Promise<Tally> {

@@ -55,5 +55,5 @@ test('opens the distances to keep from a station’s antenna, with the caution f
   const quiet = await row.textContent()
   await page.getByLabel('Emission').selectOption('carrier')
   await expect(row).not.toHaveText(quiet ?? '')
-  await expect(row).toContainText(/\d\sm.*\d\sm.*\sV/)
+  await expect(row).toContainText(/\d+(\.\d)?\sm.*\d+(\.\d)?\sm.*\sV/)
 })
