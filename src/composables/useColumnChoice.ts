@@ -1,4 +1,5 @@
 import { computed, ref, watch } from 'vue'
+import { keep, readKeptJson } from '@/device-storage.ts'
 
 interface Choosable {
   readonly key: string
@@ -10,8 +11,8 @@ interface Choosable {
 export function useColumnChoice(list: string, columns: readonly Choosable[]) {
   const storageKey = `halyard.columns.${list}`
   const usual = columns.filter(({ shown = true }) => shown).map(({ key }) => key)
-  const chosen = ref(new Set(readKept(storageKey) ?? usual))
-  watch(chosen, (keys) => keep(storageKey, [...keys]))
+  const chosen = ref(new Set(keptKeys(storageKey) ?? usual))
+  watch(chosen, (keys) => keep(storageKey, JSON.stringify([...keys])))
 
   return {
     isShown: (key: string) => key === columns[0]?.key || chosen.value.has(key),
@@ -29,19 +30,7 @@ function sameKeys(chosen: ReadonlySet<string>, usual: readonly string[]): boolea
   return chosen.size === usual.length && usual.every((key) => chosen.has(key))
 }
 
-function readKept(storageKey: string): string[] | null {
-  try {
-    const kept: unknown = JSON.parse(localStorage.getItem(storageKey) ?? 'null')
-    return Array.isArray(kept) ? kept.filter((key) => typeof key === 'string') : null
-  } catch {
-    return null
-  }
-}
-
-function keep(storageKey: string, keys: readonly string[]): void {
-  try {
-    localStorage.setItem(storageKey, JSON.stringify(keys))
-  } catch {
-    // Storage that is refused costs the memory of the choice, not the choice.
-  }
+function keptKeys(storageKey: string): string[] | null {
+  const kept = readKeptJson(storageKey)
+  return Array.isArray(kept) ? kept.filter((key) => typeof key === 'string') : null
 }

@@ -11,15 +11,16 @@ import {
   type HeatSetUp,
 } from '@/components/heat-test/heat-run.ts'
 import { withLog, withoutLog, type PlacedLog } from '@/components/heat-test/log-of-run.ts'
+import { keep, readKeptJson } from '@/device-storage.ts'
 
 const keyOf = (itemId: string) => `halyard.heat-test.${itemId}`
 
 /** One heat test of one item, kept on this device until it is recorded or given up. */
 export function useHeatRun(form: TestForm) {
   const itemId = form.item.id
-  const run = shallowRef<HeatRun>(readKept(itemId) ?? newRun(form))
+  const run = shallowRef<HeatRun>(keptRun(itemId) ?? newRun(form))
   const plan = computed<HeatPlan>(() => planOf(form, run.value.setUp.band))
-  watch(run, (value) => keep(itemId, value), { immediate: true })
+  watch(run, (value) => keep(keyOf(itemId), JSON.stringify(value)), { immediate: true })
 
   const change = (changes: Partial<HeatRun>) => void (run.value = { ...run.value, ...changes })
 
@@ -41,7 +42,7 @@ export function useHeatRun(form: TestForm) {
     /** Begins again with the same set-up and a new id. */
     restart: () => void (run.value = { ...newRun(form), setUp: run.value.setUp }),
     /** It is recorded, or nobody wants it: nothing stays on the device. */
-    forget: () => localStorage.removeItem(keyOf(itemId)),
+    forget: () => keep(keyOf(itemId), null),
   }
 }
 
@@ -86,19 +87,7 @@ function planOf(form: TestForm, band: Band | null): HeatPlan {
   }
 }
 
-function readKept(itemId: string): HeatRun | null {
-  try {
-    const kept = JSON.parse(localStorage.getItem(keyOf(itemId)) ?? 'null') as HeatRun | null
-    return kept?.testId && kept.setUp ? kept : null
-  } catch {
-    return null
-  }
-}
-
-function keep(itemId: string, run: HeatRun): void {
-  try {
-    localStorage.setItem(keyOf(itemId), JSON.stringify(run))
-  } catch {
-    // Storage that is full or refused costs the reload, not the test: it goes on in this page.
-  }
+function keptRun(itemId: string): HeatRun | null {
+  const kept = readKeptJson(keyOf(itemId)) as HeatRun | null
+  return kept?.testId && kept.setUp ? kept : null
 }

@@ -1,4 +1,5 @@
 import { readonly, ref } from 'vue'
+import { keep } from '@/device-storage.ts'
 
 export type Theme = 'day' | 'night'
 
@@ -13,11 +14,7 @@ export function useTheme() {
     theme.value = wanted
     document.documentElement.dataset.theme = wanted
     document.querySelector('meta[name="theme-color"]')?.setAttribute('content', PAPER[wanted])
-    try {
-      localStorage.setItem(KEY, wanted)
-    } catch {
-      // Private windows may refuse; the choice then lasts as long as the page.
-    }
+    keep(KEY, wanted)
   }
 
   return { theme: readonly(theme), choose, toggle: () => choose(theme.value === 'day' ? 'night' : 'day') }

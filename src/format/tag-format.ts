@@ -8,6 +8,7 @@ import {
   type Paper,
   type TagSize,
 } from '#shared/engine/tag-layout.ts'
+import { keep, readKeptJson } from '@/device-storage.ts'
 
 /** How tags are printed, as it is chosen: a sheet with many cells or a roll of single labels. */
 export interface TagFormat {
@@ -58,14 +59,9 @@ export function sheetsNeeded(format: TagFormat, labels: number): { sheets: numbe
 }
 
 export function readFormat(): TagFormat {
-  try {
-    const kept = JSON.parse(localStorage.getItem(KEY) ?? '{}') as Partial<TagFormat>
-    const format = { ...USUAL, ...kept }
-    const known = PAPERS.includes(format.paper) && TAG_SIZES.includes(format.size)
-    return known ? { ...format, startCell: fittingCell(format) } : { ...USUAL }
-  } catch {
-    return { ...USUAL }
-  }
+  const format = { ...USUAL, ...(readKeptJson(KEY) as Partial<TagFormat> | null) }
+  const known = PAPERS.includes(format.paper) && TAG_SIZES.includes(format.size)
+  return known ? { ...format, startCell: fittingCell(format) } : { ...USUAL }
 }
 
 /** The cell itself, or the first where the sheet has fewer. */
@@ -75,9 +71,5 @@ export function fittingCell({ paper, size, startCell }: TagFormat): number {
 }
 
 export function keepFormat(format: TagFormat): void {
-  try {
-    localStorage.setItem(KEY, JSON.stringify(format))
-  } catch {
-    // Storage that is refused costs the memory of the choice, not the print.
-  }
+  keep(KEY, JSON.stringify(format))
 }

@@ -5,6 +5,7 @@ import type { signIn } from '#shared/contracts/session.ts'
 import type { BodyInputOf } from '#shared/contracts/endpoint.ts'
 import { callApi } from '@/api/call-api.ts'
 import { takeEarly } from '@/api/early-answers.ts'
+import { keep } from '@/device-storage.ts'
 
 export type SignedInMember = NonNullable<SessionView['member']>
 
@@ -57,10 +58,5 @@ export const useSessionStore = defineStore('session', () => {
 export type SessionStore = ReturnType<typeof useSessionStore>
 
 function remember(signedIn: boolean): void {
-  try {
-    if (signedIn) localStorage.setItem(HINT, '1')
-    else localStorage.removeItem(HINT)
-  } catch {
-    // Private windows may refuse; the first board then comes a moment later.
-  }
+  keep(HINT, signedIn ? '1' : null)
 }
