@@ -9,6 +9,8 @@ import type {
 import type { Role } from '#shared/contracts/roles.ts'
 import type { CheckState } from '#shared/engine/readiness/types.ts'
 
+export { counted } from '#shared/engine/plain-words.ts'
+
 /** The vocabulary as the screens write it. One word per notion; see the glossary of the design. */
 
 export const VERDICT_WORDS: Readonly<Record<Verdict, string>> = {
@@ -104,8 +106,3 @@ export const SIGN_IN_WORDS = {
   invited: 'Invited',
   'no-sign-in': 'No sign-in',
 } as const
-
-/** `1 kit`, `2 kits`: the noun's plural is given where it is not the noun and an s. */
-export function counted(count: number, one: string, many = `${one}s`): string {
-  return `${count} ${count === 1 ? one : many}`
-}

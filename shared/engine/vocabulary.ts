@@ -93,6 +93,10 @@ export type Mode = (typeof MODES)[number]
 export const VERDICTS = ['proven', 'proven-with-limits', 'not-proven', 'not-fit'] as const
 export type Verdict = (typeof VERDICTS)[number]
 
+/** Whether a kit of this verdict can go, if it is available. */
+export const isDeployable = (verdict: Verdict): boolean =>
+  verdict === 'proven' || verdict === 'proven-with-limits'
+
 /** The three words of NIMS, unchanged. */
 export const AVAILABILITIES = ['available', 'assigned', 'out-of-service'] as const
 export type Availability = (typeof AVAILABILITIES)[number]

@@ -1,9 +1,8 @@
 import type { BoardRow } from '#shared/contracts/board.ts'
 import { unpackBands } from '#shared/engine/readiness/band-codes.ts'
+import { isDeployable } from '#shared/engine/vocabulary.ts'
 import { wallClock } from './day.ts'
 import { numberText, quantityText } from './quantity.ts'
-
-const DEPLOYABLE = new Set(['proven', 'proven-with-limits'])
 
 /** The parts of the board, in the order of the sentence. */
 export const SECTIONS = ['can-go', 'on-issue', 'cannot'] as const
@@ -11,7 +10,7 @@ export type Section = (typeof SECTIONS)[number]
 
 export function sectionOf({ availability, verdict }: BoardRow): Section {
   if (availability === 'assigned') return 'on-issue'
-  return availability === 'available' && DEPLOYABLE.has(verdict) ? 'can-go' : 'cannot'
+  return availability === 'available' && isDeployable(verdict) ? 'can-go' : 'cannot'
 }
 
 /** Watts at the antenna over the bands that stand, as `71–85 W`; else the radio's output; else nothing. */

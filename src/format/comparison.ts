@@ -1,6 +1,6 @@
 import type { compareBuildSheets } from '#shared/contracts/build-figures.ts'
 import type { ResponseOf } from '#shared/contracts/endpoint.ts'
-import { listText } from './figure-text.ts'
+import { listText } from '#shared/engine/plain-words.ts'
 import { numberText, quantityText } from './quantity.ts'
 
 type Comparison = ResponseOf<typeof compareBuildSheets>

@@ -18,9 +18,3 @@ export function withUncertainty(
   const digits = digitsBeside(uncertainty, most)
   return `${numberText(value, digits, true)}\u00a0±\u00a0${numberText(uncertainty, digits, true)}${ending}`
 }
-
-/** `40 m`, `40 m and 20 m`, `40 m, 20 m and 10 m`. */
-export function listText(words: readonly string[]): string {
-  if (words.length < 2) return words.join('')
-  return `${words.slice(0, -1).join(', ')} and ${words.at(-1)}`
-}

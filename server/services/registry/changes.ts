@@ -1,4 +1,5 @@
 import { isDeepStrictEqual } from 'node:util'
+import { listText } from '#shared/engine/plain-words.ts'
 import type { Changes } from './thing.ts'
 
 /** Compares as JSON does: Dates as text, absent and undefined alike, keys in any order. */
@@ -37,8 +38,7 @@ export function fieldNames(changes: Changes): string {
   const names = Object.keys(changes.after).map(
     (key) => NAMES[key] ?? key.replace(/(Id|On)$/, '').replace(/[A-Z]/g, lowerWord),
   )
-  const last = names.pop() ?? ''
-  return names.length > 0 ? `${names.join(', ')} and ${last}` : last
+  return listText(names)
 }
 
 const lowerWord = (letter: string) => ` ${letter.toLowerCase()}`

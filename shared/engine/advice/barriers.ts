@@ -1,7 +1,9 @@
 import { groupBy } from '../group-by.ts'
 import { FETCH_MINUTES } from '../readiness/actions.ts'
 import type { Judgement } from '../readiness/period-at.ts'
-import { isDeployable, type AdviceKit, type Work } from './work.ts'
+import { listText } from '../plain-words.ts'
+import { isDeployable } from '../vocabulary.ts'
+import type { AdviceKit, Work } from './work.ts'
 
 /** Something outside the kits that keeps them out of service: a key that is abroad, a road that is closed. */
 export interface Barrier {
@@ -26,7 +28,7 @@ export function barriersOf(kits: readonly AdviceKit[], judged: ReadonlyMap<strin
 
 /** What it takes is not on record; as long as fetching a part. Common practice, no source. */
 export function liftBarrier({ reason }: Barrier, kits: readonly AdviceKit[]): Work {
-  const names = listed(kits.map(({ state }) => state.kit.designation))
+  const names = listText(kits.map(({ state }) => state.kit.designation))
   const cause = reason === '' ? 'Settle what keeps' : `Settle "${reason}", which keeps`
   return {
     text: `${cause} ${names} out of service`,
@@ -34,9 +36,4 @@ export function liftBarrier({ reason }: Barrier, kits: readonly AdviceKit[]): Wo
     steps: [],
     uses: [],
   }
-}
-
-/** "K-08, K-13 and K-14". */
-export function listed(names: readonly string[]): string {
-  return names.length < 2 ? (names[0] ?? '') : `${names.slice(0, -1).join(', ')} and ${names.at(-1)}`
 }

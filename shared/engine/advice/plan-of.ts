@@ -1,9 +1,10 @@
 import { isFailure } from '../outcome.ts'
 import type { EpochMs, KitState } from '../readiness/types.ts'
+import { isDeployable } from '../vocabulary.ts'
 import { applySteps } from './apply-steps.ts'
 import { judgeNow } from './judge-now.ts'
 import { usesOf } from './search-plans.ts'
-import { isDeployable, type KitChange, type Plan, type Work } from './work.ts'
+import type { KitChange, Plan, Work } from './work.ts'
 import type { World } from './world.ts'
 
 /** Works with what they yield, found by doing them in a copy. Undefined where a step does not fit. */

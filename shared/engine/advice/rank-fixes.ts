@@ -1,9 +1,10 @@
 import type { PlainDate } from '../plain-date.ts'
 import type { EpochMs, KitState } from '../readiness/types.ts'
+import { isDeployable } from '../vocabulary.ts'
 import { choosePlans, tokensOf } from './choose-plans.ts'
 import { behind, ownPlans, plansTo, recall } from './kit-plans.ts'
 import { situationOf, type Situation } from './situation.ts'
-import { isDeployable, type AdviceKit, type Plan } from './work.ts'
+import type { AdviceKit, Plan } from './work.ts'
 
 interface Day {
   readonly at: EpochMs

@@ -1,10 +1,11 @@
 import { isFailure } from '../outcome.ts'
 import type { Judgement } from '../readiness/period-at.ts'
 import type { EpochMs, KitState, Reason } from '../readiness/types.ts'
+import { isDeployable } from '../vocabulary.ts'
 import { applySteps } from './apply-steps.ts'
 import { judgeNow } from './judge-now.ts'
 import { type Sources } from './parts.ts'
-import { isDeployable, type Work } from './work.ts'
+import type { Work } from './work.ts'
 import { worksFor } from './works.ts'
 import type { World } from './world.ts'
 

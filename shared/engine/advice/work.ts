@@ -44,8 +44,5 @@ export interface Plan {
   readonly returned: number
 }
 
-export const isDeployable = (verdict: Verdict): boolean =>
-  verdict === 'proven' || verdict === 'proven-with-limits'
-
 /** Recall of a loan (demo scenario, section 7). */
 export const RECALL_MINUTES = 10

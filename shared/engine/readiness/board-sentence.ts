@@ -1,4 +1,6 @@
-import type { Availability, Verdict } from '../vocabulary.ts'
+import { counted } from '../plain-words.ts'
+import { isDeployable, type Availability, type Verdict } from '../vocabulary.ts'
+import type { Tense } from './words.ts'
 
 /** What the first sentence of the board is made of: stations only. */
 export interface Tally {
@@ -16,12 +18,10 @@ interface Count {
   readonly n: number
 }
 
-const DEPLOYABLE: ReadonlySet<Verdict> = new Set<Verdict>(['proven', 'proven-with-limits'])
-
 export function tallyOf(counts: readonly Count[]): Tally {
   const sum = (matches: (count: Count) => boolean) =>
     counts.filter((count) => count.station && matches(count)).reduce((total, { n }) => total + n, 0)
-  const goes = ({ availability, verdict }: Count) => availability === 'available' && DEPLOYABLE.has(verdict)
+  const goes = ({ availability, verdict }: Count) => availability === 'available' && isDeployable(verdict)
   const stations = sum(() => true)
   const canGo = sum(goes)
   const onIssue = sum(({ availability }) => availability === 'assigned')
@@ -34,8 +34,6 @@ export function tallyOf(counts: readonly Count[]): Tally {
   }
 }
 
-export type Tense = 'now' | 'past' | 'future'
-
 const CAN: Readonly<Record<Tense, string>> = { now: 'can go', past: 'could go', future: 'will be able to go' }
 const CANNOT: Readonly<Record<Tense, string>> = {
   now: 'cannot be used now',
@@ -47,7 +45,7 @@ const CANNOT: Readonly<Record<Tense, string>> = {
 export function sayTally(tally: Tally, tense: Tense): { lead: string; rest: string } {
   const { stations, canGo, withLimits, onIssue, cannot } = tally
   if (stations === 0) return { lead: 'No stations yet.', rest: '' }
-  const lead = `${canGo === 0 ? 'None' : canGo} of ${stations} ${stations === 1 ? 'station' : 'stations'} ${CAN[tense]}`
+  const lead = `${canGo === 0 ? 'None' : canGo} of ${counted(stations, 'station')} ${CAN[tense]}`
   const limits =
     withLimits === 0 ? '' : withLimits === canGo ? 'all with limits' : `${withLimits} of them with limits`
   const rest = [

@@ -1,11 +1,10 @@
+import { counted, listText } from '../plain-words.ts'
 import type { Mode } from '../vocabulary.ts'
 import { causesOf } from './need-nearness.ts'
 import type { Need, Shortfall } from './need.ts'
-import { amountText, shortText } from './words.ts'
+import { amountText, shortText, type Tense } from './words.ts'
 
 /** The words of the answer to a need, all in one place. */
-
-export type NeedTense = 'now' | 'past' | 'future'
 
 const MODE_WORDS: Readonly<Record<Mode, string>> = {
   voice: 'by voice',
@@ -20,7 +19,7 @@ interface Lacking {
   readonly reasonTop: string
   /** Names of the place asked for and of the kit's own, where they are known. */
   readonly places: { readonly asked: string | null; readonly has: string | null }
-  readonly tense: NeedTense
+  readonly tense: Tense
 }
 
 /** What would have to be so, and what is: `it gave 60 W on 40 m: 42 W now`. It follows the words "could if". */
@@ -86,20 +85,15 @@ function onBands(shortfalls: readonly Shortfall[]): string {
 
 const because = (reason: string) => (reason === '' ? '' : `: ${reason}`)
 
-function listText(parts: readonly string[]): string {
-  const last = parts.at(-1) ?? ''
-  return parts.length < 2 ? last : `${parts.slice(0, -1).join(', ')} and ${last}`
-}
-
 interface Answered {
   readonly stations: number
   readonly others: number
   /** Nearest first. */
   readonly near: readonly { readonly designation: string; readonly missing: string }[]
-  readonly tense: NeedTense
+  readonly tense: Tense
 }
 
-const CAN: Readonly<Record<NeedTense, string>> = {
+const CAN: Readonly<Record<Tense, string>> = {
   now: 'can do that',
   past: 'could do that',
   future: 'will be able to do that',
@@ -108,8 +102,8 @@ const CAN: Readonly<Record<NeedTense, string>> = {
 /** The answer in one sentence, its weighty part apart: `4 stations can do that;` `K-03 could if it gave ...` */
 export function needSentence({ stations, others, near, tense }: Answered): { lead: string; rest: string } {
   const counts = [
-    stations > 0 && `${stations} ${stations === 1 ? 'station' : 'stations'}`,
-    others > 0 && `${others} other ${others === 1 ? 'kit' : 'kits'}`,
+    stations > 0 && counted(stations, 'station'),
+    others > 0 && counted(others, 'other kit'),
   ].filter((part) => part !== false)
   const lead = `${counts.length === 0 ? 'None' : listText(counts)} ${CAN[tense]}`
   const [nearest, ...more] = near

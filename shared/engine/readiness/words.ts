@@ -3,6 +3,9 @@ import type { Band, Procedure } from '../vocabulary.ts'
 
 /** The words and figures that sentences are made of. */
 
+/** Of what a sentence speaks: how it is, was known to be, or will be if nobody does anything. */
+export type Tense = 'now' | 'past' | 'future'
+
 const MONTHS = ['Jan', 'Feb', 'Mar', 'Apr', 'May', 'Jun', 'Jul', 'Aug', 'Sep', 'Oct', 'Nov', 'Dec']
 
 /** "14 Mar 2026". */

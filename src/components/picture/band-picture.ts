@@ -1,7 +1,7 @@
 import type { StoredTest } from '#shared/contracts/test-shapes.ts'
+import { listText } from '#shared/engine/plain-words.ts'
 import { BANDS, type Band, type FindingWord } from '#shared/engine/vocabulary.ts'
 import type { ChartTable } from '@/components/chart/chart-table.ts'
-import { listText } from '@/format/figure-text.ts'
 import { figureLimit } from './finding-limit.ts'
 
 /** One band of a picture with a figure for each, in the unit that it is drawn in. */

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { digitsBeside, listText, withUncertainty } from '@/format/figure-text.ts'
+import { digitsBeside, withUncertainty } from '@/format/figure-text.ts'
 
 const plain = (text: string) => text.replaceAll('\u00a0', ' ')
 
@@ -15,16 +15,5 @@ describe('a figure with its uncertainty', () => {
     expect(plain(withUncertainty(1.23456, 0.00012, 'dB', 2))).toBe('1.23 ± 0.00 dB')
     expect(digitsBeside(0, 2)).toBe(2)
     expect(plain(withUncertainty(92, null, '%', 1))).toBe('92 %')
-  })
-})
-
-describe('a list of words', () => {
-  it('has its last one joined by and', () => {
-    expect(['', '40 m', '40 m and 20 m', '40 m, 20 m and 10 m']).toEqual([
-      listText([]),
-      listText(['40 m']),
-      listText(['40 m', '20 m']),
-      listText(['40 m', '20 m', '10 m']),
-    ])
   })
 })
