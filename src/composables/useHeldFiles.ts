@@ -4,6 +4,7 @@ import { isFailure, type Failure } from '#shared/engine/outcome.ts'
 import { uuidv7 } from '@/api/new-id.ts'
 import { askEngine } from '@/measure/ask-engine.ts'
 import type { FileFacts } from '@/measure/questions.ts'
+import { UNREADABLE } from '@/measure/unreadable.ts'
 
 /** A file in the hands of a form: its bytes stay in memory until the test that it belongs to is recorded. */
 export interface HeldFile {
@@ -90,10 +91,6 @@ async function hold(file: File, kind: AttachmentKind): Promise<HeldFile> {
     const content = new Blob([await file.arrayBuffer()], { type: file.type })
     return { ...held, content, state: kind === 'touchstone' ? 'reading' : 'read', failure: null }
   } catch {
-    const failure = {
-      code: 'E_UNREADABLE',
-      message: 'The device did not hand this file over: choose it again.',
-    }
-    return { ...held, content: new Blob(), state: 'refused', failure }
+    return { ...held, content: new Blob(), state: 'refused', failure: UNREADABLE }
   }
 }

@@ -2,6 +2,7 @@ import { shallowRef } from 'vue'
 import { isFailure } from '#shared/engine/outcome.ts'
 import { askEngine } from '@/measure/ask-engine.ts'
 import type { LogAnswers, LogFailure, ThermometerLog } from '@/measure/thermometer-log.ts'
+import { UNREADABLE } from '@/measure/unreadable.ts'
 
 /** A thermometer's log on its way in: read in the worker, read again with each answer that the file lacks. */
 export function useThermometerLog() {
@@ -20,10 +21,7 @@ export function useThermometerLog() {
     const bytes = await file.arrayBuffer().catch(() => null)
     if (bytes) return read(new Uint8Array(bytes))
     forget()
-    failure.value = {
-      code: 'E_UNREADABLE',
-      message: 'The device did not hand this file over: choose it again.',
-    }
+    failure.value = UNREADABLE
   }
 
   async function answer(given: LogAnswers): Promise<void> {

@@ -4,6 +4,7 @@ import { MAX_SCORE } from '#shared/engine/robust-z.ts'
 import { axisTicks } from '@/components/chart/axis-tick.ts'
 import type { ChartRow, ChartTable } from '@/components/chart/chart-table.ts'
 import { linearScale } from '@/components/chart/scale.ts'
+import { spread } from '@/components/chart/spread.ts'
 import { roundAxis } from '@/components/chart/ticks.ts'
 import { counted, FINDING_WORDS } from '@/words.ts'
 import type { MeasureWriter } from './build.ts'
@@ -44,7 +45,13 @@ export function batchChartLayout({ chart, units, write }: ChartInput, { width, h
   const axis = roundAxis(0, write.value(Math.max(limit ?? 0, lines?.upper ?? 0, ...reach)), narrow ? 6 : 8)
   const scale = linearScale(axis, bottom, top)
   const y = (stored: number) => scale(write.value(stored))
-  const placed = linesOf(chart).map((line) => ({ ...line, y: y(line.stored) }))
+  const drawn = linesOf(chart).map((line) => ({ ...line, y: y(line.stored) }))
+  const textYs = spread(
+    drawn.map((line) => line.y),
+    LABEL_GAP,
+    top,
+    bottom + 4,
+  )
   return {
     left,
     right,
@@ -53,7 +60,7 @@ export function batchChartLayout({ chart, units, write }: ChartInput, { width, h
     ticks: axisTicks(axis, scale),
     x: (at: number) => left + ((at + 0.5) / units.length) * (right - left),
     y,
-    lines: apartLabels(placed, bottom + 4),
+    lines: drawn.map((line, index) => ({ ...line, textY: textYs[index]! })),
   }
 }
 
@@ -65,18 +72,6 @@ function linesOf({ limit, lines, batchMedian }: ControlChart) {
     ...(lines ? [{ key: 'upper', text: 'robust limit', stored: lines.upper }] : []),
     ...(own ? [{ key: 'batch', text: 'of the batch', stored: batchMedian }] : []),
   ]
-}
-
-/** Words beside the lines moved up, so that each pair of rows has its own room. */
-function apartLabels<Label extends { readonly y: number }>(labels: readonly Label[], bottom: number) {
-  let next = bottom
-  return labels
-    .toSorted((a, b) => b.y - a.y)
-    .map((label) => {
-      const textY = Math.min(label.y, next)
-      next = textY - LABEL_GAP
-      return { ...label, textY }
-    })
 }
 
 export const isApart = (score: number | null | undefined) => Math.abs(score ?? 0) > MAX_SCORE
