@@ -1,27 +1,29 @@
 import pg from 'pg'
+import type { TestApp } from './test-app.ts'
 
 interface Injection {
-  /** Statements that were sent while it was in place, without the transaction's own. */
-  readonly seen: number
-  readonly failed: boolean
+  /** What failed; undefined while nothing has. */
+  readonly failed: string | undefined
   stop(): void
 }
 
 const FRAME = /^(BEGIN|COMMIT|ROLLBACK|SELECT set_config)/
 
 /**
- * Lets the nth statement from now on fail as a full disk would (53100), in this process only. Statements that begin
- * and end transactions do not count.
+ * Lets the nth statement from now on fail as a full disk would (53100). Counts what this process sends to the app's own
+ * database, without the statements that begin and end transactions.
  */
-export function failStatement(nth: number): Injection {
+export function failStatement(app: TestApp, nth: number): Injection {
   const original = pg.Client.prototype.query
-  const state = { seen: 0, failed: false }
+  const database = decodeURIComponent(new URL(app.ctx.config.databaseUrl).pathname.slice(1))
+  let seen = 0
+  let failed: string | undefined
   const query = function (this: pg.Client, ...args: unknown[]): unknown {
     const text = typeof args[0] === 'string' ? args[0] : ((args[0] as { text?: string })?.text ?? '')
-    if (FRAME.test(text.trim())) return Reflect.apply(original, this, args)
-    state.seen += 1
-    if (state.seen !== nth) return Reflect.apply(original, this, args)
-    state.failed = true
+    const counts = this.database === database && !FRAME.test(text.trim())
+    if (counts) seen += 1
+    if (!counts || failed !== undefined || seen !== nth) return Reflect.apply(original, this, args)
+    failed = text
     const error = Object.assign(new Error('could not extend file: No space left on device'), {
       code: '53100',
     })
@@ -31,11 +33,8 @@ export function failStatement(nth: number): Injection {
   }
   pg.Client.prototype.query = query as typeof original
   return {
-    get seen() {
-      return state.seen
-    },
     get failed() {
-      return state.failed
+      return failed
     },
     stop() {
       pg.Client.prototype.query = original

@@ -18,7 +18,7 @@ describe('a loading that fails on its way', () => {
     app = await startTestApp()
     owner = new pg.Client({ connectionString: app.database!.ownerUrl })
     await owner.connect()
-    const injection = failStatement(200)
+    const injection = failStatement(app, 200)
     await expect(seedDemo(app.ctx, { asOf: D0 })).rejects.toThrow(/Step \d+ of the demo/)
     injection.stop()
   })
