@@ -13,7 +13,7 @@ const away = (group: string[], message: string) => ({
 /** The import directions: src -> shared <- server, contracts -> engine, routes -> services -> entities. */
 export default defineConfigWithVueTs(
   { name: 'halyard/files', files: ['**/*.{ts,mts,vue}'] },
-  { ignores: ['dist/**', 'node_modules/**', '.halyard/**', 'test-results/**'] },
+  { ignores: ['dist/**', 'dist-server/**', 'node_modules/**', '.halyard/**', 'test-results/**'] },
   pluginVue.configs['flat/recommended'],
   vueTsConfigs.recommended,
   {

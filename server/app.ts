@@ -18,6 +18,7 @@ import { openApiDocument } from './routes/open-api.ts'
 /** Mail programs post to these without an origin (RFC 8058). */
 const OPEN_TO_MAIL = /^\/api\/v1\/reminder-links\/[^/]+\/stop$/
 
+/** One folder up from here, and from `dist-server`, where the built server is. */
 const BUILT_CLIENT = join(import.meta.dirname, '../dist')
 
 /** Middleware and routes; never listens. */

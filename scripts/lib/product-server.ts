@@ -37,9 +37,9 @@ const ERROR_LEVEL = 50
 /** How many of its last lines on standard error are told when the server ends. */
 const LAST_LINES = 20
 
-/** Starts the server and resolves once it listens; rejects with what it last said when it ends instead. */
+/** Starts the built server and resolves once it listens; rejects with what it last said when it ends instead. */
 export async function startProductServer(options: ProductOptions): Promise<ProductServer> {
-  const child = startChild('node', ['--import', 'tsx', 'server/main.ts'], {
+  const child = startChild('node', ['dist-server/main.js'], {
     cwd: root,
     env: { ...process.env, ...options.env },
     stdio: ['ignore', 'pipe', 'pipe'],

@@ -1,13 +1,13 @@
 // Builds the client for production, where these sources are not built yet, and weighs the first load of the board.
 import { readFileSync } from 'node:fs'
 import { join } from 'node:path'
-import { buildClient } from './build-client.ts'
+import { buildPart } from './built-parts.ts'
 import { root } from './paths.ts'
 import { BUDGET, firstLoad, measure, packedBytes, type Manifest } from './size-budget.ts'
 
 const BOARD_VIEW = 'src/views/BoardView.vue'
 
-await buildClient()
+await buildPart('client')
 const dist = join(root, 'dist')
 const manifest = JSON.parse(readFileSync(join(dist, '.vite/manifest.json'), 'utf8')) as Manifest
 const load = firstLoad(manifest, BOARD_VIEW)

@@ -2,7 +2,7 @@
 import { join } from 'node:path'
 import { DEMO_SIGN_INS } from '../demo/sign-ins.ts'
 import { banner } from './banner.ts'
-import { buildClient } from './build-client.ts'
+import { buildPart } from './built-parts.ts'
 import { clusterFolder } from './cluster-folder.ts'
 import { loadDemo } from './demo-step.ts'
 import { Ending } from './ending.ts'
@@ -23,7 +23,8 @@ async function start(): Promise<void> {
     openDatabase(clusterHome, ending),
     openMail(folder, ending),
     holdPublicPort(folder),
-    buildClient(),
+    buildPart('client'),
+    buildPart('server'),
   ])
   const env: ProductEnv = {
     NODE_ENV: 'production',

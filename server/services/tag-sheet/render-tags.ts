@@ -1,4 +1,4 @@
-import PDFDocument from 'pdfkit'
+import type PDFDocument from 'pdfkit'
 import { setImmediate } from 'node:timers/promises'
 import { tagAddress } from '#shared/engine/tag-address.ts'
 import type { Cell } from '#shared/engine/tag-layout.ts'
@@ -20,11 +20,15 @@ interface Print {
 /** So many faces are drawn before other requests get their turn: some milliseconds of work. */
 const FACES_AT_ONCE = 12
 
+/** Read with the first sheet: a start need not wait for it. */
+const pdfLibrary = () => import('pdfkit')
+
 /** The PDF. A thousand labels take about half a second of work, of which nobody waits for more than a few faces. */
 export async function renderTags(print: Print): Promise<Buffer> {
   const { labels, format, now } = print
   const size = [points(format.pageWidthMm), points(format.pageHeightMm)]
-  const doc = new PDFDocument({
+  const { default: Document } = await pdfLibrary()
+  const doc = new Document({
     size,
     margin: 0,
     autoFirstPage: false,

@@ -1,14 +1,15 @@
 import { execFileSync } from 'node:child_process'
-import { buildClient } from '../../../scripts/lib/build-client.ts'
+import { buildPart } from '../../../scripts/lib/built-parts.ts'
 import { root } from '../../../scripts/lib/paths.ts'
 import { openTestCluster } from '../../../scripts/lib/test-cluster.ts'
 
-/** The built client, one PostgreSQL and its templates for all browser tests; workers read them from the environment. */
+/** The built product, one PostgreSQL and its templates for all browser tests; workers read them from the environment. */
 export default async function globalSetup(): Promise<() => Promise<void>> {
   const { ownerUrl, appUrl, stop } = await openTestCluster()
   try {
     process.env.HALYARD_TEST_PG = JSON.stringify({ ownerUrl, appUrl })
-    await buildClient()
+    await buildPart('client')
+    await buildPart('server')
     process.env.HALYARD_TEST_TEMPLATES = makeTemplates()
   } catch (error) {
     await stop()
