@@ -4,12 +4,12 @@ import type { AppContext } from './context.ts'
 import { AppError } from './errors.ts'
 import { auditRefusals } from './middleware/audit-refusals.ts'
 import { problemHandler } from './middleware/problem-handler.ts'
-import { earlyLinks } from './middleware/early-links.ts'
 import { requestId } from './middleware/request-id.ts'
 import { requireSameOrigin } from './middleware/require-same-origin.ts'
 import { securityHeaders } from './middleware/security-headers.ts'
 import { readSession } from './middleware/session.ts'
 import { staticFiles } from './middleware/static-files.ts'
+import { boardPage } from './routes/board-page.ts'
 import { EndpointRouter } from './routes/endpoint.ts'
 import { addRoutes } from './routes/index.ts'
 import { methodGuard } from './routes/method-guard.ts'
@@ -33,14 +33,15 @@ export function createApp(ctx: AppContext): Express {
   app.use(requestId(ctx))
   app.use(securityHeaders())
   app.use(requireSameOrigin(ctx.config, OPEN_TO_MAIL))
-  app.use('/api', readSession(ctx))
+  const session = readSession(ctx)
+  app.use('/api', session)
 
   const endpoints = new EndpointRouter(app)
   addRoutes(endpoints, ctx)
   const document = JSON.stringify(openApiDocument(endpoints.endpoints))
   app.get('/api/v1/openapi.json', (_req, res) => void res.type('json').send(document))
   app.use(methodGuard(endpoints.endpoints))
-  app.use(earlyLinks(), staticFiles(BUILT_CLIENT))
+  app.use(boardPage(ctx, { folder: BUILT_CLIENT, session }), staticFiles(BUILT_CLIENT))
   app.use((req) => {
     throw new AppError('not-found', `Nothing answers at ${req.path.slice(0, 200)}.`)
   })

@@ -1,7 +1,4 @@
-/**
- * `early.js` asks for the first board and the session while the application loads, and leaves the answers here. What
- * the board says in one sentence it has drawn already.
- */
+/** `early.js` asks for the first board and the session while the application loads, and leaves the answers here. */
 interface EarlyAnswers {
   readonly path: string
   readonly answer: Promise<Response>
@@ -14,7 +11,7 @@ interface Sentence {
 
 declare global {
   interface Window {
-    halyardEarly?: Partial<Record<'board' | 'session', EarlyAnswers>> & { sentence?: Sentence }
+    halyardEarly?: Partial<Record<'board' | 'session', EarlyAnswers>>
   }
 }
 
@@ -26,9 +23,18 @@ export function takeEarly(name: 'board' | 'session', path: string): Promise<Resp
   return early.answer
 }
 
+/** The board's page comes with its sentence; read before the application takes the page over. */
+let standing = sentenceOnPage()
+
+function sentenceOnPage(): Sentence | undefined {
+  const heading = document.querySelector('#app .board-sentence h1')
+  const [lead, rest] = heading?.childNodes ?? []
+  return lead && { lead: lead.textContent ?? '', rest: rest?.textContent?.trim() ?? '' }
+}
+
 /** The sentence that stands on the screen already, once: it stays there until the board does. */
 export function takeEarlySentence(): Sentence | undefined {
-  const sentence = window.halyardEarly?.sentence
-  delete window.halyardEarly?.sentence
+  const sentence = standing
+  standing = undefined
   return sentence
 }
