@@ -1,7 +1,17 @@
 import type { ItemFacts } from '#shared/engine/readiness/types.ts'
 
 /** Fields of an item's details that readiness reads; they carry the same names there. */
-const FACTS = ['bands', 'ratedWatts', 'ratedAh', 'chemistry', 'drawA', 'meanLoadA', 'lossDb'] as const
+const FACTS = [
+  'bands',
+  'ratedWatts',
+  'ratedAh',
+  'chemistry',
+  'maxA',
+  'drawA',
+  'receiveA',
+  'meanLoadA',
+  'lossDb',
+] as const
 
 /** What of an item's own fields decides. `details` were checked when they were stored. */
 export function itemFacts(details: Record<string, unknown>, acquiredOn: string | null): ItemFacts {
@@ -11,6 +21,10 @@ export function itemFacts(details: Record<string, unknown>, acquiredOn: string |
     ...(Object.fromEntries(known) as ItemFacts),
     // A lead carries what its weakest part does.
     ...(ratings.length > 0 && { ratedA: Math.min(...ratings) }),
+    ...(isPower(details) && { supplyW: details.supplyV * details.supplyA }),
     ...(acquiredOn !== null && { acquiredOn }),
   }
 }
+
+const isPower = (details: Record<string, unknown>): details is { supplyV: number; supplyA: number } =>
+  typeof details.supplyV === 'number' && typeof details.supplyA === 'number'

@@ -1,3 +1,4 @@
+import type { RadioCheckInputs } from '#shared/engine/procedures/radio-check.ts'
 import type { KitPromise, TestFinding } from '#shared/engine/readiness/types.ts'
 import type {
   Availability,
@@ -89,10 +90,13 @@ export interface EvidenceRow {
   instrument_id: string | null
   finding: FindingWord
   findings: readonly TestFinding[]
+  /** Of a radio check: the currents it read stand in them. */
+  radio_inputs: RadioCheckInputs | null
 }
 
 export const EVIDENCE_COLUMNS = `t.id, t.procedure, coalesce(t.item_id, t.kit_id) AS subject_id, t.performed_at,
-  t.performed_on::text, t.recorded_at, t.instrument_id, t.finding, t.findings`
+  t.performed_on::text, t.recorded_at, t.instrument_id, t.finding, t.findings,
+  CASE WHEN t.procedure = 'radio-check' THEN t.inputs END AS radio_inputs`
 
 /** Tests that were not corrected since: of the kits, of their items, and the calibrations of the instruments used. */
 export const EVIDENCE: Statement = {

@@ -1,4 +1,5 @@
 import { groupBy } from '#shared/engine/group-by.ts'
+import { currentsOf } from '#shared/engine/procedures/radio-currents.ts'
 import type { Evidence, KitState } from '#shared/engine/readiness/types.ts'
 import type { GroupTx } from '../group-transaction.ts'
 import { itemFacts } from './item-facts.ts'
@@ -93,6 +94,7 @@ export function evidenceOf(row: statements.EvidenceRow): Evidence {
     instrumentId: row.instrument_id,
     finding: row.finding,
     findings: row.findings,
+    ...(row.radio_inputs && { currents: currentsOf(row.radio_inputs) }),
   }
 }
 

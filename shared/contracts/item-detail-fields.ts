@@ -1,7 +1,7 @@
 /**
  * The fields of their own that each category of item has. All may be left out: absent means not known yet.
  * Units stand in the names; lengths in metres, temperatures in °C. The readiness engine reads bands, ratedWatts,
- * ratedAh, chemistry, ratedA, fuseA, drawA, meanLoadA and lossDb.
+ * ratedAh, chemistry, maxA, ratedA, fuseA, drawA, receiveA, meanLoadA, supplyV, supplyA and lossDb.
  */
 import { z } from 'zod'
 import { BANDS, CHEMISTRIES, type Category } from '#shared/engine/vocabulary.ts'
@@ -46,7 +46,7 @@ export const DETAIL_FIELDS = {
     ratedWatts: watts,
     drawA: drawA.optional(),
     receiveA: amount(0, 100).optional(),
-    /** Mean load of the whole station at the duty of its kind, measured, A. */
+    /** Mean load of the whole station at the duty of its kind, A; a radio check with currents comes before it. */
     meanLoadA: amps,
     minV: volts,
     connector: name,

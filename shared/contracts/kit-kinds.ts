@@ -17,6 +17,8 @@ export const kitPromise = z.strictObject({
   modes: z.array(z.enum(MODES)).max(MODES.length).refine(unique, 'Name each mode once.'),
   watts: amount(0.1, 5000).nullable(),
   hours: amount(0.5, 1000).nullable(),
+  /** Share of the time in which such a station transmits: the hours are computed with it. */
+  transmitPercent: amount(1, 100).nullable().optional(),
 })
 
 /** What a position asks of the item in it; absent means it does not matter. Shown to who packs, never enforced. */

@@ -42,6 +42,8 @@ export const capability = z.object({
   hours: z.number().nullable(),
   usableAh: z.number().nullable(),
   hoursFactors: z.array(z.string()),
+  /** What the hours hold for, on one line. */
+  hoursConditions: z.string().optional(),
 })
 
 export const period = z.object({
@@ -78,6 +80,7 @@ export const promise = z.object({
   modes: z.array(mode),
   watts: z.number().nullable(),
   hours: z.number().nullable(),
+  transmitPercent: z.number().nullable().optional(),
 })
 
 export { computedFor } from './words.ts'

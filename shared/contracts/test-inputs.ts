@@ -132,6 +132,8 @@ export const radioCheckInputs = z.strictObject({
   supplyV: amount(1, 60).optional(),
   /** Supply current while receiving, A. */
   receiveA: amount(0, 200).optional(),
+  /** Where the currents were read: in the radio's own lead, or in the battery's with the whole station running. */
+  currentOf: z.enum(['radio', 'station']).optional(),
   receives: z.boolean(),
   memoryVersion: line(40).optional(),
 })

@@ -26,7 +26,7 @@ export interface KitKindDraft {
   code: string
   name: string
   station: boolean
-  promise: { bands: Band[]; modes: Mode[]; watts: Typed; hours: Typed }
+  promise: { bands: Band[]; modes: Mode[]; watts: Typed; hours: Typed; transmitPercent?: Typed | undefined }
   positions: PositionDraft[]
 }
 

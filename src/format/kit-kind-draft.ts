@@ -11,6 +11,7 @@ interface DescribedKind {
     readonly modes: readonly Mode[]
     readonly watts: number | string | null
     readonly hours: number | string | null
+    readonly transmitPercent?: number | string | null | undefined
   }
   readonly positions: readonly DescribedPosition[]
 }
@@ -41,6 +42,7 @@ export function describeKitKind(kind: DescribedKind): Record<string, string> {
     Modes: kind.promise.modes.map((mode) => MODE_WORDS[mode]).join(', '),
     'Watts at the radio': String(kind.promise.watts ?? ''),
     Hours: String(kind.promise.hours ?? ''),
+    'Transmitting, % of the time': String(kind.promise.transmitPercent ?? ''),
     'Load plan': kind.positions.map(positionLine).join('\n'),
   }
 }

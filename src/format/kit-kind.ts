@@ -19,15 +19,17 @@ interface KindPromise {
   readonly modes: readonly Mode[]
   readonly watts: number | null
   readonly hours: number | null
+  readonly transmitPercent?: number | null | undefined
 }
 
 /** `40 m, 20 m · voice · 100 W · 12 h`; empty where a kind promises nothing. */
-export function promiseText({ bands, modes, watts, hours }: KindPromise): string {
+export function promiseText({ bands, modes, watts, hours, transmitPercent }: KindPromise): string {
   const parts = [
     BANDS.filter((band) => bands.includes(band)).join(', '),
     modes.map((mode) => MODE_WORDS[mode].toLowerCase()).join(' and '),
     watts === null ? '' : quantityText(watts, 'W', 1),
     hours === null ? '' : quantityText(hours, 'h', 1),
+    transmitPercent ? `${quantityText(transmitPercent, '%', 0)} of the time transmitting` : '',
   ]
   return parts.filter((part) => part !== '').join(' · ')
 }

@@ -55,15 +55,39 @@ const SPARE_KINDS: Readonly<Record<string, KindCode>> = { '91': 'HF-E', '92': 'V
 /** RAD-93 gives next to nothing on 70 cm. */
 const WEAK_W: Readonly<Record<string, number>> = { 'RAD-93 70 cm': 6 }
 
-function readingOf(radio: string, band: Band) {
-  const isVhf = band === '2 m' || band === '70 cm'
-  const settingW = isVhf ? 50 : 100
-  return { band, settingW, measuredW: WEAK_W[`${radio} ${band}`] ?? settingW, currentA: isVhf ? 11 : 20 }
+interface Currents {
+  readonly receiveA: number
+  /** Key-down, at the setting that is judged and at lower ones. */
+  readonly transmit: readonly { readonly settingW: number; readonly currentA: number }[]
+}
+
+/** Read in the lead of the battery, with everything running: they give the mean loads of section 4 at its duties. */
+const CURRENTS: Readonly<Partial<Record<KindCode, Currents>>> = {
+  'HF-E': { receiveA: 1.18, transmit: [{ settingW: 100, currentA: 20 }] },
+  VU: { receiveA: 0.97, transmit: [{ settingW: 50, currentA: 11 }] },
+  DG: {
+    receiveA: 3.7,
+    transmit: [
+      { settingW: 100, currentA: 22.5 },
+      { settingW: 50, currentA: 15.5 },
+    ],
+  },
+  XB: { receiveA: 1, transmit: [{ settingW: 50, currentA: 8.5 }] },
+}
+
+function readingsOf(radio: string, band: Band, { transmit }: Currents) {
+  return transmit.map(({ settingW, currentA }) => ({
+    band,
+    settingW,
+    measuredW: WEAK_W[`${radio} ${band}`] ?? settingW,
+    currentA,
+  }))
 }
 
 function job(number: string, { on, wattmeter }: Round, turn: number): Job {
   const radio = `RAD-${number}`
-  const bands = bandsOf(SPARE_KINDS[number] ?? kitOf(`K-${number}`).kind)
+  const kind = SPARE_KINDS[number] ?? kitOf(`K-${number}`).kind
+  const currents = CURRENTS[kind]!
   const instrument = wattmeter ?? instrumentFor('WTM', on, turn)
   const test: Omit<DemoTest & { procedure: 'radio-check' }, 'performed'> = {
     procedure: 'radio-check',
@@ -72,8 +96,10 @@ function job(number: string, { on, wattmeter }: Round, turn: number): Job {
     instrument,
     instrumentNote: `Dummy load DML-${instrument.slice(-2)}`,
     inputs: {
-      readings: bands.map((band) => readingOf(radio, band)),
+      readings: bandsOf(kind).flatMap((band) => readingsOf(radio, band, currents)),
       supplyV: 13.8,
+      receiveA: currents.receiveA,
+      currentOf: 'station',
       receives: true,
       memoryVersion: 'DEMO-3',
     },

@@ -66,11 +66,10 @@ function rowOf(row: KitKindRow): z.input<typeof kitKindRow> {
   }
 }
 
-const promiseOf = ({ bands, modes, watts, hours }: KitPromise) => ({
-  bands: [...bands],
-  modes: [...modes],
-  watts,
-  hours,
+const promiseOf = (promise: KitPromise) => ({
+  ...promise,
+  bands: [...promise.bands],
+  modes: [...promise.modes],
 })
 
 async function read(tx: GroupTx, id: string): Promise<Answer | undefined> {

@@ -20,8 +20,8 @@ import type { TestFiles } from './test-files.ts'
 
 export type { KnownForTest, Performance } from './performance.ts'
 
-/** Raised with every change that can change a result or a finding; stored with each test. */
-export const ENGINE_VERSION = '3'
+/** Raised with every change that can change a result, a finding or a verdict; stored with each test. */
+export const ENGINE_VERSION = '4'
 
 /**
  * `files` holds the parsed files that the inputs name, by their attachment's id, and the baseline's; see

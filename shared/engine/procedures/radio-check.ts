@@ -8,6 +8,7 @@ import type { Band } from '../vocabulary.ts'
 import { expandedUncertainty, type Accuracy } from './accuracy.ts'
 import { byBand } from './by-band.ts'
 import { figure, findingOf, judgeAtLeast, judgementOf, percent, type Judgement } from './judgement.ts'
+import { currentsOf, type CurrentInputs } from './radio-currents.ts'
 
 export interface RadioReading {
   readonly band: Band
@@ -16,7 +17,7 @@ export interface RadioReading {
   readonly currentA?: number | undefined
 }
 
-export interface RadioCheckInputs {
+export interface RadioCheckInputs extends CurrentInputs {
   readonly readings: readonly RadioReading[]
   readonly receives: boolean
 }
@@ -26,10 +27,11 @@ export interface RadioCheckLimits {
 }
 
 export function judgeRadioCheck(
-  { readings, receives }: RadioCheckInputs,
+  inputs: RadioCheckInputs,
   { minPowerFraction }: RadioCheckLimits,
   wattmeter: Accuracy | null,
 ): Outcome<Judgement> {
+  const { readings, receives } = inputs
   const highest = byBand(readings).map(([, list]) => list.reduce((a, b) => (b.settingW > a.settingW ? b : a)))
   const findings = highest.map((reading) => powerFinding(reading, minPowerFraction, wattmeter))
   const deaf = findingOf({
@@ -38,7 +40,10 @@ export function judgeRadioCheck(
     limit: 'receives',
     text: 'does not receive',
   })
-  return judgementOf({ highest, receives }, receives ? findings : [...findings, deaf])
+  return judgementOf(
+    { highest, receives, currents: currentsOf(inputs) },
+    receives ? findings : [...findings, deaf],
+  )
 }
 
 function powerFinding(

@@ -67,7 +67,7 @@ export const BATTERIES_ACTION: Action = {
 
 export const MEASURE_LOAD_ACTION: Action = {
   kind: 'test',
-  text: 'Measure what the station draws and enter it with its radio',
+  text: 'Read what the radio draws, receiving and at full power, in a radio check',
   minutes: SWAP_MINUTES,
 }
 

@@ -1,13 +1,17 @@
 import { DEFAULT_DEPTHS, presentAh, type BatteryShare } from '../battery-energy.ts'
-import { DEFAULT_PEUKERT, leadAcidRuntime } from '../battery-runtime.ts'
+import { DEFAULT_PEUKERT } from '../battery-runtime.ts'
 import { isFailure } from '../outcome.ts'
 import type { Chemistry } from '../vocabulary.ts'
-import { batteryText } from './sentences.ts'
+import type { PlainDate } from '../plain-date.ts'
+import { batteryText } from './endurance-words.ts'
 import { temperatureFactor } from './temperature-factor.ts'
 import type { PolicySettings, ReadinessItem } from './types.ts'
 
 /** A battery whose capacity test stands. */
 export interface CountedBattery {
+  readonly name: string
+  /** Continuous current that it is rated for, A; null: not on record. */
+  readonly maxA: number | null
   readonly share: BatteryShare
   /** Peukert exponent; 1 for all but lead-acid. */
   readonly k: number
@@ -16,7 +20,7 @@ export interface CountedBattery {
   readonly factor: string
 }
 
-const DEFAULT_ENDURANCE_C = 20
+export const DEFAULT_ENDURANCE_C = 20
 /** A share above this is a slip of the meter; the sum counts less of it anyway. */
 const MOST_MEASURED = 1.3
 const LEAD_ACID: readonly Chemistry[] = ['agm', 'gel', 'flooded']
@@ -24,7 +28,7 @@ const LEAD_ACID: readonly Chemistry[] = ['agm', 'gel', 'flooded']
 /** Undefined where its rated capacity is not on record, or where no table says what is left in such cold. */
 export function countBattery(
   { designation, facts }: ReadinessItem,
-  capacityFraction: number,
+  measured: { readonly fraction: number; readonly on: PlainDate },
   settings: PolicySettings,
 ): CountedBattery | undefined {
   const { ratedAh } = facts
@@ -34,10 +38,11 @@ export function countBattery(
   const cold = coldFactor(chemistry, atC, settings)
   if (!ratedAh || cold === undefined) return undefined
   const depth = settings.usableFraction?.[chemistry] ?? DEFAULT_DEPTHS[chemistry] ?? DEFAULT_DEPTHS.agm
-  const measured = Math.min(capacityFraction, MOST_MEASURED)
-  const share = { ratedAh, capacityFraction: measured, depth, temperatureFactor: cold }
+  const capacityFraction = Math.min(measured.fraction, MOST_MEASURED)
+  const share = { ratedAh, capacityFraction, depth, temperatureFactor: cold }
   const k = LEAD_ACID.includes(chemistry) ? (settings.peukert ?? DEFAULT_PEUKERT) : 1
-  return { share, k, usableAh: depth * presentAh(share), factor: batteryText(designation, share, atC) }
+  const factor = batteryText(designation, share, { atC, testedOn: measured.on })
+  return { name: designation, maxA: facts.maxA ?? null, share, k, usableAh: depth * presentAh(share), factor }
 }
 
 function coldFactor(chemistry: Chemistry, atC: number, settings: PolicySettings): number | undefined {
@@ -45,16 +50,4 @@ function coldFactor(chemistry: Chemistry, atC: number, settings: PolicySettings)
   if (chemistry === 'nimh') return 1
   const factor = temperatureFactor(chemistry, atC)
   return isFailure(factor) ? undefined : factor
-}
-
-/** Hours at a mean load, A. Batteries side by side share the load as their capacities; lead-acid pays for its speed. */
-export function hoursAt(batteries: readonly CountedBattery[], loadA: number): number {
-  const bankAh = batteries.reduce((sum, { share }) => sum + presentAh(share), 0)
-  const givenAh = batteries.map((battery) => {
-    if (battery.k === 1 || battery.usableAh === 0) return battery.usableAh
-    const currentA = (loadA * presentAh(battery.share)) / bankAh
-    const runtime = leadAcidRuntime({ ...battery.share, k: battery.k }, [{ share: 1, currentA }])
-    return isFailure(runtime) ? 0 : runtime.hours * currentA
-  })
-  return givenAh.reduce((sum, ah) => sum + ah, 0) / loadA
 }

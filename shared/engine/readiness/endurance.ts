@@ -1,19 +1,15 @@
 import { BATTERIES_ACTION, MEASURE_LOAD_ACTION, replaceAction } from './actions.ts'
 import { standingPart } from './band-part.ts'
-import { countBattery, hoursAt, type CountedBattery } from './counted-battery.ts'
+import { bankRuntime, cutOffText } from './bank-runtime.ts'
+import { countBattery, DEFAULT_ENDURANCE_C, type CountedBattery } from './counted-battery.ts'
+import { conditionsText } from './endurance-words.ts'
 import type { Moment } from './moment.ts'
 import { reasonAbout, reasonOf } from './reason.ts'
 import { ruleFor } from './rules-in-force.ts'
-import {
-  HOURS_UNKNOWN,
-  hoursShortText,
-  loadText,
-  NO_ENDURANCE,
-  noRatingText,
-  notCountedText,
-} from './sentences.ts'
-import { itemsOf, type FilledPosition } from './slots.ts'
+import { HOURS_UNKNOWN, hoursShortText, NO_ENDURANCE, noRatingText, notCountedText } from './sentences.ts'
+import type { FilledPosition } from './slots.ts'
 import { standingOf } from './standing.ts'
+import { stationLoad, type StationLoad } from './station-load.ts'
 import type { Action, Evidence, ReadinessItem, Reason } from './types.ts'
 
 export interface Endurance {
@@ -21,17 +17,19 @@ export interface Endurance {
   readonly hours: number | null
   readonly usableAh: number | null
   readonly factors: readonly string[]
+  /** What the hours hold for, on one line; empty without hours. */
+  readonly conditions: string
   readonly reasons: readonly Reason[]
   readonly tests: readonly Evidence[]
 }
 
 /**
  * Hours from the measured capacity of the batteries whose capacity test stands, the usable fraction, the temperature
- * and the kit's measured mean load. A battery below its limit counts for nothing.
+ * and what the station draws over time. A battery below its limit counts for nothing.
  */
 export function judgeEndurance(moment: Moment, filled: readonly FilledPosition[]): Endurance {
   const batteries = filled.filter(({ position }) => position.category === 'battery')
-  if (batteries.length === 0) return { hours: null, usableAh: null, factors: [], reasons: [], tests: [] }
+  if (batteries.length === 0) return NO_BATTERY
   const judged = batteries.flatMap(({ position, working }) =>
     working.map((item) => judgeBattery(moment, item, position.vital)),
   )
@@ -39,22 +37,37 @@ export function judgeEndurance(moment: Moment, filled: readonly FilledPosition[]
   const found = judged.flatMap(({ reasons }) => reasons)
   // What lifts a battery's own reason brings its hours back; without one, better batteries do.
   const fix = found[0]?.action ?? BATTERIES_ACTION
-  const loadA = meanLoadA(filled)
-  const hours = counted.length > 0 && loadA !== null ? hoursAt(counted, loadA) : null
+  const load = stationLoad(moment, filled)
+  const runtime = counted.length > 0 && load ? bankRuntime(counted, load.profile) : null
+  const hours = runtime?.hours ?? null
+  const short = hoursReasons(moment.state.promise.hours, { hours, counted: counted.length }, fix)
   return {
     hours,
     usableAh: counted.length > 0 ? counted.reduce((sum, battery) => sum + battery.usableAh, 0) : null,
-    factors: [...counted.map(({ factor }) => factor), ...(loadA === null ? [] : [loadText(loadA)])],
-    reasons: [...found, ...hoursReasons(moment.state.promise.hours, { hours, counted: counted.length }, fix)],
+    factors: [...counted.map(({ factor }) => factor), ...(load?.factors ?? []), ...(runtime?.factors ?? [])],
+    conditions: load && runtime ? conditionsOf(moment, load) : '',
+    reasons: [...found, ...short, ...cutOffReasons(counted, load)],
     tests: judged.flatMap(({ tests }) => tests),
   }
 }
 
-/** What the whole station draws, A, written down with its radio; the larger where two say so. */
-function meanLoadA(filled: readonly FilledPosition[]): number | null {
-  const loads = itemsOf(filled, 'radio').flatMap(({ facts }) => facts.meanLoadA ?? [])
-  const loadA = Math.max(0, ...loads)
-  return loadA > 0 ? loadA : null
+const NO_BATTERY: Endurance = {
+  hours: null,
+  usableAh: null,
+  factors: [],
+  conditions: '',
+  reasons: [],
+  tests: [],
+}
+
+function conditionsOf({ policy }: Moment, { use, basis }: StationLoad): string {
+  return conditionsText(use, policy?.settings.enduranceC ?? DEFAULT_ENDURANCE_C, basis)
+}
+
+/** Said beside the verdict: a rating is not a measurement. */
+function cutOffReasons(counted: readonly CountedBattery[], load: StationLoad | null): Reason[] {
+  const text = load ? cutOffText(counted, load.profile) : undefined
+  return text === undefined ? [] : [reasonOf({ code: 'battery-over-current', level: 'note', text })]
 }
 
 interface JudgedBattery {
@@ -77,7 +90,8 @@ function judgeBattery(moment: Moment, item: ReadinessItem, vitalPosition: boolea
     const check = { item, rule: weighed, procedure: 'battery-capacity', band: null } as const
     return { counted: undefined, reasons: standingPart(check, standing).reasons, tests: [] }
   }
-  const counted = countBattery(item, fraction ?? 0, moment.policy?.settings ?? {})
+  const measured = { fraction: fraction ?? 0, on: standing.test!.performedOn }
+  const counted = countBattery(item, measured, moment.policy?.settings ?? {})
   if (counted) return { counted, reasons: [], tests: [standing.test!] }
   return uncounted(batteryReason(item, 'battery-unrated', noRatingText(item.designation), standing.test))
 }

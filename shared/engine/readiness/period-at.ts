@@ -44,6 +44,7 @@ export function judgementAt(moment: Moment): Judgement {
       hours: endurance.hours,
       usableAh: endurance.usableAh,
       hoursFactors: endurance.factors,
+      hoursConditions: endurance.conditions,
     },
     oldestVitalOn: oldestDay([...bands.tests, ...endurance.tests, ...items.tests, ...kit.tests]),
   }

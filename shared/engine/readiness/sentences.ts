@@ -1,4 +1,3 @@
-import { MOST_CAPACITY_FRACTION, type BatteryShare } from '../battery-energy.ts'
 import type { PlainDate } from '../plain-date.ts'
 import type { Band, Procedure } from '../vocabulary.ts'
 import { amountText, dayText, onBand, PROCEDURE_WORDS, shortText } from './words.ts'
@@ -115,20 +114,6 @@ export function notCountedText(name: string, fraction: number | null): string {
 
 export function noRatingText(name: string): string {
   return `${name} is not counted: its rated capacity is not on record`
-}
-
-/** One battery's share of the hours, every factor in order. */
-export function batteryText(name: string, share: BatteryShare, atC: number): string {
-  const tooGood = share.capacityFraction > MOST_CAPACITY_FRACTION
-  const counted = tooGood ? `, counted as ${Math.round(MOST_CAPACITY_FRACTION * 100)} %` : ''
-  const measured = `${Math.round(share.capacityFraction * 1000) / 10} % measured${counted}`
-  const usable = `${Math.round(share.depth * 100)} % of it usable`
-  const left = `${Math.round(share.temperatureFactor * 100)} % at ${String(atC).replace('-', '−')} °C`
-  return `${name}: ${amountText(share.ratedAh)} Ah, ${measured}, ${usable}, ${left}`
-}
-
-export function loadText(loadA: number): string {
-  return `mean load ${Math.round(loadA * 100) / 100} A`
 }
 
 export const HOURS_UNKNOWN = 'Hours not known: what the station draws is not on record'

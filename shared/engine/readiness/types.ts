@@ -1,5 +1,6 @@
 import type { BandRegion } from '../band-edges.ts'
 import type { PlainDate } from '../plain-date.ts'
+import type { RadioCurrents } from '../procedures/radio-currents.ts'
 import type {
   Availability,
   Band,
@@ -20,6 +21,8 @@ export interface KitPromise {
   readonly modes: readonly Mode[]
   readonly watts: number | null
   readonly hours: number | null
+  /** Share of the time in which a station of the kind transmits, %; absent: see `DEFAULT_TRANSMIT_SHARE`. */
+  readonly transmitPercent?: number | null | undefined
 }
 
 export interface Position {
@@ -62,6 +65,8 @@ export interface Evidence {
   readonly instrumentId: string | null
   readonly finding: FindingWord
   readonly findings: readonly TestFinding[]
+  /** Radio check: the supply currents that were read. */
+  readonly currents?: RadioCurrents | null
 }
 
 /** What of an item's own fields decides; absent means not entered. */
@@ -74,8 +79,14 @@ export interface ItemFacts {
   readonly ratedA?: number
   /** Radio: current by power setting, A at W. */
   readonly drawA?: readonly { readonly watts: number; readonly amps: number }[]
-  /** Kit's mean load at the duty of its kind, A (measured). */
+  /** Radio: current while receiving, A. */
+  readonly receiveA?: number
+  /** Kit's mean load at the duty of its kind, A, as somebody wrote it down. */
   readonly meanLoadA?: number
+  /** Battery: continuous current that it is rated for, A. */
+  readonly maxA?: number
+  /** Computer: power that it takes from the station's battery, W. */
+  readonly supplyW?: number
   /** Total loss radio to antenna per band with the antenna's SWR included, dB, where it was entered. */
   readonly lossDb?: Partial<Record<Band, number>>
   readonly acquiredOn?: PlainDate
@@ -230,6 +241,8 @@ export interface Capability {
   readonly usableAh: number | null
   /** Each factor of the hours, in order, as "96.3 % of 60 Ah". */
   readonly hoursFactors: readonly string[]
+  /** What the hours hold for, on one line; empty without hours, absent in periods stored before it was kept. */
+  readonly hoursConditions?: string
 }
 
 /** A half-open stretch of time [from, to) with one verdict; `to` null means without end. */

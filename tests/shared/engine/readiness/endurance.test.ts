@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import type { ItemFacts, KitState, PolicySettings } from '#shared/engine/readiness/types.ts'
 import { periodAt } from './support/answers.ts'
-import { capacity } from './support/evidence.ts'
+import { capacity, currentCheck } from './support/evidence.ts'
 import { at } from './support/instants.ts'
 import { itemIn, retested, withItem } from './support/kits.ts'
 import { DEMO_1 } from './support/policy.ts'
@@ -16,10 +16,12 @@ interface Bank {
   readonly settings?: PolicySettings
 }
 
+const steady = (kit: KitState, loadA: number) =>
+  currentCheck(itemIn(kit, 'radio').id, { receiveA: loadA, transmitA: loadA }, TESTED_ON)
+
 function endurance({ facts, percent, loadA, settings = {} }: Bank) {
-  const radio = itemIn(VHF, 'radio')
-  const loaded = withItem(VHF, radio.id, { facts: { ...radio.facts, meanLoadA: loadA } })
-  const kit = retested(withItem(loaded, 'BAT-92', { facts }), capacity('BAT-92', percent, TESTED_ON))
+  const tests = [capacity('BAT-92', percent, TESTED_ON), steady(VHF, loadA)]
+  const kit = retested(withItem(VHF, 'BAT-92', { facts }), ...tests)
   return capabilityOf({ ...kit, policies: [{ ...DEMO_1, settings }] })
 }
 
@@ -37,7 +39,7 @@ describe('a lithium battery', () => {
   it('counts no more than 110 % of its rating', () => {
     const { usableAh, hoursFactors } = endurance({ facts: lithium, percent: 118, loadA: 2 })
     expect(usableAh).toBeCloseTo(20 * 1.1 * 0.8, 9)
-    expect(hoursFactors[0]).toContain('118 % measured, counted as 110 %')
+    expect(hoursFactors[0]).toContain('118 % measured on 1 Jun 2026, counted as 110 %')
     expect(endurance({ facts: lithium, percent: 110, loadA: 2 }).hoursFactors[0]).not.toContain('counted as')
   })
 
@@ -92,7 +94,7 @@ describe('two batteries side by side', () => {
     const twin = (id: string) => ({ facts: { chemistry: 'agm', ratedAh: 30 }, id })
     const two = [twin('BAT-901'), twin('BAT-902')].reduce(
       (kit, { id, facts }) => retested(withItem(kit, id, { facts }), capacity(id, 100, TESTED_ON)),
-      HF,
+      retested(HF, steady(HF, 3.06)),
     )
     const one = endurance({ facts: { chemistry: 'agm', ratedAh: 60 }, percent: 100, loadA: 3.06, settings })
     expect(capabilityOf({ ...two, policies: [{ ...DEMO_1, settings }] }).hours).toBeCloseTo(one.hours ?? 0, 9)

@@ -1,3 +1,4 @@
+import type { CurrentOf } from '#shared/engine/procedures/radio-currents.ts'
 import type { Evidence, TestFinding } from '#shared/engine/readiness/types.ts'
 import type { Band, Procedure } from '#shared/engine/vocabulary.ts'
 import { aFinding, atLeast, atMost, worst } from './findings.ts'
@@ -106,6 +107,23 @@ export function radioCheck(itemId: string, values: ByBand, when: When | string, 
       text: `delivers ${value} W`,
     })
   return aTest('radio-check', itemId, when, perBand(values, judge))
+}
+
+/** A radio check that read supply currents: receiving, and key-down at one power setting. */
+export function currentCheck(
+  itemId: string,
+  { receiveA, transmitA, settingW = 100, of = 'radio' }: Drawn,
+  when: When | string,
+): Evidence {
+  const transmit = [{ settingW, currentA: transmitA }]
+  return { ...radioCheck(itemId, { '2 m': settingW }, when, settingW), currents: { of, receiveA, transmit } }
+}
+
+interface Drawn {
+  readonly receiveA: number | null
+  readonly transmitA: number
+  readonly settingW?: number
+  readonly of?: CurrentOf
 }
 
 export function capacity(itemId: string, percent: number, when: When | string): Evidence {
