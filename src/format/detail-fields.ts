@@ -46,7 +46,12 @@ const FIELDS: Readonly<Record<string, DetailField>> = {
   ratedWatts: number('Rated power', 'W', 1),
   drawA: { kind: 'draw', label: 'Current drawn at each power', hint: 'From the manual, or better measured.' },
   receiveA: number('Current on receive', 'A', 3),
-  meanLoadA: number('Mean load of the station', 'A', 2, 'Of the whole station at its usual duty. A radio check that read the currents comes before it.'),
+  meanLoadA: number(
+    'Mean load of the station',
+    'A',
+    2,
+    'Of the whole station at its usual duty. A radio check that read the currents comes before it.',
+  ),
   minV: number('Lowest supply voltage', 'V', 2),
   connector: text('Connector'),
   connectorA: text('Connector at one end'),

@@ -37,7 +37,7 @@ export function useText(
   return `Transmitting ${percent(transmitShare)} of the time${told}, ${emission}${peaks}: ${drawn}`
 }
 
-export const loadText = (loadA: number) => `mean load ${amps(loadA)}`
+export const loadText = (loadA: number) => `Mean load ${amps(loadA)}`
 
 export type LoadBasis =
   | {

@@ -24,7 +24,7 @@ describe('currents measured in a radio check', () => {
     const { hours, hoursFactors, hoursConditions } = capabilityOf(measured(VHF))
     expect(hours).toBeCloseTo(usableAh / (0.2 * 11 + 0.8 * 0.6), 9)
     expect(hoursFactors.join('; ')).toContain(
-      'mean load 2.68 A, from currents measured at 100 W on RAD-92 on 1 Jun 2026, in the lead of the radio',
+      'Mean load 2.68 A, from currents measured at 100 W on RAD-92 on 1 Jun 2026, in the lead of the radio',
     )
     expect(hoursConditions).toBe(
       'transmitting 20 % of the time, voice, FM, at 20 °C, currents measured 1 Jun 2026',
@@ -121,7 +121,7 @@ describe('without a measurement', () => {
   it('the mean load that somebody wrote down stands, and is called undated', () => {
     const { hours, hoursFactors, hoursConditions } = capabilityOf(VHF)
     expect(hours).toBeCloseTo(usableAh / 3.48, 9)
-    expect(hoursFactors.at(-1)).toBe('mean load 3.48 A, as written down with RAD-92, undated')
+    expect(hoursFactors.at(-1)).toBe('Mean load 3.48 A, as written down with RAD-92, undated')
     expect(hoursConditions).toContain('a mean load written down, undated')
   })
 
