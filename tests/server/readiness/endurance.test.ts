@@ -1,7 +1,7 @@
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest'
 import type { KitReadiness } from '#shared/contracts/kit-readiness.ts'
 import { givenStation, recorded, type Station } from '../../support/evidence.ts'
-import { givenItem, givenKitKind, position, type Item } from '../../support/registry.ts'
+import { at, givenItem, givenKitKind, position, type Item } from '../../support/registry.ts'
 import { startTestApp, type TestApp, type TestMember } from '../../support/test-app.ts'
 
 /** From a radio check to the hours on the kit's page: a station of 30 usable Ah (lithium, 80 % of 37.5 Ah). */
@@ -88,7 +88,7 @@ describe('the hours of a kit', () => {
     const { kind } = station
     const promise = { ...kind.promise, transmitPercent: 120 }
     const body = { code: kind.code, name: kind.name, station: true, promise, positions: kind.positions }
-    const answer = await keeper.post(`/api/v1/kit-kinds/${kind.id}`, body, { version: kind.version })
+    const answer = await at(kind.version, keeper.post(`/api/v1/kit-kinds/${kind.id}`, body))
     expect(answer.status).toBe(422)
     expect(JSON.stringify(answer.body)).toContain('transmitPercent')
   })
