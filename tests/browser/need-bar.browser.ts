@@ -1,6 +1,6 @@
 import type { Page } from '@playwright/test'
 import { violationsByTheme } from './support/axe.ts'
-import { openAs } from './support/sign-in.ts'
+import { openAs, signIn } from './support/sign-in.ts'
 import { expect, test } from './support/test.ts'
 
 /** The net coordinator says what a post needs and hears who can do it, who nearly can, and what is missing. */
@@ -30,8 +30,7 @@ test('says what is needed, reads who can and what the nearest lacks, and opens t
 test('keeps the need in the address, folds the rest away, and forgets it when it is closed', async ({
   page,
 }) => {
-  await openAs(page, 'ines')
-  await page.goto(NEED)
+  await openAs(page, 'ines', NEED)
   await expect(answer(page)).toContainText('can do that')
   await expect(page.getByLabel('Power at the antenna')).toHaveValue('60')
   await expect(page.getByRole('row', { name: /^K-18/ })).toHaveCount(0)
@@ -45,7 +44,7 @@ test('keeps the need in the address, folds the rest away, and forgets it when it
 test('answers for a past instant too, keeps what was typed wrongly, and serves observers', async ({
   page,
 }) => {
-  await openAs(page, 'dana')
+  await signIn(page, 'dana')
   const monthsAgo = new Date(Date.now() - 150 * 86_400_000).toISOString()
   await page.goto(`${NEED}&asOf=${encodeURIComponent(monthsAgo)}`)
   await expect(answer(page)).toContainText('could do that')
@@ -75,8 +74,7 @@ test('moves nothing on the screen while the answer arrives', async ({ page }) =>
 })
 
 test('prints the need and its answer', async ({ page }) => {
-  await openAs(page, 'ines')
-  await page.goto(NEED)
+  await openAs(page, 'ines', NEED)
   await expect(answer(page)).toContainText('can do that')
   await page.emulateMedia({ media: 'print' })
   await expect(
@@ -88,8 +86,7 @@ test('prints the need and its answer', async ({ page }) => {
 
 test('axe finds nothing on the answered board by day and night', async ({ page }, { project }) => {
   await page.setViewportSize({ width: project.name === 'phone' ? 320 : 1280, height: 800 })
-  await openAs(page, 'ines')
-  await page.goto(NEED)
+  await openAs(page, 'ines', NEED)
   await expect(answer(page)).toContainText('can do that')
   await page.getByRole('button', { name: /^Show the \d+ kits that cannot/ }).click()
   expect(await violationsByTheme(page)).toEqual([])

@@ -1,5 +1,5 @@
 import { expect, test } from './support/test.ts'
-import { enter, openAs } from './support/sign-in.ts'
+import { enter, openAs, signIn } from './support/sign-in.ts'
 
 /** The net coordinator's central task: which kits can go, and why. */
 test('reads in one sentence how many stations can go, with every kit and its verdict below', async ({
@@ -30,7 +30,7 @@ test('goes from a verdict to the test record behind it', async ({ page }) => {
 test('asks for a past instant, is told that it is as known then, and keeps the question in the address', async ({
   page,
 }) => {
-  await openAs(page, 'ines')
+  await signIn(page, 'ines')
   const monthsAgo = new Date(Date.now() - 150 * 86_400_000).toISOString()
   await page.goto(`/?asOf=${encodeURIComponent(monthsAgo)}`)
   await expect(page.getByText('as known then')).toBeVisible()
@@ -40,8 +40,7 @@ test('asks for a past instant, is told that it is as known then, and keeps the q
 })
 
 test('keeps a filter in the address and shows what is left', async ({ page }) => {
-  await openAs(page, 'ines')
-  await page.goto('/?verdict=not-fit')
+  await openAs(page, 'ines', '/?verdict=not-fit')
   await expect(page.getByRole('row', { name: /^K-18/ })).toBeVisible()
   await expect(page.getByRole('row', { name: /^K-01/ })).toHaveCount(0)
 })

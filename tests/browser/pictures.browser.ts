@@ -1,6 +1,6 @@
 import type { Page } from '@playwright/test'
 import { violationsByTheme } from './support/axe.ts'
-import { openAs } from './support/sign-in.ts'
+import { signIn } from './support/sign-in.ts'
 import { expect, test } from './support/test.ts'
 
 interface Rows {
@@ -61,7 +61,7 @@ for (const [designation, procedure, finding, answer] of TESTS)
   test(`the picture of a ${procedure} of ${designation} says its answer, and axe finds nothing by day and night`, async ({
     page,
   }) => {
-    await openAs(page, 'tobin')
+    await signIn(page, 'tobin')
     await page.goto(await testPath(page, designation, procedure, finding))
     await expect(page.locator('figure figcaption')).toContainText(words(answer))
     await expect(page.locator('figure svg[role="img"]')).toBeVisible()
@@ -72,7 +72,7 @@ for (const [designation, answer] of ITEMS)
   test(`the pictures of ${designation} over the years say their answers, and axe finds nothing by day and night`, async ({
     page,
   }) => {
-    await openAs(page, 'tobin')
+    await signIn(page, 'tobin')
     await page.goto(`/items/${await itemId(page, designation)}`)
     await expect(page.locator('figure figcaption').first()).toContainText(words(answer))
     await expectWhole(page)
@@ -81,7 +81,7 @@ for (const [designation, answer] of ITEMS)
 test('how a figure was made is a tap away: arithmetic, rule, engine and the calibration of that day', async ({
   page,
 }) => {
-  await openAs(page, 'lupe')
+  await signIn(page, 'lupe')
   await page.goto(await testPath(page, 'XFM-07', 'pair-loss', 'fail'))
   await page.getByText('How this was made').click()
   await expect(page.getByText('10 log (50 / 27.38) = 2.62 dB for both, 1.31 dB for one')).toBeVisible()
@@ -91,7 +91,7 @@ test('how a figure was made is a tap away: arithmetic, rule, engine and the cali
 })
 
 test('the numbers of a picture lead to their tests', async ({ page }) => {
-  await openAs(page, 'lupe')
+  await signIn(page, 'lupe')
   await page.goto(`/items/${await itemId(page, 'FDL-20')}`)
   await page.getByText('The same numbers as a table').click()
   await page.getByRole('group', { name: 'The numbers of the picture' }).getByRole('link').first().click()

@@ -1,6 +1,6 @@
 import type { Page } from '@playwright/test'
 import { spokenTag } from '#shared/engine/tag-speech.ts'
-import { enter, openAs } from './support/sign-in.ts'
+import { enter, openAs, signIn } from './support/sign-in.ts'
 import { expect, test } from './support/test.ts'
 
 /** A tag in the hand of a volunteer: its code opens the thing, and so does its text however it was read. */
@@ -25,7 +25,7 @@ test('a scanned code opens the item, through the sign-in where nobody is signed 
 })
 
 test('what is done to an item lies in the reach of a thumb', async ({ page }) => {
-  await openAs(page, 'lupe')
+  await signIn(page, 'lupe')
   await page.goto(`/t/${(await tagOf(page, 'XFM-07')).toLowerCase()}`)
   for (const name of ['Record a test', 'Move']) {
     const box = await page.getByRole('button', { name }).boundingBox()

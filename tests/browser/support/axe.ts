@@ -7,7 +7,7 @@ const axe = readFileSync(createRequire(import.meta.url).resolve('axe-core/axe.mi
 
 /** Scripts are strict, so axe is injected by the debugger, which the page's own policy does not bind. */
 async function violations(page: Page): Promise<string[]> {
-  await page.evaluate(axe)
+  if (!(await page.evaluate(() => 'axe' in window))) await page.evaluate(axe)
   const results = await page.evaluate(
     () =>
       (window as unknown as { axe: { run(options: object): Promise<AxeResults> } }).axe.run({

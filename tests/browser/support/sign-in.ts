@@ -18,13 +18,18 @@ export async function enter(page: Page, person: Person): Promise<void> {
   await page.waitForURL((url) => !url.pathname.startsWith('/sign-in'))
 }
 
-/** Opens a page as somebody who has signed in already; without the sign-in page, which `enter` walks through. */
-export async function openAs(page: Page, person: Person, path = '/'): Promise<void> {
+/** Signs a person in without the sign-in page, which `enter` walks through. */
+export async function signIn(page: Page, person: Person): Promise<void> {
   const { address, password } = signInOf(person)
   const reply = await page.request.post('/api/v1/sign-in', {
     data: { email: address, password },
     headers: { 'Sec-Fetch-Site': 'same-origin' },
   })
   expect(reply.status(), await reply.text()).toBe(200)
+}
+
+/** Opens a page as somebody who has signed in already. */
+export async function openAs(page: Page, person: Person, path = '/'): Promise<void> {
+  await signIn(page, person)
   await page.goto(path)
 }
