@@ -4,6 +4,7 @@ import { CreateEvidence1796000200000 } from './1796000200000-CreateEvidence.ts'
 import { CreateReadiness1796000300000 } from './1796000300000-CreateReadiness.ts'
 import { CreateAttachments1796000400000 } from './1796000400000-CreateAttachments.ts'
 import { AddWindingCards1796000500000 } from './1796000500000-AddWindingCards.ts'
+import { CreateWhatIfs1796000700000 } from './1796000700000-CreateWhatIfs.ts'
 
 export const migrations = [
   CreateGroupsAndPeople1796000000000,
@@ -12,4 +13,5 @@ export const migrations = [
   CreateReadiness1796000300000,
   CreateAttachments1796000400000,
   AddWindingCards1796000500000,
+  CreateWhatIfs1796000700000,
 ]

@@ -1,81 +1,71 @@
 import type { BoardCount } from '#shared/contracts/board.ts'
 import type { BodyOf, ResponseOf } from '#shared/contracts/endpoint.ts'
-import type { askWhatIf as contract } from '#shared/contracts/advice.ts'
+import type { askWhatIf as contract } from '#shared/contracts/what-if.ts'
+import { doable } from '#shared/engine/advice/doable-steps.ts'
 import { whatIf, type WhatIfKit } from '#shared/engine/advice/what-if.ts'
 import type { WhatIfStep } from '#shared/engine/advice/steps.ts'
-import { isFailure, type Failure } from '#shared/engine/outcome.ts'
-import { holdsUntil } from '#shared/engine/readiness/horizon.ts'
+import { horizonOf } from '#shared/engine/readiness/horizon.ts'
 import type { Period } from '#shared/engine/readiness/types.ts'
-import { invalidField } from '../../errors.ts'
-import type { GroupTx, Statement } from '../../group-transaction.ts'
+import type { GroupTx } from '../../group-transaction.ts'
 import { COUNTS_AT } from '../board/board-statements.ts'
-import { loadKitStates } from '../load-kit-states.ts'
-import { loadSpares } from '../readiness/spare-states.ts'
+import { fitting, readQuestion, type Question } from './what-if-question.ts'
 
 type Answer = ResponseOf<typeof contract>
 type Standing = Answer['kits'][number]['before']
 
-/** Kits that are named ($2), that hold an item named, or that were tested with an instrument named. */
-const CONCERNED: Statement = {
-  name: 'what-if-kits',
-  text: `SELECT id FROM kit WHERE group_id = $1 AND retired_at IS NULL AND (id = ANY($2::uuid[])
-      OR id IN (SELECT kit_id FROM item WHERE group_id = $1 AND id = ANY($2::uuid[]))
-      OR id IN (SELECT coalesce(t.kit_id, i.kit_id) FROM test t LEFT JOIN item i ON i.id = t.item_id
-        WHERE t.group_id = $1 AND t.instrument_id = ANY($2::uuid[])))
-    ORDER BY designation`,
-}
-
 /** The same judgement as when it is done, on the same states, and nothing is written. */
 export async function askWhatIf(tx: GroupTx, { steps }: BodyOf<typeof contract>): Promise<Answer> {
-  const [rows, spares, before] = await Promise.all([
-    tx.sql<{ id: string }>(CONCERNED, [tx.groupId, idsIn(steps)]),
-    loadSpares(tx),
+  const [question, before] = await Promise.all([
+    readQuestion(tx, steps),
     tx.sql<BoardCount & Record<string, unknown>>(COUNTS_AT, [tx.groupId, tx.now]),
   ])
-  const loaded = await loadKitStates(
-    tx,
-    rows.map(({ id }) => id),
-  )
-  const stations = new Map(loaded.map(({ state, station }) => [state.kit.id, station]))
-  const kits = whatIf(
-    loaded.map(({ state }) => state),
-    spares.map(({ state }) => state),
-    steps,
-    tx.now.getTime(),
-  )
-  if (isFailure(kits)) throw invalidStep(kits)
-  const changed = kits.map((kit) => ({ kit, station: stations.get(kit.before.kit.id) ?? false }))
+  const all = judged(tx, question, question.steps)
+  const atOnce = judged(tx, question, doable(question.told))
+  const stations = new Map(question.loaded.map(({ state, station }) => [state.kit.id, station]))
+  const counted = (kits: readonly WhatIfKit[]) =>
+    kits
+      .map((kit) => ({ kit, station: stations.get(kit.before.kit.id) ?? false }))
+      .reduce(recounted, [...before])
+  const soon = new Map(atOnce.map(({ before: { kit }, becomes }) => [kit.id, becomes]))
   return {
     at: tx.now.toISOString(),
-    kits: kits.map(kitOf).sort((a, b) => a.designation.localeCompare(b.designation)),
+    steps: question.told.map(({ text, waits }) => ({ text, waits })),
+    kits: all
+      .map((kit) => kitOf(kit, soon.get(kit.before.kit.id) ?? kit.was))
+      .sort((a, b) => a.designation.localeCompare(b.designation)),
     before,
-    after: changed.reduce(recounted, [...before]),
+    atOnce: counted(atOnce),
+    after: counted(all),
+    basis: question.basis,
   }
 }
 
-const ID = /[0-9a-f]{8}-[0-9a-f-]{27}/g
-
-function idsIn(steps: readonly WhatIfStep[]): string[] {
-  return [...new Set(JSON.stringify(steps).match(ID) ?? [])]
+function judged(tx: GroupTx, { loaded, spares }: Question, steps: readonly WhatIfStep[]): WhatIfKit[] {
+  const states = loaded.map(({ state }) => state)
+  return fitting(whatIf(states, spares, steps, tx.now.getTime()))
 }
 
-function invalidStep({ field = 'steps', message }: Failure) {
-  return invalidField(`#/${field.replace(/\[(\d+)\]/, '/$1')}`, message)
-}
-
-function kitOf({ before, was, becomes }: WhatIfKit): Answer['kits'][number] {
+function kitOf({ before, was, becomes }: WhatIfKit, atOnce: readonly Period[]): Answer['kits'][number] {
   const { id: kitId, designation } = before.kit
-  return { kitId, designation, before: standingOf(was), after: standingOf(becomes) }
+  return {
+    kitId,
+    designation,
+    before: standingOf(was),
+    atOnce: standingOf(atOnce),
+    after: standingOf(becomes),
+  }
 }
 
 function standingOf(periods: readonly Period[]): Standing {
   const { verdict, availability, reasons } = periods[0]!
-  const until = holdsUntil(periods)
+  const [now, next] = horizonOf(periods)
+  const until = now?.until ?? null
   return {
     verdict,
     availability,
     reasons: [...reasons],
     holdsUntil: until === null ? null : new Date(until).toISOString(),
+    then: next?.verdict ?? null,
   }
 }
 

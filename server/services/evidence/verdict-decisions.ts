@@ -61,14 +61,27 @@ export async function decideVerdict(
   const untilAt = body.untilAt === undefined ? null : new Date(body.untilAt)
   if (known) return sameAgain(known, { kitId, kind: body.kind, toVerdict, reason: body.reason, untilAt })
   if (untilAt && untilAt <= tx.now) throw invalidField('#/untilAt', 'Choose a time to come.')
-  const values = [decisionId, tx.groupId, kitId, body.kind, toVerdict, body.reason, tx.now, untilAt]
-  await namingDuplicates(() => tx.sql(INSERT, [...values, tx.actor.memberId]))
+  await insertDecision(tx, { id: decisionId, kit, kind: body.kind, toVerdict, reason: body.reason, untilAt })
+  await rewriteReadiness(tx, [kitId])
+  return readDecision(tx, decisionId)
+}
+
+interface NewDecision extends Pick<DecisionAnswer, 'id' | 'kind' | 'toVerdict' | 'reason'> {
+  readonly kit: { readonly id: string; readonly designation: string }
+  readonly untilAt: Date | null
+}
+
+/** The row and its entry in the history; the caller rewrites the kit. */
+export async function insertDecision(
+  tx: GroupTx,
+  { id, kit, kind, toVerdict, reason, untilAt }: NewDecision,
+): Promise<void> {
+  const values = [id, tx.groupId, kit.id, kind, toVerdict, reason, tx.now, untilAt, tx.actor.memberId]
+  await namingDuplicates(() => tx.sql(INSERT, values))
   const what = toVerdict
     ? `lowered ${kit.designation} to ${verdictWords(toVerdict)}`
     : `accepted a risk for ${kit.designation}`
-  await auditDecision(tx, kitId, { action: 'verdict-decided', summary: `${what}: ${body.reason}` })
-  await rewriteReadiness(tx, [kitId])
-  return readDecision(tx, decisionId)
+  await auditDecision(tx, kit.id, { action: 'verdict-decided', summary: `${what}: ${reason}` })
 }
 
 function sameAgain(

@@ -41,7 +41,7 @@ const EVIDENCE: Statement = {
 const INSTRUMENTS: Statement = {
   name: 'spare-instruments',
   text: `SELECT DISTINCT t.item_id AS for_kit, n.id, n.designation, n.category FROM test t
-    JOIN item n ON n.id = t.instrument_id WHERE t.item_id IN (${SPARE})`,
+    JOIN item n ON n.id = t.instrument_id WHERE t.item_id IN (${SPARE}) ORDER BY n.designation, n.id`,
 }
 const RAISED: Statement = {
   name: 'spare-raised-checks',

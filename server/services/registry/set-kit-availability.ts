@@ -2,7 +2,8 @@ import type { z } from 'zod'
 import type { setKitAvailability as contract } from '#shared/contracts/kits.ts'
 import { dayText } from '#shared/engine/readiness/words.ts'
 import type { AppContext } from '../../context.ts'
-import { inGroup } from '../../group-transaction.ts'
+import type { Kit } from '../../entities/Kit.ts'
+import { inGroup, type GroupTx } from '../../group-transaction.ts'
 import { record } from '../audit.ts'
 import { rewriteReadiness } from '../rewrite-readiness.ts'
 import { changesOf, isEmpty } from './changes.ts'
@@ -24,24 +25,28 @@ export function setKitAvailability(
   return inGroup(ctx, by, async (tx) => {
     const row = await lockAt(tx, kit, { id: kitId, version })
     refuseRetired(row, row.designation)
-    const { availability, reason, expectedReturnOn, holderId } = body
-    await requireReference(tx, { to: 'member', id: holderId, pointer: '#/holderId', before: row.holderId })
-    const columns = { availability, availabilityReason: reason, expectedReturnOn, holderId }
-    const changes = changesOf(row, columns)
-    if (!isEmpty(changes)) {
-      await save(tx, kit, row, columns)
-      await record(tx, {
-        action: 'kit-availability-set',
-        subjectType: 'kit',
-        subjectId: kitId,
-        kitId,
-        summary: summaryOf(row.designation, body),
-        ...changes,
-      })
-      await rewriteReadiness(tx, [kitId])
-    }
+    if (await writeAvailability(tx, row, body)) await rewriteReadiness(tx, [kitId])
     return (await kit.read(tx, kitId))!
   })
+}
+
+/** Of a locked kit in use, with its trace; false where nothing changes. The caller rewrites the kit's readiness. */
+export async function writeAvailability(tx: GroupTx, row: Kit, body: Body): Promise<boolean> {
+  const { availability, reason, expectedReturnOn, holderId } = body
+  await requireReference(tx, { to: 'member', id: holderId, pointer: '#/holderId', before: row.holderId })
+  const columns = { availability, availabilityReason: reason, expectedReturnOn, holderId }
+  const changes = changesOf(row, columns)
+  if (isEmpty(changes)) return false
+  await save(tx, kit, row, columns)
+  await record(tx, {
+    action: 'kit-availability-set',
+    subjectType: 'kit',
+    subjectId: row.id,
+    kitId: row.id,
+    summary: summaryOf(row.designation, body),
+    ...changes,
+  })
+  return true
 }
 
 /** "set K-10 to assigned until 5 Nov 2026: training" */

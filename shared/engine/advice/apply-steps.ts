@@ -1,9 +1,22 @@
+import { listText } from '../plain-words.ts'
 import { failure, isFailure, type Outcome } from '../outcome.ts'
 import type { EpochMs, Evidence, KitState } from '../readiness/types.ts'
 import { boughtPart } from './bought-part.ts'
 import { hypotheticalCount, passingTest } from './hypothetical-test.ts'
+import { stepFailure } from './step-failure.ts'
 import { boughtId, type WhatIfStep } from './steps.ts'
-import { alone, findItem, mapStates, putKit, putLoose, withItem, without, type World } from './world.ts'
+import { skip } from './skip-test.ts'
+import {
+  alone,
+  findItem,
+  mapStates,
+  packed,
+  putKit,
+  putLoose,
+  withItem,
+  without,
+  type World,
+} from './world.ts'
 
 /**
  * The world after these steps, at an instant. A failure names the step by its place, `steps[2]`: what it names is not
@@ -13,7 +26,7 @@ export function applySteps(world: World, steps: readonly WhatIfStep[], at: Epoch
   let now = world
   for (const [place, step] of steps.entries()) {
     const next = applyStep(now, step, at)
-    if (isFailure(next)) return failure(next.code, next.message, { field: `steps[${place}]` })
+    if (isFailure(next)) return stepFailure(next, place)
     now = next
   }
   return now
@@ -21,7 +34,7 @@ export function applySteps(world: World, steps: readonly WhatIfStep[], at: Epoch
 
 const gone = (what: string) => failure('E_UNKNOWN', `There is no such ${what} in your group.`)
 
-function applyStep(world: World, step: WhatIfStep, at: EpochMs): Outcome<World> {
+export function applyStep(world: World, step: WhatIfStep, at: EpochMs): Outcome<World> {
   switch (step.kind) {
     case 'move':
       return move(world, step)
@@ -43,6 +56,8 @@ function applyStep(world: World, step: WhatIfStep, at: EpochMs): Outcome<World> 
       }))
     case 'buy':
       return buy(world, step)
+    case 'skip':
+      return skip(world, step, at)
   }
 }
 
@@ -63,6 +78,13 @@ function move(world: World, { itemId, kitId, positionId }: WhatIfStep & { kind: 
   if (!position) return gone('position')
   if (position.category !== found.item.category)
     return failure('E_CATEGORY', `${found.item.designation} does not belong in ${position.name}.`)
+  const there = kit.items.filter((item) => item.positionId === positionId)
+  if (there.length >= position.quantity)
+    return failure(
+      'E_FULL',
+      `${position.name} of ${kit.kit.designation} is full: ${listText(there.map((item) => item.designation))}. ` +
+        'Take that out first.',
+    )
   return putKit(left, withItem(kit, found.loose ? found.state : alone(found), positionId))
 }
 
@@ -100,7 +122,7 @@ function buy(world: World, { kitId, positionId }: WhatIfStep & { kind: 'buy' }):
     return failure('E_THERE', `A part for ${position.name} was bought already.`)
   return onKit(world, kitId, (state) => ({
     ...state,
-    items: [...state.items, boughtPart(state, position)],
+    items: packed(state.items, boughtPart(state, position)),
   }))
 }
 

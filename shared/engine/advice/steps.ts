@@ -20,6 +20,23 @@ export type WhatIfStep =
   | { readonly kind: 'back'; readonly kitId: string }
   /** A part that is good enough is bought for a position; it has no test yet. See `boughtId`. */
   | { readonly kind: 'buy'; readonly kitId: string; readonly positionId: string }
+  /** A test is not made, whatever the kit's verdict is without it; a risk may be accepted for that, with an end. */
+  | {
+      readonly kind: 'skip'
+      readonly kitId: string
+      readonly subjectId: string
+      readonly procedure: Procedure
+      readonly band: Band | null
+      readonly accept: AcceptedRisk | null
+    }
+
+export interface AcceptedRisk {
+  readonly reason: string
+  /** ISO 8601. */
+  readonly untilAt: string
+  /** Who takes it. */
+  readonly by: string
+}
 
 /** The id under which later steps name what a `buy` brought. */
 export function boughtId(kitId: string, positionId: string): string {

@@ -76,12 +76,21 @@ export function withItem(state: KitState, spare: KitState, positionId: string): 
   const instruments = new Set(state.instruments.map(({ id }) => id))
   return {
     ...state,
-    items: [...state.items, ...spare.items.map((item) => ({ ...item, positionId }))],
+    items: spare.items.reduce((items, item) => packed(items, { ...item, positionId }), state.items),
     evidence: [...state.evidence, ...spare.evidence.filter(({ id }) => !known.has(id))],
     instruments: [...state.instruments, ...spare.instruments.filter(({ id }) => !instruments.has(id))],
     raisedChecks: [...state.raisedChecks, ...spare.raisedChecks],
   }
 }
+
+/** The items with one more, in the order in which the service reads them: reasons are told in that order. */
+export function packed(items: KitState['items'], item: ReadinessItem): KitState['items'] {
+  const place = items.findIndex((one) => isBefore(item, one))
+  return place < 0 ? [...items, item] : items.toSpliced(place, 0, item)
+}
+
+const isBefore = (a: ReadinessItem, b: ReadinessItem) =>
+  a.designation === b.designation ? a.id < b.id : a.designation < b.designation
 
 export function putKit(world: World, state: KitState): World {
   return { ...world, kits: new Map(world.kits).set(state.kit.id, state) }

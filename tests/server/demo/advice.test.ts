@@ -1,6 +1,7 @@
 import { v7 as uuidv7 } from 'uuid'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
-import { askWhatIf, readAdvice, type AdvicePlan, type WhatIfAnswer } from '#shared/contracts/advice.ts'
+import { readAdvice, type AdvicePlan } from '#shared/contracts/advice.ts'
+import { askWhatIf, type WhatIfAnswer } from '#shared/contracts/what-if.ts'
 import type { BoardAnswer } from '#shared/contracts/board.ts'
 import type { ResponseOf } from '#shared/contracts/endpoint.ts'
 import type { KitReadiness } from '#shared/contracts/kit-readiness.ts'

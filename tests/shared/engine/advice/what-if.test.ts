@@ -8,7 +8,9 @@ import type { KitState } from '#shared/engine/readiness/types.ts'
 import { PROCEDURES, VERDICTS } from '#shared/engine/vocabulary.ts'
 import { NOW } from '../readiness/support/arbitrary-items.ts'
 import { arbitraryKit } from '../readiness/support/arbitrary-kits.ts'
+import { HF } from '../readiness/support/sample-kits.ts'
 import { RUNS, SLOW } from '../readiness/support/runs.ts'
+import { renamed } from './support/renamed.ts'
 
 const after = (kits: readonly KitState[], spares: readonly KitState[], steps: readonly WhatIfStep[]) => {
   const answer = whatIf(kits, spares, steps, NOW)
@@ -19,27 +21,6 @@ const rank = ([first]: WhatIfKit['was']) => VERDICTS.indexOf(first!.verdict)
 const withAnItem = arbitraryKit
   .filter(({ items }) => items.some(({ positionId }) => positionId !== null))
   .chain((state) => fc.constantFrom(...state.items).map((item) => ({ state, item })))
-
-/** The same kit under names of its own, so that two can stand side by side. */
-function renamed(state: KitState, suffix: string): KitState {
-  const own = new Set([state.kit.id, ...state.items.map(({ id }) => id)])
-  const name = (id: string) => (own.has(id) ? `${id}${suffix}` : id)
-  return {
-    ...state,
-    kit: { ...state.kit, id: name(state.kit.id) },
-    items: state.items.map((item) => ({ ...item, id: name(item.id) })),
-    evidence: state.evidence.map((test) => ({
-      ...test,
-      id: `${test.id}${suffix}`,
-      subjectId: name(test.subjectId),
-    })),
-    raisedChecks: state.raisedChecks.map((check) => ({
-      ...check,
-      id: `${check.id}${suffix}`,
-      subjectId: name(check.subjectId),
-    })),
-  }
-}
 
 describe('what-if', SLOW, () => {
   it('without steps changes nothing', () => {
@@ -102,13 +83,14 @@ describe('what-if', SLOW, () => {
     fc.assert(
       fc.property(withAnItem, ({ state, item }) => {
         const other = renamed(state, ' other')
+        const room = { kind: 'take-out', itemId: `${item.id} other` } as const
         const step = {
           kind: 'move',
           itemId: item.id,
           kitId: other.kit.id,
           positionId: item.positionId!,
         } as const
-        const giver = after([state, other], [], [step]).find(({ before }) => before === state)
+        const giver = after([state, other], [], [room, step]).find(({ before }) => before === state)
         expect(rank(giver!.becomes)).toBeGreaterThanOrEqual(rank(giver!.was))
       }),
       RUNS,
@@ -156,5 +138,13 @@ describe('what-if', SLOW, () => {
       NOW,
     )
     expect(answer).toMatchObject({ code: 'E_UNKNOWN', field: 'steps[1]' })
+  })
+
+  it('refuses to put a second thing where there is room for one', () => {
+    const state = HF
+    const other = renamed(state, ' other')
+    const { id, positionId } = state.items.find(({ category }) => category === 'radio')!
+    const step = { kind: 'move', itemId: id, kitId: other.kit.id, positionId: positionId! } as const
+    expect(whatIf([state, other], [], [step], NOW)).toMatchObject({ code: 'E_FULL', field: 'steps[0]' })
   })
 })
