@@ -102,8 +102,8 @@ export const doWhatIf = defineEndpoint({
     reason: line(300, 1),
     /** Where things are put that are taken out of a kit; null: where their kit is. */
     placeId: id.nullable().default(null),
-    /** Of the answer that was looked at. */
-    basis: z.string().max(100),
+    /** Of the answer that was looked at; null: do it on whatever is so now. */
+    basis: line(100).nullable().default(null),
   }),
   response: whatIfDone,
   problems: ['request-invalid', 'not-found', 'id-taken', 'state-conflict'],

@@ -60,6 +60,12 @@ export const routes: RouteRecordRaw[] = [
     meta: { title: 'What to do', roles: CREW, light: true },
   },
   {
+    path: '/what-if',
+    name: 'what-if',
+    component: () => import('@/views/WhatIfView.vue'),
+    meta: { title: 'What if', roles: CREW, light: true },
+  },
+  {
     path: '/policy',
     name: 'policy',
     component: () => import('@/views/PolicyView.vue'),

@@ -20,7 +20,7 @@ test('lists what to do with the quickest way to a station first, and says what t
   await expect(whatIf.getByRole('link', { name: 'K-17' })).toBeVisible()
   await expect(whatIf).toContainText(/1.h 15.min of work/)
 
-  await whatIf.getByRole('button', { name: 'Begin anew' }).click()
+  await whatIf.getByRole('button', { name: 'Discard' }).click()
   await expect(whatIf).not.toContainText('13 of 20')
 })
 

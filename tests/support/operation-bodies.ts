@@ -5,6 +5,7 @@ import type { Ids } from './operations.ts'
 export const BODIES: Readonly<Record<string, (ids: Ids) => object>> = {
   'ask-what-if': (ids) => ({ steps: [{ kind: 'count', kitId: ids('kitId') }] }),
   'change-stock': () => ({ difference: '1', reason: 'Bought' }),
+  'do-what-if': (ids) => ({ steps: [{ kind: 'count', kitId: ids('kitId') }], reason: 'Storm' }),
   'move-item': (ids) => ({
     moveId: ids('moveId'),
     from: { kind: 'nowhere' },

@@ -46,7 +46,7 @@ async function lockedQuestion(tx: GroupTx, { steps, basis }: Body): Promise<Ques
   await lockKits(tx, await concernedKits(tx, ids))
   await tx.sql(LOCK_ITEMS, [tx.groupId, ids])
   const question = await readQuestion(tx, steps)
-  if (question.basis === basis) return question
+  if (basis === null || question.basis === basis) return question
   throw new AppError(
     'state-conflict',
     'Something of this changed since you looked. Nothing was done: look at the new answer first.',

@@ -26,7 +26,8 @@ export function stepSentence(world: World, step: WhatIfStep): string {
     case 'skip': {
       const state = world.kits.get(step.kitId)
       const what = state ? skippedTest(state, step) : PROCEDURE_WORDS[step.procedure]
-      return `Skip the ${what} (${kit(step.kitId)})${step.accept ? ' and accept the risk' : ''}`
+      const inKit = step.subjectId === step.kitId ? '' : ` (${kit(step.kitId)})`
+      return `Skip the ${what}${inKit}${step.accept ? ' and accept the risk' : ''}`
     }
   }
 }

@@ -146,6 +146,7 @@ describe('what-if on the demo', () => {
     expect({ ...moved }).toEqual({
       verdict: then.period.verdict,
       availability: then.period.availability,
+      then: then.nextVerdict,
       reasons: then.period.reasons,
       holdsUntil: then.holdsUntil,
     })
