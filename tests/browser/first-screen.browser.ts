@@ -18,7 +18,7 @@ test('says which stations can go before the application has loaded, where it sta
   await expect(page.getByRole('heading', { level: 1 })).toHaveText(SENTENCE)
   let release = () => {}
   const held = new Promise<void>((resolve) => (release = resolve))
-  await page.route('**/assets/core-*.js', async (route) => {
+  await page.route('**/assets/*.js', async (route) => {
     await held
     await route.continue()
   })
