@@ -59,6 +59,7 @@ export const PROCEDURE_WORDS: Readonly<Record<Procedure, string>> = {
   inspection: 'Inspection',
   count: 'Count',
   calibration: 'Calibration',
+  'session-check': 'Session check',
   'boot-and-update': 'Boot and update',
   'on-air-check': 'On-air check',
 }

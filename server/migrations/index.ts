@@ -4,6 +4,7 @@ import { CreateEvidence1796000200000 } from './1796000200000-CreateEvidence.ts'
 import { CreateReadiness1796000300000 } from './1796000300000-CreateReadiness.ts'
 import { CreateAttachments1796000400000 } from './1796000400000-CreateAttachments.ts'
 import { AddWindingCards1796000500000 } from './1796000500000-AddWindingCards.ts'
+import { AddSessionChecks1796000600000 } from './1796000600000-AddSessionChecks.ts'
 import { CreateWhatIfs1796000700000 } from './1796000700000-CreateWhatIfs.ts'
 
 export const migrations = [
@@ -13,5 +14,6 @@ export const migrations = [
   CreateReadiness1796000300000,
   CreateAttachments1796000400000,
   AddWindingCards1796000500000,
+  AddSessionChecks1796000600000,
   CreateWhatIfs1796000700000,
 ]

@@ -98,7 +98,10 @@ export const EVIDENCE_COLUMNS = `t.id, t.procedure, coalesce(t.item_id, t.kit_id
   t.performed_on::text, t.recorded_at, t.instrument_id, t.finding, t.findings,
   CASE WHEN t.procedure = 'radio-check' THEN t.inputs END AS radio_inputs`
 
-/** Tests that were not corrected since: of the kits, of their items, and the calibrations of the instruments used. */
+/**
+ * Tests that were not corrected since: of the kits, of their items, and the calibrations and session checks of the
+ * instruments used.
+ */
 export const EVIDENCE: Statement = {
   name: 'state-evidence',
   text: `WITH own AS (
@@ -106,7 +109,7 @@ export const EVIDENCE: Statement = {
       UNION ALL SELECT t.kit_id, t.id FROM test t WHERE t.kit_id = ANY($1::uuid[])
     ), calibrations AS (
       SELECT DISTINCT own.for_kit, c.id FROM own JOIN test t ON t.id = own.id
-      JOIN test c ON c.item_id = t.instrument_id AND c.procedure = 'calibration'
+      JOIN test c ON c.item_id = t.instrument_id AND c.procedure IN ('calibration', 'session-check')
     )
     SELECT e.for_kit, ${EVIDENCE_COLUMNS}
     FROM (SELECT for_kit, id FROM own UNION SELECT for_kit, id FROM calibrations) e JOIN test t ON t.id = e.id

@@ -4,7 +4,7 @@
  * ratedAh, chemistry, maxA, ratedA, fuseA, drawA, receiveA, meanLoadA, supplyV, supplyA and lossDb.
  */
 import { z } from 'zod'
-import { BANDS, CHEMISTRIES, type Category } from '#shared/engine/vocabulary.ts'
+import { BANDS, CHEMISTRIES, INSTRUMENT_CATEGORIES, type Category } from '#shared/engine/vocabulary.ts'
 import { amount, line, text } from './fields.ts'
 import { bands } from './kit-kinds.ts'
 
@@ -27,6 +27,15 @@ const accuracy = {
   fullScale: amount(0, 1_000_000).optional(),
   resolution: amount(0, 10_000).optional(),
   unit: line(12, 1).optional(),
+}
+
+/** Of a part that is kept as a reference: what an instrument that has not drifted reads on it. */
+const reference = {
+  referenceReads: line(120, 1).optional(),
+  referenceFor: z.enum(INSTRUMENT_CATEGORIES).optional(),
+  referenceValue: amount(-1_000_000, 1_000_000).optional(),
+  referenceTolerance: amount(0, 1_000_000).optional(),
+  referenceUnit: line(12, 1).optional(),
 }
 
 const frequencyRange = {
@@ -135,14 +144,14 @@ export const DETAIL_FIELDS = {
     connector: name,
   },
   wattmeter: { ...accuracy, ...frequencyRange, connector: name },
-  'dummy-load': { ...accuracy, ratedWatts: watts, loadOhms: ohms, connector: name },
+  'dummy-load': { ...accuracy, ratedWatts: watts, loadOhms: ohms, connector: name, ...reference },
   thermometer: { ...accuracy, sensor: z.enum(['contact', 'infrared']).optional() },
   'battery-tester': { ...accuracy, maxA: amps },
   multimeter: { ...accuracy },
   'clamp-meter': { ...accuracy },
-  'calibration-kit': { ...accuracy, ...frequencyRange, connector: name },
-  'test-fixture': { ...accuracy, loadOhms: ohms, ratedWatts: watts, connector: name },
-  accessory: { contents },
+  'calibration-kit': { ...accuracy, ...frequencyRange, connector: name, ...reference },
+  'test-fixture': { ...accuracy, loadOhms: ohms, ratedWatts: watts, connector: name, ...reference },
+  accessory: { contents, ...reference },
 } as const satisfies Record<Category, z.ZodRawShape>
 
 export type DetailField<C extends Category> = keyof (typeof DETAIL_FIELDS)[C]

@@ -3,7 +3,7 @@ import { BAND_REGIONS } from '#shared/engine/band-edges.ts'
 import type { Accuracy } from '#shared/engine/procedures/accuracy.ts'
 import type { KnownForTest } from '#shared/engine/procedures/performance.ts'
 import { CHEMISTRIES, type Band } from '#shared/engine/vocabulary.ts'
-import { band } from './words.ts'
+import { band, category } from './words.ts'
 
 /** What the engine knows for a test besides its inputs, as a form gets it and as it is kept with the test. */
 
@@ -52,6 +52,17 @@ export const knownShape = z.object({
       })
       .nullable(),
   }),
+  references: z.array(
+    z.object({
+      id: z.string(),
+      designation: z.string(),
+      for: category.nullable(),
+      reads: z.string(),
+      agreed: z.number(),
+      tolerance: z.number(),
+      unit: z.string(),
+    }),
+  ),
   region: z.enum(BAND_REGIONS),
 })
 

@@ -15,6 +15,7 @@ import {
   onAirCheckInputs,
   pairLossInputs,
   radioCheckInputs,
+  sessionCheckInputs,
 } from './test-inputs.ts'
 import { openShortLoadInputs } from './test-inputs-by-file.ts'
 import { storedTest } from './test-shapes.ts'
@@ -72,6 +73,12 @@ export const recordTestBody = z.discriminatedUnion('procedure', [
   z.strictObject({ procedure: z.literal('inspection'), itemId: id, ...judged, inputs: inspectionInputs }),
   z.strictObject({ procedure: z.literal('count'), kitId: id, ...judged, inputs: countInputs }),
   z.strictObject({ procedure: z.literal('calibration'), itemId: id, ...judged, inputs: calibrationInputs }),
+  z.strictObject({
+    procedure: z.literal('session-check'),
+    itemId: id,
+    ...judged,
+    inputs: sessionCheckInputs,
+  }),
   z.strictObject({
     procedure: z.literal('boot-and-update'),
     itemId: id,

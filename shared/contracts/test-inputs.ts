@@ -180,6 +180,13 @@ export const calibrationInputs = z.strictObject({
   deviation: line(200).default(''),
 })
 
+export const sessionCheckInputs = z.strictObject({
+  /** The reference part that was read. */
+  partId: id,
+  /** In the unit of the part's agreed value. */
+  reading: amount(-1_000_000, 1_000_000),
+})
+
 export const bootAndUpdateInputs = z.strictObject({
   boots: z.boolean(),
   updatesDone: z.boolean(),

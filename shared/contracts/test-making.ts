@@ -27,10 +27,12 @@ export const readTestMaking = defineEndpoint({
         /** Unit of the fixed part, of full scale and of the resolution. */
         unit: z.string().nullable(),
         calibration: z.object({
-          state: z.enum(['in-date', 'confirmed', 'lapsed', 'failed', 'none']),
+          state: z.enum(['in-date', 'confirmed', 'vouched', 'lapsed', 'failed', 'check-failed', 'none']),
           before: calibration.nullable(),
           after: calibration.nullable(),
           untilOn: z.string().nullable(),
+          /** The session check that vouches for it or failed. */
+          check: calibration.nullable(),
         }),
       })
       .nullable(),

@@ -60,6 +60,7 @@ export const PROCEDURES = [
   'inspection',
   'count',
   'calibration',
+  'session-check',
   'boot-and-update',
   'on-air-check',
 ] as const

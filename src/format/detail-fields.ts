@@ -1,5 +1,6 @@
-import { CHEMISTRIES, type Category } from '#shared/engine/vocabulary.ts'
+import { CHEMISTRIES, INSTRUMENT_CATEGORIES, type Category } from '#shared/engine/vocabulary.ts'
 import { CHEMISTRY_WORDS } from '@/registry-words.ts'
+import { CATEGORY_WORDS } from '@/words.ts'
 
 /**
  * How each field of an item's details is called, asked for and written. The fields of a category and their limits
@@ -116,6 +117,15 @@ const FIELDS: Readonly<Record<string, DetailField>> = {
   minMhz: number('Lowest frequency', 'MHz', 3),
   maxMhz: number('Highest frequency', 'MHz', 3),
   loadOhms: number('Load', 'Ω', 1),
+  referenceReads: text('Kept as a reference: what is read on it', 'Such as SWR at 7.1 MHz, short lead.'),
+  referenceFor: {
+    kind: 'choice',
+    label: 'Reference for',
+    options: INSTRUMENT_CATEGORIES.map((value) => ({ value, label: CATEGORY_WORDS[value] })),
+  },
+  referenceValue: number('Agreed reading', '', 4, 'As read while the instrument was in date.'),
+  referenceTolerance: number('Tolerance, either way', '', 4, 'In the unit of the reading.'),
+  referenceUnit: text('Unit of the agreed reading', 'Empty for a ratio such as SWR.'),
   sensor: {
     kind: 'choice',
     label: 'Sensor',

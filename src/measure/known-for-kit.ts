@@ -12,6 +12,7 @@ export function knownForKit(plan: Plan): KnownForTest {
     line: {},
     transformer: {},
     sweep: { baseline: null },
+    references: [],
     region: 'itu-2',
     plan,
   }

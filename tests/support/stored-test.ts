@@ -13,6 +13,7 @@ const NOTHING_KNOWN: KnownForTest = {
   sweep: { baseline: null },
   region: 'itu-2',
   plan: { positions: [], sealNumber: null },
+  references: [],
 }
 
 /** A test as it is answered, judged by the engine from its inputs. */

@@ -53,7 +53,7 @@ export const TESTS: Statement = {
         AND t.procedure IN ('heat-test', 'pair-loss', 'open-short-load', 'antenna-sweep')
     ), wanted AS (
       SELECT id FROM own UNION
-      SELECT c.id FROM test c WHERE c.procedure = 'calibration' AND c.item_id IN (SELECT instrument_id FROM own)
+      SELECT c.id FROM test c WHERE c.procedure IN ('calibration', 'session-check') AND c.item_id IN (SELECT instrument_id FROM own)
     )
     SELECT NULL AS for_kit, ${EVIDENCE_COLUMNS}, n.designation AS instrument_designation,
       n.category AS instrument_category, (t.results ->> 'riseK')::float8 AS rise_k,

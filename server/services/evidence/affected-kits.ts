@@ -9,14 +9,14 @@ const MEASURED_WITH: Statement = {
     WHERE t.instrument_id = $1 AND coalesce(i.kit_id, t.kit_id) IS NOT NULL`,
 }
 
-/** Kits whose verdict a test can change: its own, and for a calibration all with results by that instrument. */
+/** Kits whose verdict a test can change: its own, and for a calibration or a session check all with results by that instrument. */
 export async function affectedKits(
   tx: GroupTx,
   subject: Pick<TestSubject, 'id' | 'kitId'>,
   procedure: Procedure,
 ): Promise<string[]> {
   const own = subject.kitId === null ? [] : [subject.kitId]
-  if (procedure !== 'calibration') return own
+  if (procedure !== 'calibration' && procedure !== 'session-check') return own
   const rows = await tx.sql<{ kit_id: string }>(MEASURED_WITH, [subject.id])
   return [...new Set([...own, ...rows.map((row) => row.kit_id)])]
 }

@@ -17,6 +17,7 @@ const USED: Readonly<Record<Procedure, readonly (keyof KeptKnown)[]>> = {
   inspection: [],
   count: ['plan'],
   calibration: [],
+  'session-check': ['references'],
   'boot-and-update': [],
   'on-air-check': [],
 }
@@ -28,6 +29,7 @@ const NOTHING: Required<KeptKnown> = {
   line: {},
   transformer: {},
   sweep: { baseline: null },
+  references: [],
   region: DEFAULT_REGION,
   plan: { positions: [], sealNumber: null },
 }

@@ -32,6 +32,7 @@ export function knownForTest({ subject, history, policy, rule, accuracy }: Parts
     feedline: feedlineHistory(history.feedline, details),
     line: lineFacts(details),
     transformer: transformerFacts(details, history.efficiency),
+    references: history.references,
     sweep: { baseline: history.baseline && sweepBaseline(history.baseline) },
     region: policy.settings.bandRegion ?? DEFAULT_REGION,
     plan: history.plan,

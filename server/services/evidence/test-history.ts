@@ -1,5 +1,6 @@
 import type { FeedlineReading } from '#shared/engine/procedures/line-history.ts'
 import type { WorstSwr } from '#shared/engine/procedures/sweep-baseline.ts'
+import type { ReferencePart } from '#shared/engine/procedures/session-check.ts'
 import type { Position } from '#shared/engine/readiness/types.ts'
 import type { Band, Procedure } from '#shared/engine/vocabulary.ts'
 import type { GroupTx, Statement } from '../../group-transaction.ts'
@@ -9,6 +10,7 @@ export interface TestHistory {
   readonly feedline: readonly FeedlineRow[]
   readonly efficiency: readonly EfficiencyRow[]
   readonly baseline: BaselineRow | null
+  readonly references: readonly ReferencePart[]
   readonly plan: { readonly positions: readonly Position[]; readonly sealNumber: string | null }
 }
 
@@ -40,6 +42,8 @@ export interface BaselineRow {
   file: string | null
   worst: WorstSwr[]
 }
+
+type ReferenceRow = ReferencePart & Record<string, unknown>
 
 // Corrected tests count no more, and a test that this one corrects is among them.
 const EARLIER = `t.item_id = $1 AND t.performed_at < $2 AND t.id IS DISTINCT FROM $3
@@ -77,10 +81,22 @@ const PLAN: Statement = {
 }
 const SEAL: Statement = { name: 'count-seal', text: 'SELECT seal_number FROM kit WHERE id = $1' }
 
+/** A part is one as soon as its agreed value and its tolerance are on record; what is retired is none. */
+const REFERENCES: Statement = {
+  name: 'reference-parts',
+  text: `SELECT id, designation, details ->> 'referenceFor' AS for, coalesce(details ->> 'referenceReads', '') AS reads,
+      (details ->> 'referenceValue')::float8 AS agreed, (details ->> 'referenceTolerance')::float8 AS tolerance,
+      coalesce(details ->> 'referenceUnit', '') AS unit
+    FROM item WHERE group_id = $1 AND id <> $2 AND retired_at IS NULL AND condition = 'serviceable'
+      AND details ? 'referenceValue' AND details ? 'referenceTolerance'
+    ORDER BY designation, id LIMIT 100`,
+}
+
 const NOTHING: TestHistory = {
   feedline: [],
   efficiency: [],
   baseline: null,
+  references: [],
   plan: { positions: [], sealNumber: null },
 }
 
@@ -93,6 +109,8 @@ export async function testHistory(tx: GroupTx, asked: Asked): Promise<TestHistor
       return { ...NOTHING, efficiency: await tx.sql<EfficiencyRow>(EFFICIENCY, values) }
     case 'antenna-sweep':
       return { ...NOTHING, baseline: (await tx.sql<BaselineRow>(BASELINE, values))[0] ?? null }
+    case 'session-check':
+      return { ...NOTHING, references: await tx.sql<ReferenceRow>(REFERENCES, [tx.groupId, asked.subjectId]) }
     case 'count':
       return { ...NOTHING, plan: await loadPlan(tx, asked.subjectId) }
     default:

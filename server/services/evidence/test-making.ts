@@ -28,7 +28,7 @@ const TEST: Statement = {
 }
 const CALIBRATIONS: Statement = {
   name: 'calibrations-of-instrument',
-  text: `SELECT ${EVIDENCE_COLUMNS} FROM test t WHERE t.item_id = $1 AND t.procedure = 'calibration'
+  text: `SELECT ${EVIDENCE_COLUMNS} FROM test t WHERE t.item_id = $1 AND t.procedure IN ('calibration', 'session-check')
       AND NOT EXISTS (SELECT FROM test s WHERE s.supersedes_id = t.id)
     ORDER BY t.performed_at DESC, t.recorded_at DESC, t.id DESC`,
 }
@@ -46,8 +46,10 @@ export async function readTestMaking(tx: GroupTx, testId: string): Promise<TestM
   const performedAt = row.performed_at.getTime()
   const policy = policyAt({ policies }, performedAt)
   const rule = ruleFor(policy, { category, facts: {} }, 'calibration', row.performed_on)
+  const evidence = calibrations.map(evidenceOf)
   const standing = calibrationStanding({
-    calibrations: calibrations.map(evidenceOf),
+    calibrations: evidence.filter(({ procedure }) => procedure === 'calibration'),
+    sessionChecks: evidence.filter(({ procedure }) => procedure === 'session-check'),
     performedAt,
     performedOn: row.performed_on,
     months: rule?.intervalMonths ?? null,
@@ -63,8 +65,14 @@ export async function readTestMaking(tx: GroupTx, testId: string): Promise<TestM
   }
 }
 
-function answered({ state, before, after, untilOn }: CalibrationStanding) {
-  return { state, before: before && named(before), after: after && named(after), untilOn }
+function answered({ state, before, after, untilOn, check }: CalibrationStanding) {
+  return {
+    state,
+    before: before && named(before),
+    after: after && named(after),
+    untilOn,
+    check: check && named(check),
+  }
 }
 
 const named = ({ id, performedOn, finding }: Evidence) => ({ testId: id, performedOn, finding })

@@ -32,7 +32,7 @@ const EVIDENCE: Statement = {
   text: `WITH own AS (SELECT t.id, t.item_id AS for_item, t.instrument_id FROM test t WHERE t.item_id IN (${SPARE})),
     calibrations AS (
       SELECT DISTINCT c.id, own.for_item FROM own JOIN test c ON c.item_id = own.instrument_id
-        AND c.procedure = 'calibration'
+        AND c.procedure IN ('calibration', 'session-check')
     )
     SELECT e.for_item AS for_kit, ${EVIDENCE_COLUMNS}
     FROM (SELECT id, for_item FROM own UNION SELECT id, for_item FROM calibrations) e JOIN test t ON t.id = e.id

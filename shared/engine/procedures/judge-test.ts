@@ -16,6 +16,7 @@ import { judgePairLoss } from './pair-loss.ts'
 import type { KnownForTest, Performance } from './performance.ts'
 import { judgeBootAndUpdate, judgeCalibration, judgeInspection } from './plain-checks.ts'
 import { judgeRadioCheck } from './radio-check.ts'
+import { judgeSessionCheck } from './session-check.ts'
 import type { TestFiles } from './test-files.ts'
 
 export type { KnownForTest, Performance } from './performance.ts'
@@ -55,6 +56,8 @@ export function judgeTest(
       })
     case 'radio-check':
       return judgeRadioCheck(performance.inputs, limitsOf('radio-check', rule), instrument)
+    case 'session-check':
+      return judgeSessionCheck(performance.inputs, known.references)
     case 'count':
       return judgeCount(performance.inputs, known.plan)
     default:

@@ -163,6 +163,17 @@ export const METHOD_CARDS: Readonly<Record<Procedure, readonly MethodCard[]>> = 
       [],
     ),
   ],
+  'session-check': [
+    card(
+      'A reference part, at the start of the session',
+      [
+        'Let the instrument warm up and calibrate it as usual, at the end of its lead.',
+        'Read the part as its record says: same leads, same place, same setting.',
+        'Enter the reading before anything else is measured, and again at the end of a long session.',
+      ],
+      [],
+    ),
+  ],
   'boot-and-update': [
     card(
       'Booted, updated, clock checked',

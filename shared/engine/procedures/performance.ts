@@ -17,6 +17,7 @@ import type { PairFileInputs } from './pair-loss-by-file.ts'
 import type { PairLossInputs } from './pair-loss.ts'
 import type { BootAndUpdateInputs, CalibrationInputs, InspectionInputs } from './plain-checks.ts'
 import type { RadioCheckInputs } from './radio-check.ts'
+import type { ReferencePart, SessionCheckInputs } from './session-check.ts'
 import type { SweepBaseline } from './sweep-baseline.ts'
 
 export type Performance =
@@ -30,6 +31,7 @@ export type Performance =
   | { readonly procedure: 'inspection'; readonly inputs: InspectionInputs }
   | { readonly procedure: 'count'; readonly inputs: CountInputs }
   | { readonly procedure: 'calibration'; readonly inputs: CalibrationInputs }
+  | { readonly procedure: 'session-check'; readonly inputs: SessionCheckInputs }
   | { readonly procedure: 'boot-and-update'; readonly inputs: BootAndUpdateInputs }
   | { readonly procedure: 'on-air-check'; readonly inputs: OnAirCheckInputs }
 
@@ -46,6 +48,8 @@ export interface KnownForTest {
   readonly line: LineFacts
   readonly transformer: TransformerFacts
   readonly sweep: { readonly baseline: SweepBaseline | null }
+  /** Session checks: the parts of the group that are kept as references. */
+  readonly references: readonly ReferencePart[]
   /** Where the group transmits: whose band edges count. */
   readonly region: BandRegion
   /** Counts: the load plan, and the number of the seal on record. */

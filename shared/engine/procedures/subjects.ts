@@ -12,6 +12,7 @@ export const SUBJECTS: Readonly<Record<Procedure, readonly Category[] | 'any' | 
   inspection: 'any',
   count: 'kit',
   calibration: INSTRUMENT_CATEGORIES,
+  'session-check': INSTRUMENT_CATEGORIES,
   'boot-and-update': ['computer'],
   'on-air-check': 'kit',
 }
@@ -28,6 +29,7 @@ export const INSTRUMENTS: Readonly<Record<Procedure, readonly Category[]>> = {
   inspection: [],
   count: [],
   calibration: [],
+  'session-check': [],
   'boot-and-update': [],
   'on-air-check': ['wattmeter'],
 }

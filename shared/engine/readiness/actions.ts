@@ -16,6 +16,7 @@ export const MINUTES: Readonly<Record<Procedure, number>> = {
   inspection: 10,
   count: 30,
   calibration: 60,
+  'session-check': 10,
   'boot-and-update': 60,
   'on-air-check': 15,
 }

@@ -6,7 +6,10 @@ import type { Evidence, RaisedCheck } from './types.ts'
 
 /** Why a result does not count for the moment. */
 export type Doubt =
-  | { readonly kind: 'calibration-lapsed' | 'calibration-failed'; readonly instrument: string }
+  | {
+      readonly kind: 'calibration-lapsed' | 'calibration-failed' | 'session-check-failed'
+      readonly instrument: string
+    }
   | { readonly kind: 'recall'; readonly check: RaisedCheck }
 
 /** Two ways to measure how much a transformer loses: each answers for the other. */
@@ -31,7 +34,8 @@ export function doubtAbout(moment: Moment, test: Evidence, band: Band | null): D
 
 /**
  * A result stands when the last calibration before it was good and had not lapsed, and the next one did not fail. A
- * good calibration after a lapse shows that the instrument had stayed right, and restores what was measured meanwhile.
+ * good calibration after a lapse shows that the instrument had stayed right, and restores what was measured meanwhile;
+ * a session check against a reference part speaks between calibrations.
  */
 function calibrationDoubt(moment: Moment, test: Evidence): Doubt | undefined {
   if (test.instrumentId === null) return undefined
@@ -39,12 +43,16 @@ function calibrationDoubt(moment: Moment, test: Evidence): Doubt | undefined {
   if (!instrument) return undefined
   const policy = policyAt(moment.state, test.performedAt)
   const subject = { category: instrument.category, facts: {} }
+  const known = (procedure: Procedure) =>
+    moment.tests(instrument.id, procedure).filter((one) => one.recordedAt <= moment.at)
   const { state } = calibrationStanding({
-    calibrations: moment.tests(instrument.id, 'calibration').filter((one) => one.recordedAt <= moment.at),
+    calibrations: known('calibration'),
+    sessionChecks: known('session-check'),
     performedAt: test.performedAt,
     performedOn: test.performedOn,
     months: ruleFor(policy, subject, 'calibration', test.performedOn)?.intervalMonths ?? null,
   })
+  if (state === 'check-failed') return { kind: 'session-check-failed', instrument: instrument.designation }
   if (state !== 'failed' && state !== 'lapsed') return undefined
   return { kind: `calibration-${state}`, instrument: instrument.designation }
 }

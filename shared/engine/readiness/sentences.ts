@@ -31,6 +31,7 @@ export function raisedText(name: string, { procedure, band, reason, dueOn }: Rai
 export function doubtText(name: string, procedure: Procedure, doubt: Doubt, band: Band | null): string {
   const what = `${name}: ${PROCEDURE_WORDS[procedure]}${onBand(band)} is in doubt`
   if (doubt.kind === 'recall') return `${what}, ${doubt.check.reason}`
+  if (doubt.kind === 'session-check-failed') return `${what}, ${doubt.instrument} failed its session check`
   const how = doubt.kind === 'calibration-lapsed' ? 'had lapsed' : 'failed'
   return `${what}, the calibration of ${doubt.instrument} ${how}`
 }

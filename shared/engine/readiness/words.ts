@@ -39,6 +39,7 @@ export const PROCEDURE_WORDS: Readonly<Record<Procedure, string>> = {
   inspection: 'inspection',
   count: 'count',
   calibration: 'calibration',
+  'session-check': 'session check',
   'boot-and-update': 'boot and update',
   'on-air-check': 'on-air check',
 }

@@ -86,6 +86,15 @@ export const CALCULATIONS: Readonly<Record<Procedure, Calculation>> = {
     name: 'Counted against the load plan',
     formulas: ['missing = quantity of the load plan − found'],
   },
+  'session-check': {
+    name: 'Reading against the agreed value of a reference part',
+    section: '',
+    formulas: [
+      'off = reading − agreed value; it passes when it is no further off than the tolerance of the part',
+      'it shows that the instrument repeats itself at this one value, and nothing about the rest of its range',
+    ],
+    source: 'common practice, no source',
+  },
   inspection: STATED,
   calibration: STATED,
   'boot-and-update': STATED,

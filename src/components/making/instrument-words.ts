@@ -27,7 +27,9 @@ export function accuracyText({ accuracy, unit }: Instrument): string {
 }
 
 /** How the calibration stood on the day of the test, as known now. */
-export function calibrationText({ calibration: { state, before, after, untilOn } }: Instrument): string {
+export function calibrationText({
+  calibration: { state, before, after, untilOn, check },
+}: Instrument): string {
   const last = before
     ? `last calibrated on ${dayText(before.performedOn)}`
     : 'no calibration before it on record'
@@ -38,6 +40,10 @@ export function calibrationText({ calibration: { state, before, after, untilOn }
       return `In date that day: ${last}${until}.`
     case 'confirmed':
       return `Shown to be right: ${last}${until}; calibrated again on ${next} and found good.`
+    case 'vouched':
+      return `Lapsed that day: ${last}${until}; a session check on ${dayText(check?.performedOn ?? '')} vouches for it at one value.`
+    case 'check-failed':
+      return `${last.charAt(0).toUpperCase()}${last.slice(1)}${until}; a session check failed on ${dayText(check?.performedOn ?? '')}, which puts these figures in doubt until a calibration shows otherwise.`
     case 'lapsed':
       return `Lapsed that day: ${last}${until}. The figures are in doubt until it is calibrated again.`
     case 'failed':

@@ -15,5 +15,6 @@ export const itemForms: Partial<Record<Procedure, Component>> = {
   'radio-check': defineAsyncComponent(() => import('./RadioCheckForm.vue')),
   inspection: defineAsyncComponent(() => import('./InspectionForm.vue')),
   calibration: defineAsyncComponent(() => import('./CalibrationForm.vue')),
+  'session-check': defineAsyncComponent(() => import('./SessionCheckForm.vue')),
   'boot-and-update': defineAsyncComponent(() => import('./BootAndUpdateForm.vue')),
 }

@@ -25,6 +25,7 @@ const KNOWN: KnownForTest = {
   sweep: { baseline: null },
   region: 'itu-2',
   plan: { positions: [], sealNumber: null },
+  references: [],
 }
 
 const sourcesOf = (texts: Readonly<Record<string, string>>) =>

@@ -17,7 +17,7 @@ const instrument = (fields: Partial<Instrument>): Instrument => ({
   item: { id: 'i', designation: 'WTM-24', category: 'wattmeter' },
   accuracy: {},
   unit: 'W',
-  calibration: { state: 'none', before: null, after: null, untilOn: null },
+  calibration: { state: 'none', before: null, after: null, untilOn: null, check: null },
   ...fields,
 })
 
@@ -118,14 +118,24 @@ describe('what the instrument could be trusted', () => {
       'Shown to be right: last calibrated on 15 Aug 2025, good until 15 Aug 2026; calibrated again on 1 Sep 2026 and found good.',
     ],
     [
+      'vouched',
+      null,
+      'Lapsed that day: last calibrated on 15 Aug 2025, good until 15 Aug 2026; a session check on 2 Sep 2026 vouches for it at one value.',
+    ],
+    [
+      'check-failed',
+      null,
+      'Last calibrated on 15 Aug 2025, good until 15 Aug 2026; a session check failed on 2 Sep 2026, which puts these figures in doubt until a calibration shows otherwise.',
+    ],
+    [
       'failed',
       'fail',
       'Failed since: last calibrated on 15 Aug 2025, good until 15 Aug 2026; failed on 1 Sep 2026, which puts these figures in doubt.',
     ],
   ] as const)('says %s in a sentence', (state, next, sentence) => {
     const after = next && { testId: 'a', performedOn: '2026-09-01', finding: next }
-    expect(
-      calibrationText(instrument({ calibration: { state, before, after, untilOn: '2026-08-15' } })),
-    ).toBe(sentence)
+    const check = { testId: 'c', performedOn: '2026-09-02', finding: 'pass' as const }
+    const calibration = { state, before, after, untilOn: '2026-08-15', check }
+    expect(calibrationText(instrument({ calibration }))).toBe(sentence)
   })
 })
