@@ -5,6 +5,7 @@ import { CreateReadiness1796000300000 } from './1796000300000-CreateReadiness.ts
 import { CreateAttachments1796000400000 } from './1796000400000-CreateAttachments.ts'
 import { AddWindingCards1796000500000 } from './1796000500000-AddWindingCards.ts'
 import { AddSessionChecks1796000600000 } from './1796000600000-AddSessionChecks.ts'
+import { AddExposureRecords1796000610000 } from './1796000610000-AddExposureRecords.ts'
 import { CreateWhatIfs1796000700000 } from './1796000700000-CreateWhatIfs.ts'
 
 export const migrations = [
@@ -15,5 +16,6 @@ export const migrations = [
   CreateAttachments1796000400000,
   AddWindingCards1796000500000,
   AddSessionChecks1796000600000,
+  AddExposureRecords1796000610000,
   CreateWhatIfs1796000700000,
 ]

@@ -1,6 +1,7 @@
 import { z } from 'zod'
 import { defineEndpoint } from './endpoint.ts'
 import { id, instant } from './fields.ts'
+import { exposureNote } from './kit-exposure.ts'
 import {
   action,
   checkState,
@@ -73,6 +74,8 @@ export const kitReadiness = z.object({
   tests: z.array(testSummary),
   raisedChecks: z.array(raisedCheck),
   decisions: z.array(verdictDecision),
+  /** Of the newest exposure record; null: none, or not about now. */
+  exposure: exposureNote.nullable(),
 })
 
 /** For a past `asOf` the period is the stored one; positions and checks are those of today and are left empty. */

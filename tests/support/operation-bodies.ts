@@ -23,5 +23,12 @@ export const BODIES: Readonly<Record<string, (ids: Ids) => object>> = {
     dueOn: '2026-06-10',
   }),
   'raise-recall': () => ({ band: null, reason: 'A sibling failed', dueOn: '2026-06-10' }),
+  'record-exposure': (ids) => ({
+    recordId: ids('recordId'),
+    emission: 'carrier',
+    onMinutes: 5,
+    offMinutes: 5,
+    gainDbi: 2.15,
+  }),
   'record-test': (ids) => inspection(ids('itemId'), '2026-05-01T12:00:00Z'),
 }

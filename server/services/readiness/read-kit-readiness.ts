@@ -1,3 +1,4 @@
+import type { ExposureRecord } from '#shared/contracts/kit-exposure.ts'
 import type { KitReadiness } from '#shared/contracts/kit-readiness.ts'
 import { checksAt } from '#shared/engine/readiness/checks.ts'
 import { fixList } from '#shared/engine/readiness/fix-list.ts'
@@ -10,6 +11,7 @@ import { summariesOf } from '../evidence/test-summaries.ts'
 import { decisionsOfKit } from '../evidence/verdict-decisions.ts'
 import { loadKitStates } from '../load-kit-states.ts'
 import { periodsFrom, type StoredPeriod } from '../period-rows.ts'
+import { exposureRecords } from './exposure-records.ts'
 import { readKitFace } from './kit-face.ts'
 import { kitPositions } from './kit-positions.ts'
 
@@ -34,6 +36,7 @@ export async function readKitReadiness(tx: GroupTx, { kitId, asOf }: Asked): Pro
   if (!current || current.from > at.getTime())
     throw new AppError('not-found', `Nothing was on record of ${face.designation} at that time.`)
   const now = isPast ? { checks: [], positions: [] } : await positionsAt(tx, kitId, at)
+  const [exposure] = asOf === undefined ? await exposureRecords(tx, kitId, 1) : []
   const [step, next] = horizonOf(periods)
   return {
     ...face,
@@ -51,8 +54,11 @@ export async function readKitReadiness(tx: GroupTx, { kitId, asOf }: Asked): Pro
     tests: await summariesOf(tx, testIds(current, now.checks)),
     raisedChecks,
     decisions,
+    exposure: exposure ? noteOf(exposure) : null,
   }
 }
+
+const noteOf = ({ recordedOn, recordedBy, changed }: ExposureRecord) => ({ recordedOn, recordedBy, changed })
 
 /** A period keeps the availability of its own time. */
 function whatWasSaid({ availability, availabilityReason }: StoredPeriod) {
