@@ -78,7 +78,7 @@ function report(tallies: readonly Tally[]): number {
   const sum = (count: (tally: Tally) => number) => tallies.reduce((total, tally) => total + count(tally), 0)
   const failed = sum((tally) => tally.failed)
   if (failed === 0) rmSync(folder, { recursive: true, force: true })
-  else console.log(`Reports, traces and pictures of what failed: ${relative(root, folder)}`)
+  else console.log(`Reports and pictures of what failed: ${relative(root, folder)}`)
   for (const failure of tallies.flatMap(({ failures }) => failures)) console.log(`FAILED ${failure}`)
   console.log(`${sum((tally) => tally.passed)} passed, ${failed} failed`)
   return failed === 0 ? 0 : 1
