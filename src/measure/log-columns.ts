@@ -72,10 +72,15 @@ function shapeOf(row: readonly string[]): { time: number[]; temperatures: number
   if (time < 0) return null
   const next = row[time + 1]
   const isDateAlone = /^[\d/.-]+$/.test(row[time] ?? '') && readTime(row[time] ?? '', 1)?.kind === 'date'
-  const both = isDateAlone && next !== undefined && readTime(next, 1)?.kind === 'clock'
+  const both = isDateAlone && next !== undefined && isClock(next)
   const last = both ? time + 1 : time
   const temperatures = placesWhere(row, (cell, place) => place > last && readTemperature(cell) !== null)
   return temperatures.length === 0 ? null : { time: both ? [time, time + 1] : [time], temperatures }
+}
+
+function isClock(cell: string): boolean {
+  const kind = readTime(cell, 1)?.kind
+  return kind === 'clock' || kind === 'two-parts'
 }
 
 function placesWhere(row: readonly string[], holds: (cell: string, place: number) => boolean): number[] {

@@ -5,6 +5,8 @@
 
 export type ReadTime =
   | { readonly kind: 'elapsed' | 'clock'; readonly seconds: number }
+  /** `14:05`: minutes and seconds of a log that counts up, or a time of day; null where it is no hour. */
+  | { readonly kind: 'two-parts'; readonly counting: number; readonly ofDay: number | null }
   /** Both ways of reading `03/04/2026`; alike where only one is possible. */
   | { readonly kind: 'date'; readonly dayFirst: number; readonly monthFirst: number }
 
@@ -23,9 +25,10 @@ export function readTime(text: string, unitS: number): ReadTime | null {
 function readClock(cell: string): ReadTime | null {
   const [, first, second, third, half] = CLOCK.exec(cell) ?? []
   if (first === undefined || second === undefined || Number(second) > 59) return null
-  // Two parts are minutes and seconds of a log that counts up, three are hours, minutes and seconds.
-  if (third === undefined && half === undefined)
-    return { kind: 'elapsed', seconds: Number(first) * 60 + Number(second) }
+  if (third === undefined && half === undefined) {
+    const counting = Number(first) * 60 + Number(second)
+    return { kind: 'two-parts', counting, ofDay: Number(first) < 24 ? counting * 60 : null }
+  }
   const seconds = Number((third ?? '0').replace(',', '.'))
   if (seconds >= 60) return null
   return { kind: 'clock', seconds: hoursOf(Number(first), half) * 3600 + Number(second) * 60 + seconds }
@@ -68,6 +71,32 @@ function dayNumber(year: string, month: string, day: string): number | null {
     : null
 }
 
+/** What a column of two-part times means. */
+export type TwoParts = 'counting' | 'of-day'
+
+/**
+ * A heading may say it, and so does a column that goes past 23, or that begins below a minute as a log that counts up
+ * does and a test after midnight does not. Null: nothing tells, and a person must. Undefined: there is nothing to tell.
+ */
+export function meaningOfTwoParts(times: readonly ReadTime[], heading: string): TwoParts | null | undefined {
+  const short = times.flatMap((time) => (time.kind === 'two-parts' ? [time] : []))
+  if (short.length === 0) return undefined
+  if (/h:mm|clock|of day/i.test(heading)) return 'of-day'
+  if (/elapsed|m:ss|min/i.test(heading)) return 'counting'
+  if (short.some(({ ofDay }) => ofDay === null) || (short[0]?.counting ?? 0) < 60) return 'counting'
+  return null
+}
+
+/** The same times with those of two parts read in one of the two ways. */
+export function readAs(times: readonly ReadTime[], meaning: TwoParts): ReadTime[] {
+  return times.map((time) => {
+    if (time.kind !== 'two-parts') return time
+    return meaning === 'counting'
+      ? { kind: 'elapsed', seconds: time.counting }
+      : { kind: 'clock', seconds: time.ofDay ?? 0 }
+  })
+}
+
 /**
  * Seconds since the first time. A clock that passes midnight goes on; of the two ways of reading a date the one
  * that makes the shorter log counts. Null where a time is missing.
@@ -79,7 +108,12 @@ export function sinceFirst(times: readonly ReadTime[]): number[] {
     const span = (list: readonly number[]) => Math.abs(list.at(-1) ?? 0)
     return span(day) < span(month) ? day : month
   }
-  return elapsed(pastMidnight(times.map((time) => (time.kind === 'date' ? time.dayFirst : time.seconds))))
+  return elapsed(pastMidnight(times.map(secondsOf)))
+}
+
+function secondsOf(time: ReadTime): number {
+  if (time.kind === 'date') return time.dayFirst
+  return time.kind === 'two-parts' ? time.counting : time.seconds
 }
 
 function elapsed(seconds: readonly number[]): number[] {

@@ -9,7 +9,7 @@ import {
   type TemperatureColumn,
   type TemperatureUnit,
 } from './log-columns.ts'
-import { readTime, sinceFirst, type ReadTime } from './log-time.ts'
+import { meaningOfTwoParts, readAs, readTime, sinceFirst, type ReadTime, type TwoParts } from './log-time.ts'
 
 /** A thermometer's log as a heat test takes it: seconds since its first line and °C. */
 export interface ThermometerLog {
@@ -27,6 +27,8 @@ export interface LogAnswers {
   readonly unit?: TemperatureUnit | undefined
   /** Place of the temperature column in the file. */
   readonly column?: number | undefined
+  /** What `14:05` means in it. */
+  readonly times?: TwoParts | undefined
 }
 
 export interface LogFault {
@@ -35,7 +37,7 @@ export interface LogFault {
   readonly message: string
 }
 
-/** `E_UNIT`: ask °C or °F and read again. Every other failure is about the file; `faults` names the lines. */
+/** `E_UNIT`: ask °C or °F and read again; `E_TIMES`: ask what its times mean. Every other failure is about the file; `faults` names the lines. */
 export interface LogFailure extends Failure {
   readonly faults?: readonly LogFault[]
   readonly columns?: readonly TemperatureColumn[]
@@ -63,7 +65,8 @@ export function readThermometerLog(
     )
   const column = columns.temperatures.find(({ place }) => place === answers.column) ?? columns.temperatures[0]
   if (!column) return failure('E_LOG_COLUMNS', 'There is no column of temperatures.')
-  const read = readRows(rows.slice(columns.from), { columns, column, answers })
+  const heading = columns.time.map((place) => rows[columns.from - 1]?.cells[place] ?? '').join(' ')
+  const read = readRows(rows.slice(columns.from), { columns, column, answers, heading })
   // Another column may be the right one: the choice stays where this one cannot be read.
   return isFailure(read) ? { ...read, columns: columns.temperatures } : read
 }
@@ -122,6 +125,8 @@ interface Plan {
   readonly columns: LogColumns
   readonly column: TemperatureColumn
   readonly answers: LogAnswers
+  /** Of the column of times; empty where it has none. */
+  readonly heading: string
 }
 
 function readRows(rows: readonly Row[], plan: Plan): ThermometerLog | LogFailure {
@@ -138,7 +143,11 @@ function readRows(rows: readonly Row[], plan: Plan): ThermometerLog | LogFailure
       'E_TOO_FEW',
       `The log holds ${read.length === 1 ? 'one reading' : 'no reading'}; a heat test needs two.`,
     )
-  const at = sinceFirst(read.map(({ time }) => time))
+  const times = read.map(({ time }) => time)
+  const meaning = plan.answers.times ?? meaningOfTwoParts(times, plan.heading)
+  if (meaning === null)
+    return failure('E_TIMES', 'Its times may be minutes and seconds since the start, or times of day.')
+  const at = sinceFirst(meaning ? readAs(times, meaning) : times)
   const back = at.findIndex((seconds, place) => place > 0 && seconds <= (at[place - 1] ?? 0))
   if (back > 0) {
     const message = 'This time is not after the one before it.'

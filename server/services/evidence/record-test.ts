@@ -26,6 +26,7 @@ import { testHistory } from './test-history.ts'
 import { applyConsequences, hasConsequences } from './test-consequences.ts'
 import { insertEffects } from './test-effects.ts'
 import {
+  checkPartner,
   checkSuperseded,
   readInstrument,
   readOperator,
@@ -110,13 +111,14 @@ async function judge(
   const claimedAt = new Date(body.performedAt)
   // A test cannot count before it was received, whatever the device's clock said (promise P7).
   const performedAt = claimedAt < tx.now ? claimedAt : tx.now
-  const [subject, instrument, history, files, , , policies, zone] = await Promise.all([
+  const [subject, instrument, history, files, , , , policies, zone] = await Promise.all([
     readSubject(tx, body),
     readInstrument(tx, body),
     testHistory(tx, historyOf(body, performedAt)),
     namedFiles(tx, body),
     readOperator(tx, operatorId),
     checkSuperseded(tx, testId, body),
+    checkPartner(tx, body),
     policiesOrFirst(tx),
     tx.zone(),
   ])

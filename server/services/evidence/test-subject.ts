@@ -99,6 +99,22 @@ export async function readInstrument(tx: GroupTx, body: RecordTestBody): Promise
   return row
 }
 
+const PARTNER: Statement = {
+  name: 'test-partner',
+  text: 'SELECT category FROM item WHERE group_id = $1 AND id = $2',
+}
+
+/** The other unit of a pair is another thing of the same category. */
+export async function checkPartner(tx: GroupTx, body: RecordTestBody): Promise<void> {
+  if (body.procedure !== 'pair-loss' || body.inputs.partnerId === undefined) return
+  const { partnerId } = body.inputs
+  if (partnerId === body.itemId)
+    throw invalidField('#/inputs/partnerId', 'A unit cannot be joined to itself: choose the other one.')
+  const [row] = await tx.sql<{ category: Category }>(PARTNER, [tx.groupId, partnerId])
+  if (!row || !canBeTested(row.category, 'pair-loss'))
+    throw invalidField('#/inputs/partnerId', 'There is no such transformer in your group.')
+}
+
 export async function readOperator(tx: GroupTx, operatorId: string): Promise<{ id: string; name: string }> {
   const [row] = await tx.sql<{ id: string; name: string }>(OPERATOR, [tx.groupId, operatorId])
   if (!row) throw invalidField('#/operatorId', 'There is no such member in your group.')

@@ -4,6 +4,10 @@ import type { UnitFigure } from './unit-figures.ts'
 /** A hand on the key: lengths this far apart are the same. Our choice, as for the judgement of a run. */
 const SAME_MINUTES = 5 / 60
 
+/** Lengths that a few seconds of a hand on the key tell apart, and no more. */
+export const isSameLength = (minutes: number, other: number): boolean =>
+  Math.abs(minutes - other) <= SAME_MINUTES
+
 export interface RunOfUnit {
   readonly unitId: string
   readonly figure: UnitFigure
@@ -33,5 +37,4 @@ function usualMinutes(runs: readonly RunOfUnit[]): number {
   }, lengths[0] ?? 0)
 }
 
-const isAlike = ({ figure }: RunOfUnit, minutes: number) =>
-  Math.abs((figure.run?.minutes ?? 0) - minutes) <= SAME_MINUTES
+const isAlike = ({ figure }: RunOfUnit, minutes: number) => isSameLength(figure.run?.minutes ?? 0, minutes)

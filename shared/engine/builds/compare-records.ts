@@ -4,6 +4,7 @@ import { groupBy } from '../group-by.ts'
 import { median } from '../median.ts'
 import type { Outcome } from '../outcome.ts'
 import type { Band } from '../vocabulary.ts'
+import { isSameLength } from './alike-runs.ts'
 import type { BuildRecord } from './build-record.ts'
 import { byBandOrder } from './unit-figures.ts'
 
@@ -56,15 +57,18 @@ function sharedRun(sheets: readonly NamedRecord[]): SharedRun | null {
       figures.flatMap(({ band, run }) => (run && run.riseK >= 0 ? [{ id, band, ...run }] : [])),
     ),
   )
-  const alike = groupBy(runs, ({ band, minutes, powerW }) => `${band} ${minutes.toFixed(1)} ${powerW}`)
-  const kinds = [...alike.values()].flatMap((list) => {
-    const [first] = list
-    if (!first) return []
-    const byBuild = groupBy(list, ({ id }) => id)
-    const rises = new Map([...byBuild].map(([id, own]) => [id, own.map(({ riseK }) => riseK)]))
-    const { band, powerW } = first
-    return [{ band, powerW, minutes: Number(first.minutes.toFixed(1)), rises, units: list.length }]
-  })
-  const [best] = kinds.toSorted((a, b) => b.rises.size - a.rises.size || b.units - a.units)
+  const alike = groupBy(runs, ({ band, powerW }) => `${band} ${powerW}`)
+  // Each length that was run stands for all within a hand's breadth of it; the one that gathers most is compared by.
+  const kinds = [...alike.values()].flatMap((list) =>
+    list.map(({ band, powerW, minutes }) => {
+      const same = list.filter((one) => isSameLength(one.minutes, minutes))
+      const byBuild = groupBy(same, ({ id }) => id)
+      const rises = new Map([...byBuild].map(([id, own]) => [id, own.map(({ riseK }) => riseK)]))
+      return { band, powerW, minutes, rises, units: same.length }
+    }),
+  )
+  const [best] = kinds.toSorted(
+    (a, b) => b.rises.size - a.rises.size || b.units - a.units || b.minutes - a.minutes,
+  )
   return best && best.rises.size > 1 ? best : null
 }

@@ -12,7 +12,7 @@ import { COVERAGE_FACTOR, reflectionErrorOf } from './accuracy.ts'
 import { antennaBand, type AntennaBand, type WorkingPoint } from './antenna-bands.ts'
 import { swrFinding, type AntennaSweepLimits } from './antenna-sweep.ts'
 import type { FileKnowledge } from './file-knowledge.ts'
-import { judgedBands, megahertz } from './judged-bands.ts'
+import { judgedBands, leftOutWarnings, megahertz } from './judged-bands.ts'
 import { figure, judgementOf, type Judgement } from './judgement.ts'
 import { compareSweeps, type SweepBaseline } from './sweep-baseline.ts'
 import { fileOf } from './test-files.ts'
@@ -65,7 +65,11 @@ export function judgeAntennaByFile(
   return judgementOf(
     results,
     worst.map((point) => swrFinding(point, limits, expandedSwr(point.swr, error))),
-    [...bands.flatMap(partialBand), ...(compared?.warnings ?? [])],
+    [
+      ...bands.flatMap(partialBand),
+      ...leftOutWarnings('Working points', inputs.workingPoints ?? [], inputs.bands),
+      ...(compared?.warnings ?? []),
+    ],
   )
 }
 

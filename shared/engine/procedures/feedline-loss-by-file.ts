@@ -10,7 +10,7 @@ import type { Band } from '../vocabulary.ts'
 import { reflectionErrorOf } from './accuracy.ts'
 import { judgeLine, type KnownLine, type LineReading } from './feedline-loss.ts'
 import type { FileKnowledge } from './file-knowledge.ts'
-import { bandWarnings, inBand, judgedBands, megahertz } from './judged-bands.ts'
+import { bandWarnings, inBand, judgedBands, leftOutWarnings, megahertz } from './judged-bands.ts'
 import type { Judgement } from './judgement.ts'
 import { fileOf } from './test-files.ts'
 
@@ -50,7 +50,10 @@ export function judgeFeedlineByFile(
     })
   }
   const judgement = judgeLine(readings, inputs.setsBaseline, known)
-  const said = bands.flatMap((band) => bandWarnings(points, band))
+  const said = [
+    ...bands.flatMap((band) => bandWarnings(points, band)),
+    ...leftOutWarnings('SWR at the radio', inputs.swrAtRadio ?? [], inputs.bands),
+  ]
   return { ...judgement, warnings: [...judgement.warnings, ...said] }
 }
 

@@ -5,6 +5,7 @@
  */
 import type { HeatFit, NotIdentifiable } from '../heat-fit.ts'
 import type { HeatTestMeasurement } from '../heat-test.ts'
+import { whyTooShort } from '../heat-too-short.ts'
 import { isFailure } from '../outcome.ts'
 import { powerAllowance, type PowerAllowance } from '../power-allowance.ts'
 import type { Band } from '../vocabulary.ts'
@@ -53,16 +54,8 @@ function fitResult(fit: HeatFit): Readonly<Record<string, unknown>> {
   return fit.identifiable ? figures : { ...figures, says: tooShort(fit.because) }
 }
 
-const BECAUSE: Readonly<Record<NotIdentifiable, string>> = {
-  'too-few-readings': 'it has too few readings',
-  'straight-line-fits': 'a straight line fits it as well as a curve',
-  'no-upper-end': 'it sets no upper end to the time constant',
-  'interval-too-wide': 'it leaves the time constant uncertain by more than itself',
-}
-
 function tooShort(because: readonly NotIdentifiable[]): string {
-  const reasons = because.map((reason) => BECAUSE[reason]).join(', ')
-  return `This log is too short to say where the temperature would end: ${reasons}.`
+  return `This log is too short to say where the temperature would end: ${whyTooShort(because)}.`
 }
 
 function withoutWarnings({ warnings: _, ...figures }: NonNullable<HeatTestMeasurement['balance']>) {

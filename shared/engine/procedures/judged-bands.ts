@@ -63,4 +63,16 @@ function warningsOf(result: Outcome<{ readonly warnings: readonly Warning[] }>):
   return [{ code: 'W_POINTS_REFUSED', message: `left out: ${result.message}` }]
 }
 
+/** What was entered for bands that are not judged: said, so that nobody takes it for looked at. */
+export function leftOutWarnings(
+  what: string,
+  entered: readonly { readonly band: Band }[],
+  judged: readonly Band[],
+): Warning[] {
+  const left = BANDS.filter((band) => !judged.includes(band) && entered.some((one) => one.band === band))
+  if (left.length === 0) return []
+  const message = `${what} on ${left.join(', ')}: left out, because that is no band to be judged. Choose it as well.`
+  return [{ code: 'W_LEFT_OUT', message }]
+}
+
 export const megahertz = (hz: number) => hz / 1e6

@@ -1,5 +1,5 @@
 import type { HeatProjection } from '#shared/engine/heat-projection.ts'
-import type { NotIdentifiable } from '#shared/engine/heat-fit.ts'
+import { whyTooShort } from '#shared/engine/heat-too-short.ts'
 import { quantityText } from '@/format/quantity.ts'
 
 export interface Outlook {
@@ -9,13 +9,6 @@ export interface Outlook {
 }
 
 type UnitText = (value: number, unit: string, digits?: number) => string
-
-const BECAUSE: Readonly<Record<NotIdentifiable, string>> = {
-  'too-few-readings': 'it has too few readings',
-  'straight-line-fits': 'a straight line fits it as well as a curve',
-  'no-upper-end': 'it sets no upper end to the time constant',
-  'interval-too-wide': 'it leaves the time constant uncertain by more than itself',
-}
 
 /** What may be said while the key is down: no end temperature unless the readings carry one. Times count from the last reading. */
 export function outlookText(projection: HeatProjection, limitC: number, text: UnitText): Outlook {
@@ -45,7 +38,7 @@ function slope(
   return {
     headline: 'This log is too short to say where the temperature ends.',
     lines: [`It warms by ${rate}: ${limit} is met in ${span(soonestS)} at the earliest, if at all.`],
-    why: `Of this log: ${fit.because.map((reason) => BECAUSE[reason]).join(', ')}.`,
+    why: `Of this log: ${whyTooShort(fit.because)}.`,
   }
 }
 

@@ -1,4 +1,5 @@
 import type { NotIdentifiable } from '#shared/engine/heat-fit.ts'
+import { whyTooShort } from '#shared/engine/heat-too-short.ts'
 import { isFailure } from '#shared/engine/outcome.ts'
 import { numberText, quantityText } from '@/format/quantity.ts'
 import type { HeatPicture } from './heat-picture.ts'
@@ -46,19 +47,11 @@ export function heatOutlook(picture: HeatPicture, text: UnitText): string[] {
 const BEYOND =
   'The log is shorter than the time constant, so the end lies far beyond what was read, and a core changes on the way there: it is a direction, not a forecast.'
 
-const BECAUSE: Readonly<Record<NotIdentifiable, string>> = {
-  'too-few-readings': 'there are too few readings',
-  'straight-line-fits': 'a straight line fits it as well as a curve',
-  'no-upper-end': 'no longest time constant can be given',
-  'interval-too-wide': 'the time constant could be half or twice as long',
-}
-
 function tooShort({ projection }: HeatPicture, because: readonly NotIdentifiable[], text: UnitText): string {
-  const why = because.map((reason) => BECAUSE[reason]).join(', and ')
   const slope =
     projection?.state === 'slope'
       ? ` At its slope of ${text(projection.fit.slopeKPerS * 60, 'K', 1)} a minute the limit comes ` +
         `${minutes(projection.soonestS)} after the last reading at the soonest.`
       : ''
-  return `This log is too short to say where it would end: ${why}.${slope}`
+  return `This log is too short to say where it would end: ${whyTooShort(because)}.${slope}`
 }

@@ -258,3 +258,28 @@ describe('what a test changes on things', () => {
     expect(answer.body.errors[0].pointer).toBe('#/inputs/positions')
   })
 })
+
+describe('the partner of a pair', () => {
+  const pair = (partnerId: string) => ({
+    procedure: 'pair-loss' as const,
+    itemId: transformer().id,
+    ...common(),
+    method: 'Two units back to back, wattmeter',
+    inputs: { partnerId, meters: 'two', bands: [{ band: '10 m', inW: 50, outW: 40 }] },
+  })
+
+  it('is kept with the test when it is another transformer of the group', async () => {
+    const partner = await givenItem(keeper, 'transformer')
+    expect((await recorded(volunteer, pair(partner.id))).inputs).toMatchObject({ partnerId: partner.id })
+  })
+
+  it('is never the unit itself, nor another kind of thing, nor of another group', async () => {
+    const other = await app.givenMember(await app.givenGroup('Neighbours'), { roles: ['quartermaster'] })
+    const theirs = await givenItem(other, 'transformer')
+    for (const id of [transformer().id, station.items.radio!.id, theirs.id]) {
+      const answer = await put(pair(id))
+      expect(answer.status).toBe(422)
+      expect(answer.body.errors).toMatchObject([{ pointer: '#/inputs/partnerId' }])
+    }
+  })
+})

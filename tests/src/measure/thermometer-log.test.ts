@@ -61,6 +61,23 @@ describe('a log from a thermometer', () => {
     expect(pairs(source, { unit: 'C' })[0]).toEqual([0, 72])
   })
 
+  it('with times such as 14:05 asks what they are, and takes the answer', () => {
+    const source = 'Time,Temp °C\n14:05,22\n14:06,31.5\n14:07,39'
+    expect(readThermometerLog(source)).toMatchObject({ code: 'E_TIMES' })
+    expect(pairs(source, { times: 'of-day' })).toEqual(RISE)
+    expect(pairs(source, { times: 'counting' }).map(([at]) => at)).toEqual([0, 1, 2])
+  })
+
+  it.each([
+    ['a heading of hours and minutes', 'Time (hh:mm),°C\n14:05,22\n14:06,31.5\n14:07,39'],
+    ['a heading of a clock', 'Clock time,°C\n23:59,22\n00:00,31.5\n00:01,39'],
+    ['a heading of time that elapsed', 'Elapsed time,°C\n5:00,22\n6:00,31.5\n7:00,39'],
+    ['minutes past 23', 'Time,°C\n22:30,22\n23:30,31.5\n24:30,39'],
+    ['a date beside them', 'Date,Time,°C\n2026-05-02,14:05,22\n2026-05-02,14:06,31.5\n2026-05-02,14:07,39'],
+  ])('with such times and %s needs no answer', (_what, source) => {
+    expect(pairs(source)).toEqual(RISE)
+  })
+
   it('with two probes reads the first, or the one that is asked for', () => {
     const source = 'Time s,T1 °C,T2 °C\n0,22,20\n60,30,21'
     expect(read(source).columns.map(({ name }) => name)).toEqual(['T1 °C', 'T2 °C'])

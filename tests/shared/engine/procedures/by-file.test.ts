@@ -213,6 +213,20 @@ describe('an antenna by file', () => {
     expect(valueOf(judge(performance(), files, known)).results.drift).toBeDefined()
   })
 
+  it('says which working points it left out, because their band is not judged', () => {
+    const workingPoints = [
+      { band: '40 m', frequencyMHz: 7.1 },
+      { band: '15 m', frequencyMHz: 21.1 },
+    ]
+    const { warnings } = valueOf(judge(performance({ workingPoints }), { 'new.s1p': antennaFile(NEW) }))
+    expect(warnings).toEqual([
+      {
+        code: 'W_LEFT_OUT',
+        message: 'Working points on 15 m: left out, because that is no band to be judged. Choose it as well.',
+      },
+    ])
+  })
+
   it('of a part of the band says so, and of none is refused', () => {
     const part = valueOf(judge(performance(), { 'new.s1p': antennaFile(NEW, [6.8, 7.2, 0.01]) }))
     expect(codes(part.warnings)).toEqual(['W_PARTIAL_BAND'])
@@ -259,6 +273,14 @@ describe('a feedline by file', () => {
     inputs: { source: 'file', file: 'line', bands: ['2 m'], farEnd: 'open', setsBaseline: false, ...fields },
   })
   const feedline = { baselineDb: { '2 m': 1.4 }, baselineSwr: { '2 m': 2 }, last: [] }
+
+  it('says which SWR at the radio it left out, because its band is not judged', () => {
+    const swrAtRadio = [{ band: '70 cm', swr: 1.5 }]
+    const { warnings } = valueOf(judge(performance({ swrAtRadio }), { line: openLineFile(1.9) }))
+    expect(warnings.map(({ message }) => message)).toContain(
+      'SWR at the radio on 70 cm: left out, because that is no band to be judged. Choose it as well.',
+    )
+  })
 
   it('with an open end is half its return loss, and through is its whole loss', () => {
     const open = valueOf(judge(performance(), { line: openLineFile(1.9) }, { feedline }))

@@ -61,7 +61,7 @@ describe('what a heat test says', () => {
     const picture = run(60, { at: [0, 3, 6, 10] })
     expect(picture.curve).toBeNull()
     const [only = '', ...rest] = heatOutlook(picture, text)
-    expect(only).toMatch(/^This log is too short to say where it would end: there are too few readings/)
+    expect(only).toMatch(/^This log is too short to say where it would end: it has too few readings/)
     expect(plain(only)).toMatch(/the limit comes \d+(\.\d)? min after the last reading at the soonest\.$/)
     expect(rest).toEqual([])
   })
