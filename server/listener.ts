@@ -73,6 +73,7 @@ export class Listener {
     client.on('notification', ({ channel, payload }) => hearing.onMessage(channel, payload ?? ''))
     try {
       await client.connect()
+      if (!this.#open) return void client.end().catch(() => undefined)
       for (const channel of hearing.channels) await client.query(`LISTEN ${channel}`)
       if (!this.#open) return void client.end().catch(() => undefined)
       this.#client = client

@@ -47,7 +47,8 @@ async function startWorkers(
   for (const queue of Object.keys(QUEUES) as QueueName[]) {
     const worker = await boss.work<object>(queue, PACE, async (jobs) => {
       // A full batch may not be all: what one transaction queues is told once, so nobody else wakes the worker for it.
-      if (jobs.length === PACE.batchSize) boss.notifyWorker(worker)
+      const known = jobs.length === PACE.batchSize ? workers.get(queue) : undefined
+      if (known !== undefined) boss.notifyWorker(known)
       for (const data of distinct(jobs.map((job) => job.data))) await handlers[queue](data)
     })
     workers.set(queue, worker)

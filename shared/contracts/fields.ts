@@ -40,10 +40,11 @@ export const instant = z.iso
 /** A number that JSON can carry: finite, within the range, inclusive. */
 export const amount = (min: number, max: number) => z.number().min(min).max(max)
 
-export const id = z.uuid()
+/** Written in small letters, as PostgreSQL answers it, so that two ways of writing one id are one. */
+export const id = z.uuid().toLowerCase()
 
 /** An id made by the client for something it creates: UUIDv7, so that indexes stay in time order. */
-export const newId = z.uuidv7()
+export const newId = z.uuidv7().toLowerCase()
 
 /** What every list answers: one page and the count of all. */
 export const page = <T extends z.ZodType>(row: T) => z.object({ rows: z.array(row), total: z.int() })

@@ -19,8 +19,8 @@ const MOST_KITS = 40
 /** The search takes its time on a core that serves everybody: one at a time. */
 const gate = new WorkGate({
   atOnce: 1,
-  longestQueue: 20,
-  longestWaitMs: 20_000,
+  longestQueue: 8,
+  longestWaitMs: 2000,
   busy: 'The advice is being worked out for others just now. Try again in a moment.',
 })
 

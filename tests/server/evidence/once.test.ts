@@ -55,6 +55,16 @@ describe('a test that is sent again (P1)', () => {
     expect(await written()).toEqual(before)
   })
 
+  it('is the same test when its ids are written in capital letters', async () => {
+    app.clock.advance(1, 'minutes')
+    const testId = newTestId()
+    const sent = body(42)
+    const first = await volunteer.put(`/api/v1/tests/${testId}`, sent)
+    const loud = { ...sent, itemId: sent.itemId.toUpperCase() }
+    const again = await volunteer.put(`/api/v1/tests/${testId.toUpperCase()}`, loud)
+    expect([again.status, again.body]).toEqual([200, first.body])
+  })
+
   it('is stored once when twenty retries race', async () => {
     app.clock.advance(1, 'minutes')
     const testId = newTestId()
