@@ -17,7 +17,7 @@ import {
   type Operation,
 } from '../../support/operations.ts'
 import { givenItem } from '../../support/registry.ts'
-import { startTestApp, type TestApp, type TestGroup } from '../../support/test-app.ts'
+import { startTestApp, type TestApp, type TestGroup, type TestMember } from '../../support/test-app.ts'
 
 let app: TestApp
 let group: TestGroup
@@ -43,9 +43,18 @@ async function recordsOf(of: TestGroup, itemsBefore = 0): Promise<Ids> {
   return givenRecords(app, { operations, by })
 }
 
-/** A member of their own for each try: some operations end the session. */
+const readers = new Map<Role, Promise<TestMember>>()
+
+/** A member of their own for each try at a change: some operations end the session. */
+function memberFor(role: Role, { method }: Operation): Promise<TestMember> {
+  const known = method === 'GET' ? readers.get(role) : undefined
+  const member = known ?? app.givenMember(group, { roles: [role] })
+  if (method === 'GET') readers.set(role, member)
+  return member
+}
+
 async function as(role: Role, operation: Operation, ids: Ids): Promise<Answer> {
-  const { cookie } = await app.givenMember(group, { roles: [role] })
+  const { cookie } = await memberFor(role, operation)
   return tryOperation(app, operation, { cookie, ids })
 }
 
