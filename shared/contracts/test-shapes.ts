@@ -1,4 +1,5 @@
 import { z } from 'zod'
+import { BAND_REGIONS } from '#shared/engine/band-edges.ts'
 import { testAttachment } from './attachments.ts'
 import { itemNamed, named } from './readiness-shapes.ts'
 import { recallProposal } from './recall-shapes.ts'
@@ -63,6 +64,8 @@ export const judgedBy = z.object({
   policyId: z.string(),
   policyNumber: z.int(),
   policyName: z.string(),
+  /** Whose band edges counted. */
+  bandRegion: z.enum(BAND_REGIONS),
   rule: z
     .object({
       id: z.string(),

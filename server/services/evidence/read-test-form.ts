@@ -6,6 +6,7 @@ import {
   heatReadingMinutes,
   METHOD_CARDS,
 } from '#shared/engine/procedures/method-cards.ts'
+import { DEFAULT_REGION } from '#shared/engine/procedures/judged-bands.ts'
 import { canBeTested } from '#shared/engine/procedures/subjects.ts'
 import { policyAt } from '#shared/engine/readiness/rules-in-force.ts'
 import type { Rule } from '#shared/engine/readiness/types.ts'
@@ -90,6 +91,7 @@ export async function readTestForm(tx: GroupTx, wanted: Asked): Promise<TestForm
       policyId: policy.id,
       policyNumber: number,
       policyName: policy.name,
+      bandRegion: policy.settings.bandRegion ?? DEFAULT_REGION,
       rule: rule && words[0] ? ruleAnswer(rule, words[0]) : null,
     },
     bands: bandsOf(subject, rule, face.promised),

@@ -1,4 +1,6 @@
 import type { StoredTest, TestEffect } from '#shared/contracts/test-shapes.ts'
+import type { BandRegion } from '#shared/engine/band-edges.ts'
+import { DEFAULT_REGION } from '#shared/engine/procedures/judged-bands.ts'
 import { notFound } from '../../errors.ts'
 import type { GroupTx, Statement } from '../../group-transaction.ts'
 import { filesOfTest } from './named-files.ts'
@@ -16,6 +18,7 @@ interface TestRow extends SummaryRow {
   policy_id: string
   policy_number: number
   policy_name: string
+  band_region: BandRegion | null
   rule_id: string | null
   rule_limits: Record<string, unknown>
   rule_interval_months: number | null
@@ -32,7 +35,8 @@ interface TestRow extends SummaryRow {
 const TEST: Statement = {
   name: 'stored-test',
   text: `SELECT ${SUMMARY_COLUMNS}, t.instrument_note, t.operator_id, t.recorded_by, m.name AS recorder_name,
-      t.claimed_at, t.inputs, t.results, t.policy_id, p.number AS policy_number, p.name AS policy_name, t.rule_id,
+      t.claimed_at, t.inputs, t.results, t.policy_id, p.number AS policy_number, p.name AS policy_name,
+      p.settings ->> 'bandRegion' AS band_region, t.rule_id,
       r.limits AS rule_limits, r.interval_months AS rule_interval_months, r.vital AS rule_vital,
       r.reason AS rule_reason, r.source AS rule_source, t.engine_version, t.notes, t.supersedes_id,
       t.supersedes_reason, s.supersedes_reason AS superseded_reason
@@ -91,6 +95,7 @@ function judgedByOf(row: TestRow): StoredTest['judgedBy'] {
     policyId: row.policy_id,
     policyNumber: row.policy_number,
     policyName: row.policy_name,
+    bandRegion: row.band_region ?? DEFAULT_REGION,
     rule:
       row.rule_id === null
         ? null

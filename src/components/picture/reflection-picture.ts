@@ -119,17 +119,14 @@ export function reflectionLayout(
       x(mhz * 1e6),
     ),
     fiveY: y(RULE_OF_THUMB_SWR),
-    zones: zonesOf(
-      rowsOf(test).map(({ band }) => band),
-      { x, left, right },
-    ),
+    zones: zonesOf(test, { x, left, right }),
     lines: lines.map((line, index) => ({ ...line, labelY: labels[index] ?? foot })),
   }
 }
 
-function zonesOf(bands: readonly Band[], at: { x: (hz: number) => number; left: number; right: number }) {
-  return bands.flatMap((band) => {
-    const edges = bandEdgesMHz(band)
+function zonesOf(test: StoredTest, at: { x: (hz: number) => number; left: number; right: number }) {
+  return rowsOf(test).flatMap(({ band }) => {
+    const edges = bandEdgesMHz(band, test.judgedBy.bandRegion)
     if (!edges) return []
     const from = Math.max(at.left, at.x(edges.lowMHz * 1e6))
     const to = Math.min(at.right, Math.max(at.x(edges.highMHz * 1e6), from + LEAST_ZONE))

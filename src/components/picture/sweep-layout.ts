@@ -1,7 +1,9 @@
 import type { AxisTick } from '@/components/chart/axis-tick.ts'
 import { extentOf, linearScale, padded, type Scale } from '@/components/chart/scale.ts'
 import { highestSwr, swrScale, swrTicks } from '@/components/chart/swr-scale.ts'
+import { linePath, thinned } from '@/components/chart/paths.ts'
 import { numberText } from '@/format/quantity.ts'
+import type { SwrTrace } from '#shared/engine/swr-trace.ts'
 import type { FindingWord } from '#shared/engine/vocabulary.ts'
 import { swrText } from './sweep-words.ts'
 import type { SweepPanel, SweepPicture, SweepPoint } from './sweep-picture.ts'
@@ -31,6 +33,8 @@ export interface PlacedPanel {
     label: string
   })[]
   readonly before: readonly Mark[]
+  /** The whole sweep of a file, as far as it runs through the panel; empty without one. */
+  readonly trace: string
   /** Where it resonates, now and at first, on the foot. */
   readonly resonance: { readonly now: number; readonly before: number | null } | null
 }
@@ -47,7 +51,11 @@ export function sweepHeight(count: number, narrow: boolean): number {
 }
 
 /** Every band in a panel of its own, since a scale over all of them would shrink each to a dot. */
-export function sweepLayout(picture: SweepPicture, place: { width: number; narrow: boolean }): PlacedPanel[] {
+export function sweepLayout(
+  picture: SweepPicture,
+  place: { width: number; narrow: boolean },
+  trace: SwrTrace | null = null,
+): PlacedPanel[] {
   const { panels, limit } = picture
   const inRow = panelsInRow(panels.length, place.narrow)
   const width = Math.min(220, (place.width - AXIS) / inRow)
@@ -59,7 +67,7 @@ export function sweepLayout(picture: SweepPicture, place: { width: number; narro
     const [top, foot] = [row * ROW_HEIGHT + 42, (row + 1) * ROW_HEIGHT - 40]
     const y = swrScale(highest, foot, top)
     const box = { left, right: left + width - GAP, top, foot, startsRow: column === 0 }
-    return { ...box, ...placed(panel, { ...box, y, highest, limit }) }
+    return { ...box, ...placed(panel, { ...box, y, highest, limit, trace }) }
   })
 }
 
@@ -69,11 +77,13 @@ interface Box {
   readonly y: Scale
   readonly highest: number
   readonly limit: number | null
+  readonly trace: SwrTrace | null
 }
 
-function placed(panel: SweepPanel, { left, right, y, highest, limit }: Box) {
+function placed(panel: SweepPanel, { left, right, y, highest, limit, trace }: Box) {
   const { band, edges, points, before, resonanceMHz, worst } = panel
-  const x = linearScale(frequencySpan(panel), left, right)
+  const span = frequencySpan(panel)
+  const x = linearScale(span, left, right)
   const mark = ({ frequencyMHz, swr }: SweepPoint): Mark => ({
     x: x(frequencyMHz),
     y: y(swr),
@@ -102,11 +112,24 @@ function placed(panel: SweepPanel, { left, right, y, highest, limit }: Box) {
       }
     }),
     before: before.points.map(mark),
+    trace: trace ? tracePath(trace, { span, x, y }) : '',
     resonance:
       resonanceMHz === null
         ? null
         : { now: x(resonanceMHz), before: before.resonanceMHz === null ? null : x(before.resonanceMHz) },
   }
+}
+
+function tracePath(
+  { frequencyHz, swr }: SwrTrace,
+  { span, x, y }: { span: { low: number; high: number }; x: Scale; y: Scale },
+): string {
+  const points: [number, number][] = []
+  for (const [at, hz] of frequencyHz.entries()) {
+    const frequencyMHz = hz / 1e6
+    if (frequencyMHz >= span.low && frequencyMHz <= span.high) points.push([x(frequencyMHz), y(swr[at]!)])
+  }
+  return linePath(thinned(points))
 }
 
 /** The whole band with a margin, and whatever was read outside it. */

@@ -1,6 +1,6 @@
 import type { ItemResult } from '#shared/contracts/item-results.ts'
 import type { StoredTest } from '#shared/contracts/test-shapes.ts'
-import { BAND_TABLE } from '#shared/engine/band-edges.ts'
+import { BAND_TABLE, bandEdges, type BandRegion } from '#shared/engine/band-edges.ts'
 import { byBand } from '#shared/engine/procedures/by-band.ts'
 import type { WorstSwr } from '#shared/engine/procedures/sweep-baseline.ts'
 import type { PlainDate } from '#shared/engine/plain-date.ts'
@@ -15,7 +15,7 @@ export interface SweepPoint {
 /** One band of an antenna sweep, with what its first sweep showed there. */
 export interface SweepPanel {
   readonly band: Band
-  /** Edges of the amateur band, the widest anywhere; null: no such band in the table. */
+  /** Edges of the amateur band where the group transmits; null: it has no such band. */
   readonly edges: { readonly lowMHz: number; readonly highMHz: number } | null
   readonly worst: BandFigure & { readonly frequencyMHz: number | null }
   readonly points: readonly SweepPoint[]
@@ -45,7 +45,7 @@ export function sweepPicture(test: StoredTest, history: readonly ItemResult[]): 
     return [
       {
         band,
-        edges: bandEdgesMHz(band),
+        edges: bandEdgesMHz(band, test.judgedBy.bandRegion),
         worst: { ...worst, frequencyMHz },
         points: here,
         resonanceMHz,
@@ -86,12 +86,8 @@ function baselineOf(baseline: ItemResult | undefined, band: Band): SweepPanel['b
   }
 }
 
-/** A band at its widest anywhere; national rules and licence classes narrow it. */
-export function bandEdgesMHz(band: Band): SweepPanel['edges'] {
-  const regions = Object.values(BAND_TABLE.regions).flatMap((region) => region[band] ?? [])
-  if (regions.length === 0) return null
-  return {
-    lowMHz: Math.min(...regions.map(({ lowHz }) => lowHz)) / 1e6,
-    highMHz: Math.max(...regions.map(({ highHz }) => highHz)) / 1e6,
-  }
+/** A band of the region that a test was judged for; licence classes may narrow it. */
+export function bandEdgesMHz(band: Band, region: BandRegion): SweepPanel['edges'] {
+  const edges = bandEdges(BAND_TABLE, region, band)
+  return edges ? { lowMHz: edges.lowHz / 1e6, highMHz: edges.highHz / 1e6 } : null
 }

@@ -103,6 +103,34 @@ describe('the picture of an antenna sweep', () => {
     expect(forty!.points[0]!.x).toBeLessThan(forty!.right)
   })
 
+  it('draws the whole sweep of a file through each panel, and nothing of it elsewhere', () => {
+    const frequencyHz = Float64Array.from([1e6, 7e6, 7.1e6, 7.2e6, 7.3e6, 30e6])
+    const swr = Float64Array.from([9, 2, 1.5, 3, Infinity, 9])
+    const place = { width: 358, narrow: true }
+    const [forty, twenty] = sweepLayout(sweep([]), place, { frequencyHz, swr })
+    const places = [...forty!.trace.matchAll(/[ML]([\d.]+) ([\d.]+)/g)].map(([, x, y]) => [
+      Number(x),
+      Number(y),
+    ])
+    expect(places).toHaveLength(4)
+    for (const [x] of places) {
+      expect(x).toBeGreaterThanOrEqual(forty!.left)
+      expect(x).toBeLessThanOrEqual(forty!.right)
+    }
+    expect(places.at(-1)![1]).toBeCloseTo(forty!.top, 0)
+    expect(twenty!.trace).toBe('')
+    expect(sweepLayout(sweep([]), place)[0]!.trace).toBe('')
+  })
+
+  it('shades a band as it is where the group transmits', () => {
+    const edgesIn = (bandRegion: 'itu-1' | 'itu-2') => {
+      const test = storedTest({ procedure: 'antenna-sweep', inputs: INPUTS })
+      return sweepPicture({ ...test, judgedBy: { ...test.judgedBy, bandRegion } }, []).panels[0]!.edges
+    }
+    expect(edgesIn('itu-2')).toEqual({ lowMHz: 7, highMHz: 7.3 })
+    expect(edgesIn('itu-1')).toEqual({ lowMHz: 7, highMHz: 7.2 })
+  })
+
   it('sets its panels in rows of two on a phone', () => {
     expect(sweepHeight(4, true)).toBe(2 * sweepHeight(4, false))
     const panels = sweepLayout(sweep([]), { width: 358, narrow: true })
