@@ -16,7 +16,17 @@ import {
   stoppedHeatTest,
   type Station,
 } from '../../support/evidence.ts'
-import { givenItem, type Item } from '../../support/registry.ts'
+import {
+  at as atVersion,
+  givenItem,
+  givenPlace,
+  into,
+  moved,
+  to,
+  type Item,
+  type Kit,
+  type Place,
+} from '../../support/registry.ts'
 import { startTestApp, type TestApp, type TestGroup, type TestMember } from '../../support/test-app.ts'
 
 let app: TestApp
@@ -24,11 +34,14 @@ let group: TestGroup
 let member: TestMember
 let thermometer: Item
 let stations: Station[]
+let keeper: TestMember
+let shelf: Place
 
 beforeAll(async () => {
   app = await startTestApp()
   group = await app.givenGroup('Periods')
-  const keeper = await app.givenMember(group, { roles: ['quartermaster'] })
+  keeper = await app.givenMember(group, { roles: ['quartermaster'] })
+  shelf = await givenPlace(keeper)
   member = await app.givenMember(group)
   thermometer = await givenItem(keeper, 'thermometer')
   const first = await givenStation(keeper, { details: { transformer: { bands: ['40 m', '20 m', '10 m'] } } })
@@ -83,6 +96,29 @@ const CHANGES: Readonly<Record<string, Change>> = {
   counted: (station, at) => recorded(member, fullCount(station.kit, at)),
   'thermometer calibrated': (_station, at) => recorded(member, calibration(thermometer.id, at)),
   'thermometer off': (_station, at) => recorded(member, calibration(thermometer.id, at, false)),
+  'radio taken out, or put back': async ({ kit, items }) => {
+    const radio = (await keeper.get(`/api/v1/items/${items.radio!.id}`)).body as Item
+    const home = into(kit, 'radio')
+    if (radio.kit) await moved(keeper, radio, to(shelf), { from: home })
+    else await moved(keeper, radio, home, { from: to(shelf) })
+  },
+  'said to be out of service, or available': async ({ kit }) => {
+    const { version, availability } = (await keeper.get(`/api/v1/kits/${kit.id}`)).body as Kit
+    const now =
+      availability === 'available'
+        ? { availability: 'out-of-service', reason: 'Key abroad' }
+        : { availability: 'available' }
+    await atVersion(version, keeper.post(`/api/v1/kits/${kit.id}/availability`, now)).expect(200)
+  },
+  'verdict lowered for a month': ({ kit }, at) =>
+    keeper
+      .put(`/api/v1/kits/${kit.id}/decisions/${newTestId()}`, {
+        kind: 'lowered',
+        toVerdict: 'not-proven',
+        reason: 'A smell',
+        untilAt: new Date(Date.parse(at) + 30 * 86_400_000).toISOString(),
+      })
+      .expect(200),
 }
 
 const history = fc.array(
@@ -102,6 +138,7 @@ describe('stored periods', () => {
           const before = await tiled()
           app.clock.advance(minutes, 'minutes')
           member = await app.givenMember(group)
+          keeper = await app.givenMember(group, { roles: ['quartermaster'] })
           const now = app.clock.now()
           await CHANGES[change]!(stations[kit]!, now.toISOString())
           const after = await tiled()
@@ -154,7 +191,7 @@ describe('stored periods', () => {
       Promise.all([
         tx.sql({
           name: '',
-          text: `SELECT verdict, n FROM board_count WHERE n <> 0 ORDER BY verdict`,
+          text: `SELECT verdict, sum(n)::int AS n FROM board_count GROUP BY verdict HAVING sum(n) <> 0 ORDER BY verdict`,
         }),
         tx.sql(
           {
