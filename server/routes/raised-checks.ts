@@ -7,12 +7,17 @@ import {
   decideVerdict as decideContract,
   withdrawDecision as withdrawDecisionContract,
 } from '#shared/contracts/verdict-decisions.ts'
+import {
+  previewWeather as previewContract,
+  raiseWeather as weatherContract,
+} from '#shared/contracts/weather-events.ts'
 import type { AppContext } from '../context.ts'
 import { inGroup } from '../group-transaction.ts'
 import { raiseCheck } from '../services/evidence/raise-check.ts'
 import { raiseRecall } from '../services/evidence/raise-recall.ts'
 import { decideVerdict, withdrawDecision } from '../services/evidence/verdict-decisions.ts'
 import { withdrawRaisedCheck } from '../services/evidence/withdraw-raised-check.ts'
+import { previewWeather, raiseWeather } from '../services/evidence/weather-event.ts'
 import type { EndpointRouter } from './endpoint.ts'
 
 /** What people ask for and decide, beside the tests. */
@@ -26,6 +31,8 @@ export function raisedCheckRoutes(endpoints: EndpointRouter, ctx: AppContext): v
   endpoints.add(recallContract, ({ params, body, by }) =>
     inGroup(ctx, by, async (tx) => ({ raised: await raiseRecall(tx, { batchId: params.batchId, ...body }) })),
   )
+  endpoints.add(previewContract, ({ body, by }) => inGroup(ctx, by, (tx) => previewWeather(tx, body)))
+  endpoints.add(weatherContract, ({ body, by }) => inGroup(ctx, by, (tx) => raiseWeather(tx, body)))
   endpoints.add(decideContract, ({ params, body, by }) =>
     inGroup(ctx, by, (tx) => decideVerdict(tx, { ...params, body })),
   )

@@ -21,7 +21,7 @@ const lowered = (text: string) =>
   /^[A-Z][a-z]/.test(text) ? text.charAt(0).toLowerCase() + text.slice(1) : text
 
 /** "K-18 goes from not fit to proven, K-12 comes back". */
-export function yieldText({ changes }: AdvicePlan): string {
+export function yieldText({ changes }: Pick<AdvicePlan, 'changes'>): string {
   const told = changes.flatMap(({ designation, before, after, returns }) => {
     if (before !== after) return [`${designation} goes from ${word(before)} to ${word(after)}`]
     return returns ? [`${designation} comes back, ${word(after)}`] : []

@@ -1,5 +1,5 @@
 import type { RouteRecordRaw } from 'vue-router'
-import { ADMINISTRATORS, ANY_MEMBER, CREW, POLICY_MAKERS } from '#shared/contracts/roles.ts'
+import { ADMINISTRATORS, ANY_MEMBER, CREW, LEADS, POLICY_MAKERS } from '#shared/contracts/roles.ts'
 import { registryRoutes } from './registry-routes.ts'
 
 /**
@@ -64,6 +64,18 @@ export const routes: RouteRecordRaw[] = [
     name: 'what-if',
     component: () => import('@/views/WhatIfView.vue'),
     meta: { title: 'What if', roles: CREW, light: true },
+  },
+  {
+    path: '/work-party',
+    name: 'work-party',
+    component: () => import('@/views/WorkPartyView.vue'),
+    meta: { title: 'Work party', roles: CREW, light: true },
+  },
+  {
+    path: '/weather',
+    name: 'weather',
+    component: () => import('@/views/WeatherView.vue'),
+    meta: { title: 'After weather', roles: LEADS, light: true },
   },
   {
     path: '/policy',

@@ -4,7 +4,16 @@ import { openAs, signIn } from './support/sign-in.ts'
 import { expect, test } from './support/test.ts'
 
 const PAGES = {
-  'what can go and what is due': ['/', '/due', '/forecast', '/advice', '/what-if', '/find', '/more'],
+  'what can go and what is due': [
+    '/',
+    '/due',
+    '/forecast',
+    '/advice',
+    '/what-if',
+    '/work-party',
+    '/find',
+    '/more',
+  ],
   'the lists of what there is': [
     '/kits',
     '/items',
