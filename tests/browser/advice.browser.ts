@@ -33,3 +33,10 @@ test('leads from a piece of work to the form that records it, and the board is a
   await page.goto('/')
   await expect(page.getByRole('heading', { level: 1 })).toContainText('12 of 20 stations can go')
 })
+
+test('names what the group has only one of, with what to do about it', async ({ page }) => {
+  await openAs(page, 'oona', '/advice')
+  const only = page.getByRole('region', { name: 'Only one of it' })
+  await expect(only).toContainText(/Hollis Wrenfield alone has the key of Quarry Bend Grange Locker/)
+  await expect(only).toContainText('Give a second person a key')
+})

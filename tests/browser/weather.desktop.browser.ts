@@ -5,7 +5,7 @@ import { expect, test } from './support/test.ts'
 test('makes exposed items due after weather, with the effect shown before', async ({ page }) => {
   await openAs(page, 'oona', '/due')
   await page.getByRole('link', { name: 'After weather' }).click()
-  const effect = page.getByRole('complementary')
+  const effect = page.getByRole('complementary', { name: /What it would do|Done/ })
   await expect(effect).toContainText('nothing is stored yet')
   await page.getByLabel('What happened').fill('Ice storm')
   await page.getByLabel('Kits that are out on issue').check()
