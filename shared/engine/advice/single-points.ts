@@ -1,6 +1,6 @@
 import { counted, listText } from '../plain-words.ts'
 import { PROCEDURE_WORDS } from '../readiness/words.ts'
-import { CATEGORIES, type Category, type Procedure } from '../vocabulary.ts'
+import type { Category, Procedure } from '../vocabulary.ts'
 
 /** What a group has only one of, so that one absence stops something. */
 export interface SinglePoint {
