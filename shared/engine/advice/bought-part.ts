@@ -1,3 +1,5 @@
+import { currentAtPower } from '../procedures/radio-currents.ts'
+import { stationUse } from '../readiness/station-use.ts'
 import type { ItemFacts, KitState, Position, ReadinessItem } from '../readiness/types.ts'
 import { boughtId } from './steps.ts'
 
@@ -16,12 +18,40 @@ export function boughtPart(state: KitState, position: Position): ReadinessItem {
 
 /** What the part in this position was like, where one of the same sort is on record: only its loss and its draw. */
 function formerFacts(state: KitState, position: Position): ItemFacts {
-  const former = state.items.find(({ category }) => category === position.category)?.facts
+  const former = state.items.find(({ category }) => category === position.category)
+  if (!former) return {}
+  const { lossDb } = former.facts
+  return { ...(lossDb && { lossDb }), ...(former.category === 'radio' && drawOf(state, former)) }
+}
+
+/** What a radio draws: as its newest check read it, else as its record says. */
+function drawOf({ evidence }: KitState, { id, facts }: ReadinessItem): ItemFacts {
+  const [newest] = evidence
+    .filter(({ subjectId, currents }) => subjectId === id && currents?.receiveA)
+    .sort((a, b) => b.performedAt - a.performedAt)
+  const measured = newest?.currents
+  const drawA = measured?.transmit.map(({ settingW, currentA }) => ({ watts: settingW, amps: currentA }))
+  const receiveA = measured?.receiveA ?? facts.receiveA
   return {
-    ...(former?.lossDb && { lossDb: former.lossDb }),
-    ...(former?.drawA && { drawA: former.drawA }),
-    ...(former?.meanLoadA !== undefined && { meanLoadA: former.meanLoadA }),
+    ...((drawA ?? facts.drawA) && { drawA: drawA ?? facts.drawA }),
+    ...(receiveA && { receiveA }),
+    ...(facts.meanLoadA && { meanLoadA: facts.meanLoadA }),
   }
+}
+
+/** A over the time that the station is used as its kind says; 0 where nothing says what its radio draws. */
+function meanLoadOf(state: KitState): number {
+  const { transmitShare, currentFactor } = stationUse(state.promise)
+  const share = transmitShare * currentFactor
+  const loads = state.items
+    .filter(({ category }) => category === 'radio')
+    .map((radio) => {
+      const { drawA = [], receiveA, meanLoadA = 0 } = drawOf(state, radio)
+      const draws = drawA.map(({ watts, amps }) => ({ settingW: watts, currentA: amps }))
+      const full = currentAtPower(draws, state.promise.watts)
+      return full && receiveA ? share * full.currentA + (1 - share) * receiveA : meanLoadA
+    })
+  return Math.max(0, ...loads)
 }
 
 /** No lead or box of a station carries more than this. */
@@ -30,12 +60,11 @@ const AMPLE_A = 40
 const USABLE = 0.7
 const ENOUGH_AH = 50
 
-function neededFacts({ promise, items }: KitState, { category }: Position): ItemFacts {
+function neededFacts(state: KitState, { category }: Position): ItemFacts {
+  const { promise } = state
   switch (category) {
     case 'battery': {
-      const loads = items.flatMap(({ facts }) => facts.meanLoadA ?? [])
-      const loadA = Math.max(0, ...loads)
-      const neededAh = loadA > 0 ? Math.ceil(((promise.hours ?? 0) * loadA) / USABLE) : 0
+      const neededAh = Math.ceil(((promise.hours ?? 0) * meanLoadOf(state)) / USABLE)
       return { chemistry: 'lifepo4', ratedAh: Math.max(ENOUGH_AH, neededAh) }
     }
     case 'dc-lead':
