@@ -5,6 +5,7 @@ import { poolOf } from '../pool.ts'
 import { deliverMail, sweepMail } from '../services/deliver-mail.ts'
 import type { MailTransport } from '../services/mail-transport.ts'
 import { remindAllGroups } from '../services/reminders/morning-reminders.ts'
+import { rejudgeGroups } from '../services/readiness/rejudge-groups.ts'
 import { refreshAllBoards } from '../services/refresh-boards.ts'
 import { QUEUES, SCHEDULES, type QueueName } from './queues.ts'
 
@@ -42,6 +43,7 @@ async function startWorkers(
     'sweep-mail': () => sweepMail(ctx, transport),
     'morning-reminders': () => remindAllGroups(ctx),
     'refresh-boards': () => refreshAllBoards(ctx),
+    'rejudge-groups': () => rejudgeGroups(ctx),
   }
   const workers = new Map<string, string>()
   for (const queue of Object.keys(QUEUES) as QueueName[]) {

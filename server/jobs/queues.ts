@@ -9,6 +9,7 @@ export const QUEUES = {
   'sweep-mail': { retryLimit: 1, expireInSeconds: 60 },
   'morning-reminders': { retryLimit: 3, retryDelay: 10, expireInSeconds: 120 },
   'refresh-boards': { retryLimit: 1, expireInSeconds: 60 },
+  'rejudge-groups': { retryLimit: 1, expireInSeconds: 1800 },
 } as const satisfies Record<string, Omit<PgBoss.Queue, 'name'>>
 
 export type QueueName = keyof typeof QUEUES
@@ -18,4 +19,5 @@ export const SCHEDULES: Partial<Record<QueueName, string>> = {
   'sweep-mail': '* * * * *',
   'morning-reminders': '*/10 * * * *',
   'refresh-boards': '* * * * *',
+  'rejudge-groups': '* * * * *',
 }

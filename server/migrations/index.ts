@@ -7,6 +7,7 @@ import { AddWindingCards1796000500000 } from './1796000500000-AddWindingCards.ts
 import { AddSessionChecks1796000600000 } from './1796000600000-AddSessionChecks.ts'
 import { AddExposureRecords1796000610000 } from './1796000610000-AddExposureRecords.ts'
 import { CreateWhatIfs1796000700000 } from './1796000700000-CreateWhatIfs.ts'
+import { AddReadinessJudged1796000800000 } from './1796000800000-AddReadinessJudged.ts'
 
 export const migrations = [
   CreateGroupsAndPeople1796000000000,
@@ -18,4 +19,5 @@ export const migrations = [
   AddSessionChecks1796000600000,
   AddExposureRecords1796000610000,
   CreateWhatIfs1796000700000,
+  AddReadinessJudged1796000800000,
 ]

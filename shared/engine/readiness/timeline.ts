@@ -4,6 +4,12 @@ import { judgementAt, type Judgement } from './period-at.ts'
 import type { EpochMs, KitState, Period } from './types.ts'
 
 /**
+ * Of the rules by which a kit is judged. Raised by every change that gives the same state another verdict, other hours
+ * or other words: stored periods are then worked out anew (`rejudge-groups`).
+ */
+export const READINESS_VERSION = 1
+
+/**
  * Readiness of one kit from an instant on, if nobody does anything: half-open periods that follow each other without
  * gap or overlap, the first from `from`, the last without end, no two neighbours alike. Without new evidence a verdict
  * changes only at known moments, so the kit is judged at each of them and nowhere else.
