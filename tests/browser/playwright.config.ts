@@ -50,7 +50,7 @@ export default defineConfig({
       name: 'phone',
       testMatch: /\.browser\.ts$/,
       testIgnore: /\.desktop\.browser\.ts$/,
-      use: { viewport: { width: 390, height: 844 }, isMobile: true, hasTouch: true, deviceScaleFactor: 2 },
+      use: { viewport: { width: 390, height: 844 }, isMobile: true, hasTouch: true, deviceScaleFactor: 1 },
     },
   ],
 })
