@@ -141,7 +141,8 @@ describe('guessing a password (P18)', () => {
       known.push(await timed({ from: `192.0.2.${n}` }))
       unknown.push(await timed({ from: `192.0.2.${n}`, email: `nobody${n}@example.org` }))
     }
-    const ratio = median(unknown) / median(known)
+    // The fastest of each: what else the machine does only adds to a time.
+    const ratio = Math.min(...unknown) / Math.min(...known)
     expect(ratio).toBeGreaterThan(0.5)
     expect(ratio).toBeLessThan(1.5)
   })
@@ -153,4 +154,3 @@ async function timed(options: Try): Promise<number> {
   return performance.now() - startedAt
 }
 
-const median = (values: number[]) => values.toSorted((a, b) => a - b)[Math.floor(values.length / 2)]!

@@ -192,9 +192,10 @@ describe('limits', () => {
   it('reads 200,000 points in time proportional to their number', () => {
     const timed = (count: number): number => {
       const text = `# Hz S MA R 50\n${points(count)}`
-      const begun = performance.now()
+      const begun = process.cpuUsage()
       expect(accepted(text).frequencyHz).toHaveLength(count)
-      return performance.now() - begun
+      const { user, system } = process.cpuUsage(begun)
+      return (user + system) / 1000
     }
     timed(20_000)
     const small = Math.min(timed(20_000), timed(20_000))
