@@ -153,4 +153,3 @@ async function timed(options: Try): Promise<number> {
   expect((await attempt(options)).status).toBe(401)
   return performance.now() - startedAt
 }
-
