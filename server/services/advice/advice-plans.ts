@@ -8,6 +8,7 @@ import { loadKitStates } from '../load-kit-states.ts'
 import { loadSpares } from '../readiness/spare-states.ts'
 import type { By } from '../registry/thing.ts'
 import { WorkGate } from '../work-gate.ts'
+import { digestOf } from './what-if-question.ts'
 
 /** Stations looked at in one answer. */
 const MOST_KITS = 40
@@ -41,11 +42,18 @@ export interface AdvicePlans {
   readonly placeOf: ReadonlyMap<string, string | null>
 }
 
+/** Searches under way, by what they rest on: who asks the same meanwhile waits for the same answer. */
+const running = new Map<string, Promise<readonly Plan[]>>()
+
 /** What to do across the group. What it rests on is read in one transaction; the search runs after it. */
 export async function advicePlans(ctx: AppContext, by: By): Promise<AdvicePlans> {
   const { kits, spares, today, ...rest } = await inGroup(ctx, by, load)
+  const states = digestOf([...kits.map(({ state }) => state), ...spares])
+  const key = [by.groupId, today, states, ...kits.map((kit) => kit.expectedReturnOn)].join(' ')
   const day = { at: rest.at.getTime(), today, breathe: () => breathe() }
-  return { ...rest, plans: await gate.run(() => rankFixes(kits, spares, day)) }
+  const search = running.get(key) ?? gate.run(() => rankFixes(kits, spares, day))
+  running.set(key, search)
+  return { ...rest, plans: await search.finally(() => running.delete(key)) }
 }
 
 interface Loaded extends Omit<AdvicePlans, 'plans'> {

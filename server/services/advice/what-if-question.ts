@@ -77,8 +77,8 @@ function invalidStep({ field = 'steps', message }: Failure) {
   return invalidField(`#/${field.replace(/\[(\d+)\]/, '/$1')}`, message)
 }
 
-/** Versions of a policy never change, so their ids stand for them. */
-function digestOf(states: readonly KitState[]): string {
+/** The same for the same states. Versions of a policy never change, so their ids stand for them. */
+export function digestOf(states: readonly KitState[]): string {
   const said = states.map((state) => ({ ...state, policies: state.policies.map(({ id }) => id) }))
   return createHash('sha256').update(JSON.stringify(said)).digest('base64url')
 }

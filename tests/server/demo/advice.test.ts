@@ -37,6 +37,12 @@ async function ask(steps: object[]): Promise<WhatIfAnswer> {
 }
 
 describe('the advice of the demo at D0', () => {
+  it('is one answer for all who ask at once, however many', async () => {
+    const answers = await Promise.all(Array.from({ length: 14 }, () => tobin.get('/api/v1/advice')))
+    expect(answers.map(({ status }) => status)).toEqual(Array(14).fill(200))
+    expect(answers.at(-1)!.body.plans).toEqual(answers[0]!.body.plans)
+  })
+
   it('begins with the swap of XFM-13 into K-18: 15 minutes, from not fit to proven, and a count after it', () => {
     const [first] = advice.plans
     expect(textsOf(first!)[0]).toBe('Swap XFM-13 into K-18 for XFM-10')
