@@ -4,14 +4,15 @@ import type { raiseWeather as contract, WeatherEffect } from '#shared/contracts/
 import { EXPOSED } from '#shared/engine/advice/exposed.ts'
 import { holdsUntil } from '#shared/engine/readiness/horizon.ts'
 import { kitTimeline } from '#shared/engine/readiness/timeline.ts'
-import type { KitState, Period, RaisedCheck } from '#shared/engine/readiness/types.ts'
+import type { Period } from '#shared/engine/readiness/period-types.ts'
+import type { KitState, RaisedCheck } from '#shared/engine/readiness/types.ts'
 import type { Category } from '#shared/engine/vocabulary.ts'
 import { invalidField } from '../../errors.ts'
 import type { GroupTx, Statement } from '../../group-transaction.ts'
 import { record } from '../audit.ts'
+import { createdBefore } from '../created-before.ts'
 import { loadKitStates } from '../load-kit-states.ts'
 import { lockKits } from '../lock-kits.ts'
-import { idTaken } from '../registry/duplicates.ts'
 import { lockNewId } from '../registry/locks.ts'
 import { rewriteReadiness } from '../rewrite-readiness.ts'
 import { insertRaisedCheck } from './raise-check.ts'
@@ -50,32 +51,33 @@ export async function previewWeather(tx: GroupTx, body: Weather): Promise<Weathe
 /** Stands for an event that does not exist yet. */
 const WOULD_BE = '00000000-0000-7000-8000-000000000000'
 
+const RAISED = 'weather-event-raised'
+
 /**
- * Raises a check of every exposed item, in one transaction, each with the reason and its entry in the history. The id
- * of each check follows from the event's and the item's: sent again, nothing is raised twice.
+ * Raises a check of every exposed item, in one transaction, each with the reason and its entry in the history. Sent
+ * again, the same event raises nothing more, also where more stands outdoors by then.
  */
 export async function raiseWeather(tx: GroupTx, { eventId, ...body }: Body): Promise<WeatherEffect> {
   await lockNewId(tx, eventId)
-  const seen = await exposedItems(tx, body)
-  await lockKits(tx, kitIdsOf(seen))
+  const event = { body, eventId }
+  if (await createdBefore(tx, { id: eventId, action: RAISED, body }))
+    return effectOf(tx, await alreadyRaised(tx, event), event)
+  await lockKits(tx, kitIdsOf(await exposedItems(tx, body)))
   const items = await exposedItems(tx, body)
-  const known = await readRaisedChecks(
-    tx,
-    items.map(({ id }) => checkId(eventId, id)),
-  )
-  if (known.some((check) => !isSame(check, body))) throw idTaken()
-  const fresh = items.filter(({ id }) => !known.some((check) => check.itemId === id))
-  const effect = await effectOf(tx, items, { body, eventId })
-  if (fresh.length === 0) return effect
-  await raiseAll(tx, fresh, { eventId, body })
-  await rewriteReadiness(tx, kitIdsOf(fresh))
+  const effect = await effectOf(tx, items, event)
+  if (items.length === 0) return effect
+  await raiseAll(tx, items, event)
+  await rewriteReadiness(tx, kitIdsOf(items))
   return effect
 }
 
-const isSame = (
-  { reason, dueOn, doubtsEarlier }: Pick<Weather, 'reason' | 'dueOn' | 'doubtsEarlier'>,
-  body: Weather,
-) => reason === body.reason && dueOn === body.dueOn && doubtsEarlier === body.doubtsEarlier
+/** Of what is exposed there now, the items of which this event raised a check. */
+async function alreadyRaised(tx: GroupTx, { eventId, body }: Event): Promise<ExposedRow[]> {
+  const items = await exposedItems(tx, body)
+  const ids = items.map(({ id }) => checkId(eventId, id))
+  const raised = new Set((await readRaisedChecks(tx, ids)).map(({ itemId }) => itemId))
+  return items.filter(({ id }) => raised.has(id))
+}
 
 interface Event {
   readonly eventId: string
@@ -92,10 +94,11 @@ async function raiseAll(tx: GroupTx, items: readonly ExposedRow[], { eventId, bo
   }
   const what = items.length === 1 ? '1 exposed item' : `${items.length} exposed items`
   await record(tx, {
-    action: 'weather-event-raised',
+    action: RAISED,
     subjectType: 'weather-event',
     subjectId: eventId,
     summary: `made ${what} due after weather: ${reason}`,
+    after: body,
   })
 }
 
@@ -120,7 +123,8 @@ async function effectOf(tx: GroupTx, items: readonly ExposedRow[], event: Event)
   const loaded = await loadKitStates(tx, kitIdsOf(items))
   const kits = loaded.flatMap(({ state }) => {
     const own = items.filter(({ kit_id: kitId }) => kitId === state.kit.id)
-    return changeOf(tx, state, withChecks(tx, state, { own, ...event }))
+    const { before, after } = withoutAndWith(tx, state, { own, ...event })
+    return changeOf(tx, before, after)
   })
   return {
     checks: items.map(({ id, designation, category, kit }) => ({
@@ -133,12 +137,12 @@ async function effectOf(tx: GroupTx, items: readonly ExposedRow[], event: Event)
   }
 }
 
-function withChecks(
+/** The kit without the checks of the event, whether they were raised already or not, and with them. */
+function withoutAndWith(
   tx: GroupTx,
   state: KitState,
   { own, body, eventId }: Event & { own: readonly ExposedRow[] },
-): KitState {
-  const known = new Set(state.raisedChecks.map(({ id }) => id))
+): { before: KitState; after: KitState } {
   const checks = own.map(({ id, category }): RaisedCheck => ({
     id: checkId(eventId, id),
     subjectId: id,
@@ -149,7 +153,12 @@ function withChecks(
     raisedAt: tx.now.getTime(),
     dueOn: body.dueOn,
   }))
-  return { ...state, raisedChecks: [...state.raisedChecks, ...checks.filter(({ id }) => !known.has(id))] }
+  const ids = new Set(checks.map(({ id }) => id))
+  const others = state.raisedChecks.filter(({ id }) => !ids.has(id))
+  return {
+    before: { ...state, raisedChecks: others },
+    after: { ...state, raisedChecks: [...others, ...checks] },
+  }
 }
 
 function changeOf(tx: GroupTx, before: KitState, after: KitState): WeatherEffect['kits'] {

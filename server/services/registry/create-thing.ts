@@ -1,18 +1,12 @@
 import type { DeepPartial, FindOptionsWhere } from 'typeorm'
 import type { RegistryRow } from '../../entities/RegistryRow.ts'
-import type { GroupTx, Statement } from '../../group-transaction.ts'
+import type { GroupTx } from '../../group-transaction.ts'
 import { record } from '../audit.ts'
+import { createdBefore } from '../created-before.ts'
 import { rewriteReadiness } from '../rewrite-readiness.ts'
-import { sameContent } from './changes.ts'
 import { idTaken, namingDuplicates } from './duplicates.ts'
 import { lockNewId } from './locks.ts'
 import type { Thing } from './thing.ts'
-
-const CREATION: Statement = {
-  name: 'creation-of',
-  text: `SELECT after FROM audit_event
-    WHERE group_id = $1 AND subject_id = $2 AND action = $3 ORDER BY id LIMIT 1`,
-}
 
 /**
  * Adds a thing under an id made by the client. The same id with the same content again is the same success, even when
@@ -25,18 +19,9 @@ export async function createThing<Row extends RegistryRow, Body extends object, 
 ): Promise<Answer> {
   await lockNewId(tx, id)
   const known = await tx.repository(thing.entity).findOneBy({ id } as FindOptionsWhere<Row>)
-  if (known) await requireSameCreation(tx, thing, { id, body })
-  else await insert(tx, thing, { id, body })
+  if (!known) await insert(tx, thing, { id, body })
+  else if (!(await createdBefore(tx, { id, action: `${thing.subject}-created`, body }))) throw idTaken()
   return (await thing.read(tx, id))!
-}
-
-async function requireSameCreation<Row extends RegistryRow, Body extends object, Answer>(
-  tx: GroupTx,
-  thing: Thing<Row, Body, Answer>,
-  { id, body }: { id: string; body: Body },
-): Promise<void> {
-  const [first] = await tx.sql<{ after: unknown }>(CREATION, [tx.groupId, id, `${thing.subject}-created`])
-  if (!first || !sameContent(first.after, body)) throw idTaken()
 }
 
 async function insert<Row extends RegistryRow, Body extends object, Answer>(

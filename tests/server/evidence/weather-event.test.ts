@@ -17,6 +17,7 @@ import { startTestApp, type TestApp, type TestMember } from '../../support/test-
 /** After weather a coordinator makes everything due that stood in it, in one action. */
 
 let app: TestApp
+let keeper: TestMember
 let coordinator: TestMember
 let roof: Place
 let cellar: Place
@@ -26,7 +27,7 @@ let elsewhere: Station
 beforeAll(async () => {
   app = await startTestApp()
   const group = await app.givenGroup('Weather')
-  const keeper = await app.givenMember(group, { roles: ['quartermaster'] })
+  keeper = await app.givenMember(group, { roles: ['quartermaster'] })
   coordinator = await app.givenMember(group, { roles: ['net-coordinator'] })
   roof = await givenPlace(keeper)
   cellar = await givenPlace(keeper)
@@ -89,12 +90,15 @@ describe('a weather event', () => {
   it('raises nothing twice when it is sent twice', async () => {
     const path = '/api/v1/weather-events'
     const body = event({ eventId: uuidv7(), placeIds: [cellar.id] })
-    await coordinator.post(path, body).expect(200)
+    const first = await coordinator.post(path, body).expect(200)
     const once = (await readiness(elsewhere)).raisedChecks.length
-    await coordinator.post(path, body).expect(200)
+    const late = await givenItem(keeper, 'mast')
+    await moved(keeper, late, to(cellar))
+    const again = await coordinator.post(path, body).expect(200)
+    expect(again.body).toEqual(first.body)
     expect((await readiness(elsewhere)).raisedChecks).toHaveLength(once)
-    const other = await coordinator.post(path, { ...body, reason: 'Hail' })
-    expect(other.body).toMatchObject({ code: 'id-taken' })
+    for (const other of [{ reason: 'Hail' }, { placeIds: [cellar.id, roof.id] }])
+      expect((await coordinator.post(path, { ...body, ...other })).body).toMatchObject({ code: 'id-taken' })
   })
 
   it('asks where it was', async () => {
