@@ -1,5 +1,5 @@
 import { ref } from 'vue'
-import { uuidv7 } from '@/api/new-id.ts'
+import { idByContent } from '@/api/new-id.ts'
 import type { BodyOf } from '#shared/contracts/endpoint.ts'
 import { moveItem } from '#shared/contracts/movements.ts'
 import { callApi } from '@/api/call-api.ts'
@@ -8,20 +8,21 @@ import { useProblem } from './useProblem.ts'
 export type ItemLocation = BodyOf<typeof moveItem>['from']
 export type ItemTarget = BodyOf<typeof moveItem>['to']
 
-/** Moves one item. The id of the move is made once, so that pressing twice or sending again moves once. */
+/** Moves one item; pressing twice or sending again moves once. */
 export function useMoveItem() {
   const busy = ref(false)
   const { error, run } = useProblem()
-  let moveId = uuidv7()
+  const ids = idByContent()
 
   async function move(
     itemId: string,
     body: { from: ItemLocation; to: ItemTarget; reason: string },
   ): Promise<boolean> {
+    const moveId = ids.of({ itemId, ...body })
     busy.value = true
     const done = await run(() => callApi(moveItem, { params: { itemId }, body: { moveId, ...body } }))
     busy.value = false
-    if (done) moveId = uuidv7()
+    if (done) ids.done()
     return done !== undefined
   }
 
