@@ -7,7 +7,7 @@ import type {
   Verdict,
 } from '#shared/engine/vocabulary.ts'
 import type { Role } from '#shared/contracts/roles.ts'
-import type { CheckState } from '#shared/engine/readiness/types.ts'
+import type { CheckState } from '#shared/engine/readiness/period-types.ts'
 
 export { counted } from '#shared/engine/plain-words.ts'
 

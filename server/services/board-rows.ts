@@ -1,6 +1,6 @@
 import { packBands } from '#shared/engine/readiness/band-codes.ts'
 import { horizonOf } from '#shared/engine/readiness/horizon.ts'
-import type { Period } from '#shared/engine/readiness/types.ts'
+import type { Period } from '#shared/engine/readiness/period-types.ts'
 import { VERDICTS, type Availability, type Verdict } from '#shared/engine/vocabulary.ts'
 import type { GroupTx, Statement } from '../group-transaction.ts'
 

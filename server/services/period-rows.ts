@@ -1,7 +1,7 @@
 import { createHash } from 'node:crypto'
 import { v7 as uuidv7 } from 'uuid'
 import { groupBy } from '#shared/engine/group-by.ts'
-import type { Period } from '#shared/engine/readiness/types.ts'
+import type { Period } from '#shared/engine/readiness/period-types.ts'
 import type { GroupTx, Statement } from '../group-transaction.ts'
 
 /** A kit's period as stored. `from` and `to` are epoch ms like in the engine. */

@@ -1,5 +1,5 @@
 import { kitTimeline } from '#shared/engine/readiness/timeline.ts'
-import type { Period } from '#shared/engine/readiness/types.ts'
+import type { Period } from '#shared/engine/readiness/period-types.ts'
 import type { GroupTx } from '../group-transaction.ts'
 import { boardRowOf, keptRows, writeBoard, type KeptRow } from './board-rows.ts'
 import { policiesOrFirst } from './first-policy.ts'

@@ -6,17 +6,19 @@ import { CREW } from './roles.ts'
 import {
   antennaSweepInputs,
   batteryCapacityInputs,
+  feedlineLossInputs,
+  heatTestInputs,
+  pairLossInputs,
+  radioCheckInputs,
+} from './test-inputs.ts'
+import {
   bootAndUpdateInputs,
   calibrationInputs,
   countInputs,
-  feedlineLossInputs,
-  heatTestInputs,
   inspectionInputs,
   onAirCheckInputs,
-  pairLossInputs,
-  radioCheckInputs,
   sessionCheckInputs,
-} from './test-inputs.ts'
+} from './check-inputs.ts'
 import { openShortLoadInputs } from './test-inputs-by-file.ts'
 import { storedTest } from './test-shapes.ts'
 

@@ -1,5 +1,5 @@
 import { BANDS, type Band } from '#shared/engine/vocabulary.ts'
-import type { BandCapability } from '#shared/engine/readiness/types.ts'
+import type { BandCapability } from '#shared/engine/readiness/period-types.ts'
 import { dayText } from './day.ts'
 import { numberText, quantityText } from './quantity.ts'
 

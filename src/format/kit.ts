@@ -1,6 +1,6 @@
 import type { KitReadiness } from '#shared/contracts/kit-readiness.ts'
 import { horizonOf } from '#shared/engine/readiness/horizon.ts'
-import type { ReasonLevel } from '#shared/engine/readiness/types.ts'
+import type { ReasonLevel } from '#shared/engine/readiness/period-types.ts'
 import type { Stretch } from './horizon.ts'
 
 export type KitReason = KitReadiness['period']['reasons'][number]

@@ -4,6 +4,7 @@ import { planWorkParty as planParty, type BenchTask } from '#shared/engine/advic
 import type { Plan } from '#shared/engine/advice/work.ts'
 import { METHOD_CARDS } from '#shared/engine/procedures/method-cards.ts'
 import { policyAt } from '#shared/engine/readiness/rules-in-force.ts'
+import { READ_FROM } from '#shared/engine/procedures/subjects.ts'
 import type { Procedure } from '#shared/engine/vocabulary.ts'
 import type { AppContext } from '../../context.ts'
 import { inGroup, type GroupTx } from '../../group-transaction.ts'
@@ -61,9 +62,8 @@ async function instrumentsAt(
   const policy = policyAt({ policies }, tx.now.getTime())
   // A group that has not tested anything yet has no rules, and nothing to do either.
   if (!policy) return []
-  const lists = await Promise.all(MEASURED.map((procedure) => fittingInstruments(tx, procedure, policy)))
-  const byId = new Map(lists.flat().map((one) => [one.id, one]))
-  return [...byId.values()]
+  const all = await fittingInstruments(tx, READ_FROM, policy)
+  return all
     .map(({ id, designation, category, calibratedUntilOn }) => ({
       id,
       designation,
@@ -73,15 +73,6 @@ async function instrumentsAt(
     }))
     .sort((a, b) => a.designation.localeCompare(b.designation))
 }
-
-/** Procedures that between them name every kind of instrument. */
-const MEASURED: readonly Procedure[] = [
-  'heat-test',
-  'pair-loss',
-  'antenna-sweep',
-  'battery-capacity',
-  'radio-check',
-]
 
 function shownTask({ from, to, text, kit, procedure, instrument }: BenchTask) {
   return { from, to, text, kit, procedure, instrument }

@@ -1,7 +1,7 @@
 import type { ResponseOf } from '#shared/contracts/endpoint.ts'
 import type { readSinglePoints as contract } from '#shared/contracts/single-points.ts'
 import { singlePoints, type GroupFacts } from '#shared/engine/advice/single-points.ts'
-import { INSTRUMENTS } from '#shared/engine/procedures/subjects.ts'
+import { READ_FROM } from '#shared/engine/procedures/subjects.ts'
 import type { Category, Procedure } from '#shared/engine/vocabulary.ts'
 import { addMonths } from '#shared/engine/plain-date.ts'
 import type { GroupTx, Statement } from '../../group-transaction.ts'
@@ -55,10 +55,9 @@ const YEARS = 2
 
 export async function readSinglePoints(tx: GroupTx): Promise<ResponseOf<typeof contract>> {
   const today = await tx.today()
-  const categories = [...new Set(Object.values(INSTRUMENTS).flat())]
   const [places, instruments, [chargers], testers, members] = await Promise.all([
     tx.sql<Row<'places'>>(PLACES, [tx.groupId]),
-    tx.sql<{ category: Category; designations: string[] }>(INSTRUMENTS_OF, [tx.groupId, categories]),
+    tx.sql<{ category: Category; designations: string[] }>(INSTRUMENTS_OF, [tx.groupId, READ_FROM]),
     tx.sql<{ kitsWithout: number; loose: string[] }>(CHARGERS, [tx.groupId]),
     tx.sql<{ procedure: Procedure; names: string[] }>(TESTERS, [tx.groupId, addMonths(today, -12 * YEARS)]),
     tx.sql<MemberRow>(MEMBERS, [tx.groupId, today]),

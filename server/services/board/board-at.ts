@@ -1,6 +1,6 @@
 import type { BoardAnswer, BoardRow, HorizonStep } from '#shared/contracts/board.ts'
 import { sayTally, tallyOf } from '#shared/engine/readiness/board-sentence.ts'
-import type { Period } from '#shared/engine/readiness/types.ts'
+import type { Period } from '#shared/engine/readiness/period-types.ts'
 import type { GroupTx } from '../../group-transaction.ts'
 import { boardRowOf } from '../board-rows.ts'
 import { periodsFrom, type StoredPeriod } from '../period-rows.ts'

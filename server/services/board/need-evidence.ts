@@ -1,5 +1,5 @@
 import type { NeedKit, Shortfall } from '#shared/engine/readiness/need.ts'
-import type { Reason } from '#shared/engine/readiness/types.ts'
+import type { Reason } from '#shared/engine/readiness/period-types.ts'
 import type { Procedure } from '#shared/engine/vocabulary.ts'
 
 interface Shown {

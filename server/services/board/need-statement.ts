@@ -1,4 +1,4 @@
-import type { Reason } from '#shared/engine/readiness/types.ts'
+import type { Reason } from '#shared/engine/readiness/period-types.ts'
 import type { NeedKit } from '#shared/engine/readiness/need.ts'
 import type { Statement } from '../../group-transaction.ts'
 

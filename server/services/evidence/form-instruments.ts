@@ -1,6 +1,5 @@
 import type { TestForm } from '#shared/contracts/test-form.ts'
 import { addMonths } from '#shared/engine/plain-date.ts'
-import { INSTRUMENTS } from '#shared/engine/procedures/subjects.ts'
 import { ruleFor } from '#shared/engine/readiness/rules-in-force.ts'
 import type { Policy } from '#shared/engine/readiness/types.ts'
 import type { Category, Procedure } from '#shared/engine/vocabulary.ts'
@@ -27,14 +26,14 @@ const FITTING: Statement = {
     ORDER BY array_position($2, i.category), i.designation, i.id LIMIT 100`,
 }
 
-/** Serviceable instruments that the procedure is read from, with the last day of their calibration. */
+/** Serviceable instruments of these categories, in their order, with the last day of their calibration. */
 export async function fittingInstruments(
   tx: GroupTx,
-  procedure: Procedure,
+  categories: readonly Category[],
   policy: Policy,
 ): Promise<TestForm['instruments']> {
   const [rows, today] = await Promise.all([
-    tx.sql<InstrumentRow>(FITTING, [tx.groupId, INSTRUMENTS[procedure]]),
+    tx.sql<InstrumentRow>(FITTING, [tx.groupId, categories]),
     tx.today(),
   ])
   return rows.map(({ id, designation, category, details, calibrated_on: calibratedOn }) => {

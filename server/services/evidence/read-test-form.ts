@@ -7,7 +7,7 @@ import {
   METHOD_CARDS,
 } from '#shared/engine/procedures/method-cards.ts'
 import { DEFAULT_REGION } from '#shared/engine/procedures/judged-bands.ts'
-import { canBeTested } from '#shared/engine/procedures/subjects.ts'
+import { canBeTested, INSTRUMENTS } from '#shared/engine/procedures/subjects.ts'
 import { policyAt } from '#shared/engine/readiness/rules-in-force.ts'
 import type { Rule } from '#shared/engine/readiness/types.ts'
 import { withArticle } from '#shared/engine/readiness/words.ts'
@@ -68,7 +68,7 @@ export async function readTestForm(tx: GroupTx, wanted: Asked): Promise<TestForm
   const ruleOn = (band: Band | null) => ruleOfTest(policy, { subject, procedure, on: today, band })
   const rule = ruleOn(null)
   const [instruments, last, tests, words] = await Promise.all([
-    fittingInstruments(tx, procedure, policy),
+    fittingInstruments(tx, INSTRUMENTS[procedure], policy),
     lastUsed(tx, procedure),
     summariesOf(
       tx,

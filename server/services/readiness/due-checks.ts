@@ -1,6 +1,7 @@
 import type { z } from 'zod'
 import type { DueCheck, listDueChecks as contract } from '#shared/contracts/due-checks.ts'
-import type { CheckState, KitState } from '#shared/engine/readiness/types.ts'
+import type { CheckState } from '#shared/engine/readiness/period-types.ts'
+import type { KitState } from '#shared/engine/readiness/types.ts'
 import type { GroupTx, Statement } from '../../group-transaction.ts'
 import { checksOfGroup } from './group-checks.ts'
 

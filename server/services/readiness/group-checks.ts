@@ -1,6 +1,7 @@
 import { checksAt, checksOfItem } from '#shared/engine/readiness/checks.ts'
 import { dossierOf, momentOf } from '#shared/engine/readiness/moment.ts'
-import type { CheckState, KitState } from '#shared/engine/readiness/types.ts'
+import type { CheckState } from '#shared/engine/readiness/period-types.ts'
+import type { KitState } from '#shared/engine/readiness/types.ts'
 import type { GroupTx } from '../../group-transaction.ts'
 import { kitsInUse } from '../kits-in-use.ts'
 import { loadKitStates } from '../load-kit-states.ts'

@@ -1,7 +1,8 @@
 import type { z } from 'zod'
 import type { kitPosition } from '#shared/contracts/kit-readiness.ts'
 import { groupBy } from '#shared/engine/group-by.ts'
-import type { CheckState, KitState } from '#shared/engine/readiness/types.ts'
+import type { CheckState } from '#shared/engine/readiness/period-types.ts'
+import type { KitState } from '#shared/engine/readiness/types.ts'
 import type { GroupTx, Statement } from '../../group-transaction.ts'
 
 const TAGS: Statement = { name: 'tags-in-kit', text: 'SELECT id, tag FROM item WHERE kit_id = $1' }

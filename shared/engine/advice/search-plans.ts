@@ -1,6 +1,7 @@
 import { isFailure } from '../outcome.ts'
 import type { Judgement } from '../readiness/period-at.ts'
-import type { EpochMs, KitState, Reason } from '../readiness/types.ts'
+import type { Reason } from '../readiness/period-types.ts'
+import type { EpochMs, KitState } from '../readiness/types.ts'
 import { isDeployable } from '../vocabulary.ts'
 import { applySteps } from './apply-steps.ts'
 import { judgeNow } from './judge-now.ts'

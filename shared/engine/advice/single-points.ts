@@ -12,7 +12,7 @@ export interface SinglePoint {
 
 export interface GroupFacts {
   readonly places: readonly { readonly name: string; readonly keyHolders: string; readonly kits: number }[]
-  /** Serviceable things by category, and how many checks of the policy are read from them. */
+  /** Serviceable instruments, by category. */
   readonly instruments: readonly { readonly category: Category; readonly designations: readonly string[] }[]
   /** Kits that have a battery and no charger of their own, and the loose chargers. */
   readonly chargers: { readonly kitsWithout: number; readonly loose: readonly string[] }

@@ -1,6 +1,7 @@
 import { isFailure, type Outcome } from '../outcome.ts'
 import { kitTimeline } from '../readiness/timeline.ts'
-import type { EpochMs, KitState, Period } from '../readiness/types.ts'
+import type { Period } from '../readiness/period-types.ts'
+import type { EpochMs, KitState } from '../readiness/types.ts'
 import { applySteps } from './apply-steps.ts'
 import type { WhatIfStep } from './steps.ts'
 import { worldOf } from './world.ts'

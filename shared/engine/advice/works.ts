@@ -1,5 +1,6 @@
 import { FETCH_MINUTES, MINUTES, REPAIR_MINUTES } from '../readiness/actions.ts'
-import type { KitState, Reason } from '../readiness/types.ts'
+import type { Reason } from '../readiness/period-types.ts'
+import type { KitState } from '../readiness/types.ts'
 import { capital, onBand, PROCEDURE_WORDS } from '../readiness/words.ts'
 import { fillings, type Gap, type Sources } from './parts.ts'
 import type { Work } from './work.ts'

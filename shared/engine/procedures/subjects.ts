@@ -34,6 +34,9 @@ export const INSTRUMENTS: Readonly<Record<Procedure, readonly Category[]>> = {
   'on-air-check': ['wattmeter'],
 }
 
+/** Every kind of instrument that something is read from. */
+export const READ_FROM: readonly Category[] = [...new Set(Object.values(INSTRUMENTS).flat())]
+
 export function canBeTested(category: Category, procedure: Procedure): boolean {
   const subjects = SUBJECTS[procedure]
   return subjects === 'any' || (subjects !== 'kit' && subjects.includes(category))

@@ -1,5 +1,5 @@
 import type { Band, Procedure } from '../vocabulary.ts'
-import type { Action } from './types.ts'
+import type { Action } from './period-types.ts'
 import { capital, onBand, PROCEDURE_WORDS } from './words.ts'
 
 /** What would lift a reason, with attended minutes. */

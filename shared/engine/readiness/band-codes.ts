@@ -1,5 +1,5 @@
 import { BANDS, type Band } from '../vocabulary.ts'
-import type { BandCapability } from './types.ts'
+import type { BandCapability } from './period-types.ts'
 
 /**
  * The band strip of a kit as a short text, so that a page of the board carries no nested objects:

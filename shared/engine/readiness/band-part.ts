@@ -1,7 +1,8 @@
 import type { Band, Procedure } from '../vocabulary.ts'
 import { reasonForStanding } from './check-reason.ts'
 import type { Standing } from './standing.ts'
-import type { BandCapability, Evidence, ReadinessItem, Reason, Rule } from './types.ts'
+import type { BandCapability, Reason } from './period-types.ts'
+import type { Evidence, ReadinessItem, Rule } from './types.ts'
 
 /** What one part of the transmit chain says about one band. */
 export interface BandPart {

@@ -8,7 +8,8 @@ import { radioPart } from './radio-part.ts'
 import { atAntennaText, bandLimitText } from './sentences.ts'
 import { isSupportingOnly, itemsOf, vitalItemsOf, type FilledPosition } from './slots.ts'
 import { transformerPart } from './transformer-part.ts'
-import type { BandCapability, Evidence, ReadinessItem, Reason } from './types.ts'
+import type { BandCapability, Reason } from './period-types.ts'
+import type { Evidence, ReadinessItem } from './types.ts'
 
 export interface JudgedBands {
   readonly bands: readonly BandCapability[]

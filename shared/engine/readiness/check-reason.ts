@@ -3,7 +3,7 @@ import { reasonOf } from './reason.ts'
 import { testAction } from './actions.ts'
 import { doubtText, lapsedText, neverText, raisedText } from './sentences.ts'
 import type { Standing } from './standing.ts'
-import type { Reason, ReasonLevel } from './types.ts'
+import type { Reason, ReasonLevel } from './period-types.ts'
 
 interface Subject {
   readonly name: string

@@ -5,7 +5,8 @@ import { heatStanding, type HeatStanding } from './heat-standing.ts'
 import type { Moment } from './moment.ts'
 import { doubtText, heatUnprovenText, lapsedText, neverText, raisedText } from './sentences.ts'
 import { dueOf, hasPassed, openRaisedChecks, standingOf, type Candidate, type Standing } from './standing.ts'
-import type { CheckState, Rule } from './types.ts'
+import type { CheckState } from './period-types.ts'
+import type { Rule } from './types.ts'
 
 /** One check of one subject on one band, before the bands are put together. */
 export type CheckRow = Pick<

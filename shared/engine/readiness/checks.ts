@@ -4,7 +4,8 @@ import { checkRow, type CheckRow } from './check-row.ts'
 import { WHOLE_KIT } from './count-standing.ts'
 import { dossierOf, momentOf, type Moment } from './moment.ts'
 import { bandsNamed, ruleFor, rulesFor } from './rules-in-force.ts'
-import type { CheckState, EpochMs, KitState, ReadinessItem } from './types.ts'
+import type { CheckState } from './period-types.ts'
+import type { EpochMs, KitState, ReadinessItem } from './types.ts'
 import { proceduresAsked } from './whole-checks.ts'
 
 /** Worst first: where the bands of one check differ, the worst stands for all. */

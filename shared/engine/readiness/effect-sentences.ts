@@ -1,5 +1,5 @@
 import type { Verdict } from '../vocabulary.ts'
-import type { Reason } from './types.ts'
+import type { Reason } from './period-types.ts'
 
 interface Saying {
   readonly verdict: Verdict

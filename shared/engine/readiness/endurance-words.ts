@@ -1,5 +1,6 @@
 import { MOST_CAPACITY_FRACTION, type BatteryShare } from '../battery-energy.ts'
 import type { LoadShare } from '../load-profile.ts'
+import { listText } from '../plain-words.ts'
 import type { PlainDate } from '../plain-date.ts'
 import type { CurrentOf } from '../procedures/radio-currents.ts'
 import type { StationUse } from './station-use.ts'
@@ -9,6 +10,7 @@ import { amountText, dayText } from './words.ts'
 
 /** Two digits after the point: currents of receiving are of the order of one ampere. */
 const amps = (value: number) => `${Math.round(value * 100) / 100} A`
+const celsius = (value: number) => `${String(value).replace('-', '−')} °C`
 const percent = (share: number) => `${Math.round(share * 1000) / 10} %`
 
 /** One battery's share of the hours. */
@@ -21,7 +23,7 @@ export function batteryText(
   const counted = tooGood ? `, counted as ${Math.round(MOST_CAPACITY_FRACTION * 100)} %` : ''
   const measured = `${percent(share.capacityFraction)} measured on ${dayText(testedOn)}${counted}`
   const usable = `${Math.round(share.depth * 100)} % of it usable`
-  const left = `${Math.round(share.temperatureFactor * 100)} % at ${String(atC).replace('-', '−')} °C`
+  const left = `${Math.round(share.temperatureFactor * 100)} % at ${celsius(atC)}`
   return `${name}: ${amountText(share.ratedAh)} Ah, ${measured}, ${usable}, ${left}`
 }
 
@@ -71,17 +73,16 @@ export function equivalentText(loadA: number, exponent: number): string {
 export const HIGH_RATE = 'Lead-acid would be empty within the hour: the estimate is poor there'
 
 export function overCurrentText(names: readonly string[], drawnA: number, carriesA: number): string {
-  return `${names.join(' and ')} may cut off while transmitting: ${amps(drawnA)} drawn, ${amps(carriesA)} rated`
+  return `${listText(names)} may cut off while transmitting: ${amps(drawnA)} drawn, ${amps(carriesA)} rated`
 }
 
 /** The conditions that the hours hold for, on one line beside them. */
 export function conditionsText(use: StationUse, atC: number, basis: LoadBasis): string {
-  const at = `${String(atC).replace('-', '−')} °C`
   const draw =
     basis.kind === 'measured'
       ? `currents measured ${dayText(basis.on)}`
       : basis.kind === 'rated'
         ? 'rated currents'
         : 'a mean load written down, undated'
-  return `transmitting ${percent(use.transmitShare)} of the time, ${use.emission}, at ${at}, ${draw}`
+  return `transmitting ${percent(use.transmitShare)} of the time, ${use.emission}, at ${celsius(atC)}, ${draw}`
 }

@@ -10,7 +10,8 @@ import { HOURS_UNKNOWN, hoursShortText, NO_ENDURANCE, noRatingText, notCountedTe
 import type { FilledPosition } from './slots.ts'
 import { standingOf } from './standing.ts'
 import { stationLoad, type StationLoad } from './station-load.ts'
-import type { Action, Evidence, ReadinessItem, Reason } from './types.ts'
+import type { Action, Reason } from './period-types.ts'
+import type { Evidence, ReadinessItem } from './types.ts'
 
 export interface Endurance {
   /** h; null when no battery counts or nobody measured the load. */

@@ -1,5 +1,5 @@
 import type { Band, Procedure } from '../vocabulary.ts'
-import type { Action, Period, Reason } from './types.ts'
+import type { Action, Period, Reason } from './period-types.ts'
 
 /** One thing to do, and the reasons that it would lift. */
 export interface Fix {

@@ -1,5 +1,6 @@
 import type { Verdict } from '../vocabulary.ts'
-import type { EpochMs, Reason } from './types.ts'
+import type { Reason } from './period-types.ts'
+import type { EpochMs } from './types.ts'
 
 /** What the horizon needs of a period. */
 export interface VerdictPeriod {

@@ -7,7 +7,8 @@ import { ruleFor, rulesFor } from './rules-in-force.ts'
 import { failedCheckText, sealText, shortCountText } from './sentences.ts'
 import type { FilledPosition } from './slots.ts'
 import { standingOf, type Standing } from './standing.ts'
-import type { Evidence, Reason, Rule } from './types.ts'
+import type { Reason } from './period-types.ts'
+import type { Evidence, Rule } from './types.ts'
 import type { JudgedChecks } from './whole-checks.ts'
 
 /** The seal, the count, and whatever else the policy asks of the kit as a whole. */

@@ -7,7 +7,8 @@ import { ruleFor } from './rules-in-force.ts'
 import { bootedText, NEVER_BOOTED, NO_MODE_LEFT, voiceOnlyText } from './sentences.ts'
 import { itemsOf, type FilledPosition } from './slots.ts'
 import { candidates, dueOf, hasPassed, type Candidate } from './standing.ts'
-import type { ReadinessItem, Reason, Rule } from './types.ts'
+import type { Reason } from './period-types.ts'
+import type { ReadinessItem, Rule } from './types.ts'
 
 export interface JudgedModes {
   readonly modes: readonly Mode[]

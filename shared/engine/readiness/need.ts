@@ -1,5 +1,5 @@
 import type { Availability, Band, Mode, Verdict } from '../vocabulary.ts'
-import type { BandCapability, Capability } from './types.ts'
+import type { BandCapability, Capability } from './period-types.ts'
 
 /** What is asked of a station. Null and empty: not asked for. */
 export interface Need {

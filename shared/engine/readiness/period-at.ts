@@ -8,7 +8,8 @@ import type { Moment } from './moment.ts'
 import { reasonOf, sortReasons } from './reason.ts'
 import { decisionText } from './sentences.ts'
 import { fillPositions, positionReasons } from './slots.ts'
-import type { Decision, Evidence, Period, Reason } from './types.ts'
+import type { Period, Reason } from './period-types.ts'
+import type { Decision, Evidence } from './types.ts'
 import { judgeItems } from './whole-checks.ts'
 
 export type Judgement = Omit<Period, 'from' | 'to'>

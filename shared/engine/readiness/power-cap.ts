@@ -2,7 +2,8 @@ import { replaceAction, strongerAction } from './actions.ts'
 import { reasonAbout } from './reason.ts'
 import { leadText, ratedBelowText } from './sentences.ts'
 import { vitalItemsOf, type FilledPosition } from './slots.ts'
-import type { ReadinessItem, Reason } from './types.ts'
+import type { Reason } from './period-types.ts'
+import type { ReadinessItem } from './types.ts'
 
 /** A radio's output before any loss, and what holds it down. */
 export interface RadioPower {

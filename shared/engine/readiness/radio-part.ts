@@ -7,7 +7,8 @@ import { reasonAbout } from './reason.ts'
 import { ruleFor } from './rules-in-force.ts'
 import { notCoveredText, outText, radioLowText } from './sentences.ts'
 import type { Standing } from './standing.ts'
-import type { ReadinessItem, Reason } from './types.ts'
+import type { Reason } from './period-types.ts'
+import type { ReadinessItem } from './types.ts'
 import { standingOnBand } from './whole-or-band.ts'
 
 interface Station {

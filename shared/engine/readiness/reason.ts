@@ -1,4 +1,5 @@
-import type { ReadinessItem, Reason } from './types.ts'
+import type { Reason } from './period-types.ts'
+import type { ReadinessItem } from './types.ts'
 
 type Parts = Pick<Reason, 'code' | 'level' | 'text'> & Partial<Reason>
 

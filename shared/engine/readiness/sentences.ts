@@ -3,7 +3,8 @@ import type { Band, Procedure } from '../vocabulary.ts'
 import { amountText, dayText, onBand, PROCEDURE_WORDS, shortText } from './words.ts'
 import type { Doubt } from './doubt.ts'
 import type { HeatStanding } from './heat-standing.ts'
-import type { BandCapability, Decision, Position, RaisedCheck, ReadinessItem, TestFinding } from './types.ts'
+import type { BandCapability } from './period-types.ts'
+import type { Decision, Position, RaisedCheck, ReadinessItem, TestFinding } from './types.ts'
 
 export { capital, dayText, PROCEDURE_WORDS } from './words.ts'
 

@@ -3,7 +3,8 @@ import { bringBackAction, fillAction, replaceAction } from './actions.ts'
 import type { Moment } from './moment.ts'
 import { reasonAbout, reasonOf } from './reason.ts'
 import { brokenText, emptyText } from './sentences.ts'
-import type { Position, ReadinessItem, Reason } from './types.ts'
+import type { Reason } from './period-types.ts'
+import type { Position, ReadinessItem } from './types.ts'
 
 /** A position with the items in it that can work. */
 export interface FilledPosition {

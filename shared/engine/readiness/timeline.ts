@@ -1,7 +1,8 @@
 import { eventTimes } from './event-times.ts'
 import { dossierOf, momentOf } from './moment.ts'
 import { judgementAt, type Judgement } from './period-at.ts'
-import type { EpochMs, KitState, Period } from './types.ts'
+import type { Period } from './period-types.ts'
+import type { EpochMs, KitState } from './types.ts'
 
 /**
  * Of the rules by which a kit is judged. Raised by every change that gives the same state another verdict, other hours

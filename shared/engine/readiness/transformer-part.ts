@@ -7,7 +7,8 @@ import { reasonAbout } from './reason.ts'
 import { ruleFor } from './rules-in-force.ts'
 import { cappedText, efficiencyText, heatUnprovenText, outText } from './sentences.ts'
 import { standingOf, type Standing } from './standing.ts'
-import type { Evidence, ReadinessItem, Reason, Rule } from './types.ts'
+import type { Reason } from './period-types.ts'
+import type { Evidence, ReadinessItem, Rule } from './types.ts'
 
 const EFFICIENCY = ['pair-loss', 'open-short-load'] as const
 

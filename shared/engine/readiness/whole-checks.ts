@@ -7,7 +7,8 @@ import { ruleFor, rulesFor } from './rules-in-force.ts'
 import { failedCheckText } from './sentences.ts'
 import type { FilledPosition } from './slots.ts'
 import { standingOf, type Standing } from './standing.ts'
-import type { Evidence, ReadinessItem, Reason, Rule } from './types.ts'
+import type { Reason } from './period-types.ts'
+import type { Evidence, ReadinessItem, Rule } from './types.ts'
 
 /** Judged with the batteries and with the modes. */
 const JUDGED_ELSEWHERE: ReadonlySet<Procedure> = new Set(['battery-capacity', 'boot-and-update'])

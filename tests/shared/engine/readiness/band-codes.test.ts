@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import { packBands, unpackBands } from '#shared/engine/readiness/band-codes.ts'
-import type { BandCapability } from '#shared/engine/readiness/types.ts'
+import type { BandCapability } from '#shared/engine/readiness/period-types.ts'
 import { BANDS } from '#shared/engine/vocabulary.ts'
 
 const cell = (fields: Partial<BandCapability>): BandCapability => ({

@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import { checksAt } from '#shared/engine/readiness/checks.ts'
-import type { CheckState, KitState } from '#shared/engine/readiness/types.ts'
+import type { CheckState } from '#shared/engine/readiness/period-types.ts'
+import type { KitState } from '#shared/engine/readiness/types.ts'
 import type { Procedure } from '#shared/engine/vocabulary.ts'
 import { DEFAULT_POLICY } from '#shared/engine/policy/default-policy.ts'
 import { capacity, heatTest, radioCheck, sweep } from './support/evidence.ts'

@@ -1,5 +1,6 @@
 import { kitTimeline } from '#shared/engine/readiness/timeline.ts'
-import type { BandCapability, EpochMs, KitState, Period, Reason } from '#shared/engine/readiness/types.ts'
+import type { BandCapability, Period, Reason } from '#shared/engine/readiness/period-types.ts'
+import type { EpochMs, KitState } from '#shared/engine/readiness/types.ts'
 import type { Band } from '#shared/engine/vocabulary.ts'
 import { D0 } from './instants.ts'
 

@@ -1,6 +1,6 @@
 import fc from 'fast-check'
 import type { Need, NeedKit } from '#shared/engine/readiness/need.ts'
-import type { BandCapability } from '#shared/engine/readiness/types.ts'
+import type { BandCapability } from '#shared/engine/readiness/period-types.ts'
 import { AVAILABILITIES, BANDS, MODES, VERDICTS, type Band } from '#shared/engine/vocabulary.ts'
 
 export const NO_NEED: Need = { bands: [], mode: null, watts: null, hours: null, mains: false, placeId: null }
