@@ -8,7 +8,8 @@ export interface HeldPort {
 
 /** Holds `port` (0: any) on `host`; rejects with EADDRINUSE when another program listens there. */
 export async function holdPort(port: number, host = '127.0.0.1'): Promise<HeldPort> {
-  const server = createServer()
+  // A browser that asks meanwhile is turned away: held on to, its connection would keep the port from being released.
+  const server = createServer((socket) => socket.destroy())
   await new Promise<void>((resolve, reject) => {
     server.once('error', reject)
     server.listen({ port, host, exclusive: true }, resolve)

@@ -1,3 +1,4 @@
+import { connect } from 'node:net'
 import { describe, expect, it } from 'vitest'
 import { holdFirstFree, holdPort, isPortTaken } from '../../scripts/lib/free-port.ts'
 
@@ -24,5 +25,12 @@ describe('holdFirstFree', () => {
     await held.release()
     const again = await holdPort(held.port)
     await again.release()
+  })
+
+  it('is released though a browser asked there meanwhile, which is turned away', async () => {
+    const held = await holdPort(0)
+    const early = connect(held.port, '127.0.0.1').on('error', () => undefined)
+    await new Promise((resolve) => early.once('close', resolve))
+    await held.release()
   })
 })
